@@ -1,0 +1,15 @@
+export {
+  buffersOf,
+  profileAt,
+  profilesOf,
+  VALUE_COLUMNS,
+  WIND_COLUMNS,
+  type Levels,
+  type Profile,
+  type ProfileBlock,
+  type ValueColumn,
+} from './block.ts';
+export { BlockBuilder, type LevelInput, type ProfileInput } from './builder.ts';
+export { DOUBTING, MARK, markNames, MARKS, REJECTING, type MarkMeaning, type MarkName } from './marks.ts';
+export { INSTRUMENTS, sameStation, unplacedStation, type Instrument, type Station } from './station.ts';
+export { gatherWind, gatherWindAt, windColumn, type WindColumn } from './usable.ts';
