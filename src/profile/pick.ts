@@ -36,7 +36,7 @@ export function pickProfiles(picks: readonly Pick[]): ProfileBlock {
   const notes: Record<number, readonly string[]> = {};
   const mark = new Uint32Array(levelCount);
   picks.forEach(({ block, index }, k) => {
-    mark.set(block.mark.subarray(block.offsets[index]!, block.offsets[index + 1]!), offsets[k]!);
+    mark.set(block.mark.subarray(block.offsets[index], block.offsets[index + 1]), offsets[k]);
     const said = block.notes[index];
     if (said !== undefined) notes[k] = said;
   });
@@ -46,7 +46,7 @@ export function pickProfiles(picks: readonly Pick[]): ProfileBlock {
     const values = new Float32Array(levelCount).fill(NaN);
     picks.forEach(({ block, index }, k) => {
       const from = block[name];
-      if (from !== null) values.set(from.subarray(block.offsets[index]!, block.offsets[index + 1]!), offsets[k]!);
+      if (from !== null) values.set(from.subarray(block.offsets[index], block.offsets[index + 1]), offsets[k]);
     });
     return values;
   };
