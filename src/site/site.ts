@@ -61,12 +61,17 @@ export interface TerrainAxis {
 /** A criteria set of the site's own; the meaning of each entry is told in `jet/criteria.ts`. */
 export interface OwnCriteria {
   readonly name: string;
-  /** m above ground */
+  /** m above ground; levels above it are not looked at, neither for noses nor for minima */
   readonly ceiling: number;
+  /** m above ground; noses are sought up to here, at most the ceiling */
+  readonly noseCeiling: number;
   readonly candidates: 'every-maximum' | 'lowest-maximum' | 'strongest';
   readonly falloffTo: 'first-minimum' | 'layer-minimum' | 'risen-minimum';
-  /** m/s; a smaller rise does not end the fall-off when `falloffTo` is `risen-minimum` */
-  readonly endingRise: number;
+  /**
+   * m/s; a smaller rise does not end the fall-off when `falloffTo` is `risen-minimum`. `uncertainty` takes for each pair
+   * of levels the rise that their uncertainty alone could show.
+   */
+  readonly endingRise: number | 'uncertainty';
   /** m/s, weakest first: category i needs both */
   readonly categories: readonly { readonly speed: number; readonly falloff: number }[];
   /** nose speed at least this many times the minimum above; 1 asks nothing */
