@@ -24,3 +24,18 @@ export {
   speedOf,
   veerBetween,
 } from './wind.ts';
+export { lightSpans, nightOf, type Light, type LightSpan, type Night, type NightKind } from './sun.ts';
+export {
+  FOOT,
+  fromHeightUnit,
+  fromSpeedUnit,
+  KNOT,
+  parseUnit,
+  toHeightUnit,
+  toInside,
+  toSpeedUnit,
+  type HeightUnit,
+  type ParsedUnit,
+  type Quantity,
+  type SpeedUnit,
+} from './units.ts';
