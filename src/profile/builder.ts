@@ -3,6 +3,7 @@
 
 import { directionOf, speedOf } from '../air/index.ts';
 import { VALUE_COLUMNS, WIND_COLUMNS, type ProfileBlock, type ValueColumn } from './block.ts';
+import { indexIn } from './index-in.ts';
 import { MARK } from './marks.ts';
 import { INSTRUMENTS, sameStation, type Instrument, type Station } from './station.ts';
 
@@ -110,8 +111,8 @@ export class BlockBuilder {
 
     this.#levelCount = start + count;
     this.#offsets.push(this.#levelCount);
-    this.#stationIndex.push(indexOf(this.#stations, input.station, sameStation));
-    this.#sourceIndex.push(indexOf(this.#sources, input.source, Object.is));
+    this.#stationIndex.push(indexIn(this.#stations, input.station, sameStation));
+    this.#sourceIndex.push(indexIn(this.#sources, input.source, Object.is));
     this.#instrumentIndex.push(INSTRUMENTS.indexOf(input.instrument ?? 'unknown'));
     this.#timeMs.push(input.timeMs);
     this.#periodS.push(input.periodS ?? NaN);
@@ -181,11 +182,4 @@ function heightOrder(heights: ArrayLike<number>): Uint32Array | null {
   const order = Uint32Array.from({ length: heights.length }, (_, k) => k);
   const key = (k: number): number => (Number.isFinite(heights[k]!) ? heights[k]! : Infinity);
   return order.sort((a, b) => key(a) - key(b) || a - b);
-}
-
-function indexOf<T>(known: T[], wanted: T, same: (a: T, b: T) => boolean): number {
-  // Searched from the end: successive profiles nearly always share station and source.
-  for (let index = known.length - 1; index >= 0; index--) if (same(known[index]!, wanted)) return index;
-  known.push(wanted);
-  return known.length - 1;
 }

@@ -1,6 +1,7 @@
 // Chosen profiles out of any blocks, put together into one block in a stated order.
 
 import { VALUE_COLUMNS, type ProfileBlock, type ValueColumn } from './block.ts';
+import { indexIn } from './index-in.ts';
 import { sameStation, type Station } from './station.ts';
 
 /** A profile by its place. */
@@ -23,15 +24,13 @@ export function pickProfiles(picks: readonly Pick[]): ProfileBlock {
 
   const stations: Station[] = [];
   const sources: string[] = [];
-  const indexOf = <T>(known: T[], wanted: T, same: (a: T, b: T) => boolean): number => {
-    const found = known.findIndex((candidate) => same(candidate, wanted));
-    return found >= 0 ? found : known.push(wanted) - 1;
-  };
-  // Each block's own numbering of stations and sources, translated once.
-  const stationOf = new Map(
-    blocks.map((block) => [block, block.stations.map((s) => indexOf(stations, s, sameStation))]),
-  );
-  const sourceOf = new Map(blocks.map((block) => [block, block.sources.map((s) => indexOf(sources, s, Object.is))]));
+  const stationIndex = new Uint16Array(picks.length);
+  const sourceIndex = new Uint16Array(picks.length);
+  // Numbered in the order of first use, so that what no picked profile uses is left behind.
+  picks.forEach(({ block, index }, k) => {
+    stationIndex[k] = indexIn(stations, block.stations[block.stationIndex[index]!]!, sameStation);
+    sourceIndex[k] = indexIn(sources, block.sources[block.sourceIndex[index]!]!, Object.is);
+  });
 
   const notes: Record<number, readonly string[]> = {};
   const mark = new Uint32Array(levelCount);
@@ -60,8 +59,8 @@ export function pickProfiles(picks: readonly Pick[]): ProfileBlock {
     sources,
     profileCount: picks.length,
     offsets,
-    stationIndex: Uint16Array.from(picks, ({ block, index }) => stationOf.get(block)![block.stationIndex[index]!]!),
-    sourceIndex: Uint16Array.from(picks, ({ block, index }) => sourceOf.get(block)![block.sourceIndex[index]!]!),
+    stationIndex,
+    sourceIndex,
     instrumentIndex: Uint8Array.from(picks, ({ block, index }) => block.instrumentIndex[index]!),
     timeMs: Float64Array.from(picks, ({ block, index }) => block.timeMs[index]!),
     periodS: Float32Array.from(picks, ({ block, index }) => block.periodS[index]!),
