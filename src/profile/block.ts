@@ -65,6 +65,8 @@ export interface ProfileBlock extends Levels {
   readonly timeMs: Float64Array;
   /** Averaging period, s; 0 for a momentary value, NaN when not known. */
   readonly periodS: Float32Array;
+  /** How many times the source had corrected the profile when it sent it: 0 for a first report. */
+  readonly revision: Uint8Array;
   /** What the reader has to say of a profile, by profile index. */
   readonly notes: Readonly<Record<number, readonly string[]>>;
 }
@@ -76,6 +78,7 @@ export interface Profile extends Levels {
   readonly source: string;
   readonly timeMs: number;
   readonly periodS: number;
+  readonly revision: number;
   readonly notes: readonly string[];
   readonly levelCount: number;
 }
@@ -91,6 +94,7 @@ export function profileAt(block: ProfileBlock, index: number): Profile {
     source: block.sources[block.sourceIndex[index]!]!,
     timeMs: block.timeMs[index]!,
     periodS: block.periodS[index]!,
+    revision: block.revision[index]!,
     notes: block.notes[index] ?? [],
     levelCount: end - start,
     heightAgl: block.heightAgl.subarray(start, end),
@@ -120,6 +124,7 @@ export function buffersOf(block: ProfileBlock): ArrayBuffer[] {
     block.instrumentIndex,
     block.timeMs,
     block.periodS,
+    block.revision,
     block.mark,
     ...VALUE_COLUMNS.map((name) => block[name]),
   ];

@@ -30,6 +30,8 @@ export interface ProfileInput {
   readonly instrument?: Instrument;
   readonly timeMs: number;
   readonly periodS?: number;
+  /** Number of corrections made before this one was sent; up to 255. */
+  readonly revision?: number;
   readonly notes?: readonly string[];
   readonly levels: LevelInput;
 }
@@ -69,6 +71,7 @@ export class BlockBuilder {
   readonly #instrumentIndex: number[] = [];
   readonly #timeMs: number[] = [];
   readonly #periodS: number[] = [];
+  readonly #revision: number[] = [];
   readonly #notes: Record<number, readonly string[]> = {};
 
   get profileCount(): number {
@@ -116,6 +119,7 @@ export class BlockBuilder {
     this.#instrumentIndex.push(INSTRUMENTS.indexOf(input.instrument ?? 'unknown'));
     this.#timeMs.push(input.timeMs);
     this.#periodS.push(input.periodS ?? NaN);
+    this.#revision.push(Math.min(255, input.revision ?? 0));
     if (input.notes !== undefined && input.notes.length > 0) this.#notes[this.#timeMs.length - 1] = [...input.notes];
   }
 
@@ -134,6 +138,7 @@ export class BlockBuilder {
       instrumentIndex: Uint8Array.from(this.#instrumentIndex),
       timeMs: Float64Array.from(this.#timeMs),
       periodS: Float32Array.from(this.#periodS),
+      revision: Uint8Array.from(this.#revision),
       notes: { ...this.#notes },
       heightAgl,
       speed,

@@ -10,7 +10,16 @@ export {
   type ValueColumn,
 } from './block.ts';
 export { BlockBuilder, type LevelInput, type ProfileInput } from './builder.ts';
-export { DOUBTING, MARK, markNames, MARKS, REJECTING, type MarkMeaning, type MarkName } from './marks.ts';
+export {
+  DOUBTING,
+  MARK,
+  markNames,
+  MARKS,
+  REJECTING,
+  REJECTING_AIR,
+  type MarkMeaning,
+  type MarkName,
+} from './marks.ts';
 export { pickProfiles, type Pick } from './pick.ts';
 export { INSTRUMENTS, sameStation, unplacedStation, type Instrument, type Station } from './station.ts';
 export { gatherWind, gatherWindAt, windColumn, type WindColumn } from './usable.ts';

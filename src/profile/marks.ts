@@ -3,8 +3,11 @@
 export interface MarkMeaning {
   readonly bit: number;
   readonly name: string;
-  /** A rejected level is left out of every computation; a doubtful one stays in and lowers confidence. */
-  readonly effect: 'reject' | 'doubt' | 'note';
+  /**
+   * `reject`: the level is left out of every computation. `reject-air`: its temperature and humidity are, its wind is not.
+   * `doubt`: it stays in and lowers confidence. `note`: only told.
+   */
+  readonly effect: 'reject' | 'reject-air' | 'doubt' | 'note';
   readonly words: string;
 }
 
@@ -28,6 +31,7 @@ const MEANINGS = [
   ['superseded', 'reject', 'a later correction replaces the profile'],
   ['clock', 'doubt', 'the clock of the source jumped'],
   ['few-beams', 'doubt', 'the wind rests on few beams or a poor fit'],
+  ['air-impossible', 'reject-air', 'temperature or humidity lies outside what the atmosphere can do'],
 ] as const;
 
 export type MarkName = (typeof MEANINGS)[number][0];
@@ -47,6 +51,8 @@ const bitsWith = (effect: MarkMeaning['effect']): number =>
 
 /** Any of these bits takes the level out of every computation. */
 export const REJECTING = bitsWith('reject');
+/** Any of these bits takes the level's temperature and humidity out of every computation. */
+export const REJECTING_AIR = REJECTING | bitsWith('reject-air');
 /** Any of these bits lowers confidence. */
 export const DOUBTING = bitsWith('doubt');
 

@@ -64,6 +64,7 @@ export function pickProfiles(picks: readonly Pick[]): ProfileBlock {
     instrumentIndex: Uint8Array.from(picks, ({ block, index }) => block.instrumentIndex[index]!),
     timeMs: Float64Array.from(picks, ({ block, index }) => block.timeMs[index]!),
     periodS: Float32Array.from(picks, ({ block, index }) => block.periodS[index]!),
+    revision: Uint8Array.from(picks, ({ block, index }) => block.revision[index]!),
     notes,
     ...columns,
     heightAgl: columns.heightAgl ?? new Float32Array(0),
