@@ -1,0 +1,18 @@
+import { fileURLToPath } from 'node:url';
+import { defineConfig } from 'vite';
+
+// The command line: plain Node modules; libraries stay where npm put them.
+export default defineConfig({
+  root: fileURLToPath(new URL('../..', import.meta.url)),
+  publicDir: false,
+  build: {
+    ssr: true,
+    target: 'node20',
+    outDir: 'dist/relay',
+    copyPublicDir: false,
+    rolldownOptions: {
+      input: 'src/relay/main.ts',
+      output: { entryFileNames: 'main.js', chunkFileNames: '[name]-[hash].js' },
+    },
+  },
+});

@@ -1,0 +1,13 @@
+import { defineConfig } from 'vitest/config';
+
+// Drives the built page, served by the real program, in a real browser. One file at a time: each has the browser alone.
+export default defineConfig({
+  test: {
+    include: ['test/browser/**/*.test.ts'],
+    globalSetup: ['test/browser/serve-page.ts'],
+    environment: 'node',
+    fileParallelism: false,
+    testTimeout: 60_000,
+    hookTimeout: 60_000,
+  },
+});
