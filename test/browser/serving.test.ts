@@ -4,6 +4,20 @@ import { describe, expect, inject, it } from 'vitest';
 import { duskveer } from '../relay/command-line.ts';
 
 describe('serve', () => {
+  it('names an unknown option and says which are known', async () => {
+    const { code, out, err } = await duskveer(['serve', '--prot', '1']);
+    expect(code).toBe(2);
+    expect(out).toBe('');
+    expect(err).toContain('There is no option --prot. Known here: --port, --host.');
+    expect(err).toContain('duskveer serve --help');
+  });
+
+  it.each(['eighty', '70000', '1.5'])('refuses the port "%s"', async (port) => {
+    const { code, err } = await duskveer(['serve', `--port=${port}`]);
+    expect(code).toBe(2);
+    expect(err).toContain('--port needs a');
+  });
+
   it('says in words that its port is in use, and what to do', async () => {
     const { port } = new URL(inject('pageAddress'));
     const { code, out, err } = await duskveer(['serve', '--port', port]);

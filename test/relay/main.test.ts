@@ -18,20 +18,4 @@ describe('the command line', () => {
     expect(out).toBe('');
     expect(err).toContain('There is no command melt.');
   });
-
-  it('names an unknown option and says which are known', async () => {
-    const { code, out, err } = await duskveer(['serve', '--prot', '1']);
-    expect(code).toBe(2);
-    expect(out).toBe('');
-    expect(err).toContain('There is no option --prot. Known here: --port, --host.');
-    expect(err).toContain('duskveer serve --help');
-  });
-});
-
-describe('serve', () => {
-  it.each(['eighty', '70000', '1.5'])('refuses the port "%s"', async (port) => {
-    const { code, err } = await duskveer(['serve', `--port=${port}`]);
-    expect(code).toBe(2);
-    expect(err).toContain('--port needs a');
-  });
 });
