@@ -1,4 +1,6 @@
 export * from './constants.ts';
+export { coriolisParameter, inertialPeriodS } from './coriolis.ts';
+export { airDensity, airDensityIec } from './density.ts';
 export { Cancelled, DuskveerError, placeInWords, throwIfCancelled, type Place, type Problem } from './errors.ts';
 export {
   dewPointOf,
@@ -13,7 +15,9 @@ export {
   vapourPressureOf,
   virtualTemperature,
 } from './humidity.ts';
+export { hypsometricHeights } from './hypsometric.ts';
 export { fromJsonNumber, toJsonNumber, toJsonNumbers } from './json.ts';
+export { moistAirFactor, saturationOverIce, saturationOverWater } from './vapour.ts';
 export {
   CALM_SPEED,
   directionOf,
@@ -24,7 +28,26 @@ export {
   speedOf,
   veerBetween,
 } from './wind.ts';
+export {
+  equivalentPotentialTemperature,
+  equivalentPotentialTemperatureSimple,
+  lclPressure,
+  lclTemperature,
+  lclTemperatureOfDewPoint,
+  lclTemperatureOfRelative,
+} from './saturation.ts';
+export { powerLawSpeed, shearExponent, type PowerLaw } from './shear.ts';
+export {
+  bruntVaisalaFrequency,
+  bruntVaisalaSquared,
+  bulkRichardson,
+  froudeNumber,
+  type MovingLevel,
+  type ThermalLevel,
+} from './stability.ts';
+export { standardAtmosphere, type StandardAir } from './standard-atmosphere.ts';
 export { lightSpans, nightOf, type Light, type LightSpan, type Night, type NightKind } from './sun.ts';
+export { advectionBetweenHeights, advectionBetweenPressures, type LayerWind } from './thermal-wind.ts';
 export {
   FOOT,
   fromHeightUnit,

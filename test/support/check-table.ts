@@ -1,7 +1,7 @@
 // Runs the check tables of the outside data: inputs and expected outputs with stated tolerances.
 
-import { expect } from 'vitest';
-import { readSharedJson } from './shared.ts';
+import { describe, expect, it } from 'vitest';
+import { readSharedJson, sharedIsHere } from './shared.ts';
 
 export type CheckValue = null | boolean | string | number | CheckValue[] | { [key: string]: CheckValue };
 
@@ -64,4 +64,38 @@ export function expectAgrees(block: CheckBlock, key: string, got: unknown, want:
   }
   const allowed = (tolerance.abs ?? 0) + (tolerance.rel ?? 0) * Math.abs(want);
   expect(difference <= allowed, `${label}: got ${String(got)}, want ${want}, allowed ${allowed}`).toBe(true);
+}
+
+/** Computes the outputs of one case: same keys as the table's `out`. */
+export type CheckRunner = (input: Record<string, CheckValue>) => Record<string, unknown>;
+
+/**
+ * Runs every case and every output key of a check table, and fails when a block has no runner.
+ * @param runners by block name; `null` for a block that another test holds
+ */
+export function describeCheckTable(file: string, runners: Readonly<Record<string, CheckRunner | null>>): void {
+  describe.skipIf(!sharedIsHere)(`check table ${file}`, () => {
+    const blocks = sharedIsHere ? (readSharedJson(`checks/${file}.json`) as { blocks: CheckBlock[] }).blocks : [];
+    it('has a runner for every block', () => {
+      expect(Object.keys(runners).sort()).toEqual(blocks.map((block) => block.name).sort());
+    });
+    for (const block of blocks) {
+      const run = runners[block.name];
+      if (run === undefined || run === null) continue;
+      it.each(block.cases.map((entry): [string, CheckCase] => [entry.id, entry]))('%s', (id, entry) => {
+        const got = run(entry.in);
+        for (const [key, want] of Object.entries(entry.out)) expectAgrees(block, key, got[key], want, `${id} ${key}`);
+      });
+    }
+  });
+}
+
+/** A number out of a check table's input: null becomes NaN. */
+export function numberOf(value: CheckValue | undefined): number {
+  return typeof value === 'number' ? value : NaN;
+}
+
+/** A list out of a check table's input: null becomes NaN. */
+export function numbersOf(value: CheckValue | undefined): number[] {
+  return Array.isArray(value) ? value.map(numberOf) : [];
 }
