@@ -17,7 +17,13 @@ export interface ReadOptions {
   readonly site: Site;
   readonly limits: ReadLimits;
   readonly signal: AbortSignal | undefined;
+  /** Called by the front door as bytes are taken; formats need not. */
   readonly onProgress: ((progress: ReadProgress) => void) | undefined;
+  /**
+   * UTC, ms: a time not long after the file was written, today for what just came in. Codes that give only the day of
+   * the month need it, and no profile can lie more than a day behind it. Undefined where nobody knows.
+   */
+  readonly referenceTimeMs: number | undefined;
 }
 
 /** Part of what a file holds; long files come in several, each with profiles in the file's order. */

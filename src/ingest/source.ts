@@ -28,11 +28,23 @@ export interface ReadLimits {
   readonly fileBytes: number;
   /** Bytes that one packed file may unpack to. */
   readonly unpackedBytes: number;
+  /** How many times its packed size a file may unpack to, counted once more than 64 MiB came out. */
+  readonly expansion: number;
   /** Levels in all profiles of a file. */
   readonly levels: number;
+  /** UTC, ms: profiles before this or from `latestMs` on are taken for a wrong clock and left out, with a problem. */
+  readonly earliestMs: number;
+  readonly latestMs: number;
 }
 
-export const DEFAULT_LIMITS: ReadLimits = { fileBytes: 2 ** 30, unpackedBytes: 4 * 2 ** 30, levels: 2e8 };
+export const DEFAULT_LIMITS: ReadLimits = {
+  fileBytes: 2 ** 30,
+  unpackedBytes: 4 * 2 ** 30,
+  expansion: 300,
+  levels: 2e8,
+  earliestMs: Date.UTC(1900, 0, 1),
+  latestMs: Date.UTC(2070, 0, 1),
+};
 
 /**
  * All bytes of a source, for formats that need random access.

@@ -20,6 +20,7 @@ export {
   type MarkMeaning,
   type MarkName,
 } from './marks.ts';
+export { concatBlocks } from './concat.ts';
 export { pickProfiles, type Pick } from './pick.ts';
 export { INSTRUMENTS, sameStation, unplacedStation, type Instrument, type Station } from './station.ts';
 export { gatherWind, gatherWindAt, windColumn, type WindColumn } from './usable.ts';

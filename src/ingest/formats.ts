@@ -1,0 +1,6 @@
+// Every format the house reads, in the order in which each is asked whether the bytes are its own: those with an
+// unmistakable beginning first, tables of text last. A new format is a file or folder and one line here.
+
+import type { FileFormat } from './format.ts';
+
+export const FORMATS: readonly FileFormat[] = [];
