@@ -178,7 +178,7 @@ function finiteOrNaN(value: number): number {
 }
 
 /** Order of levels by ascending height, missing heights last, equals as they came; null when already so. */
-function heightOrder(heights: ArrayLike<number>): Uint32Array | null {
+export function heightOrder(heights: ArrayLike<number>): Uint32Array | null {
   let ascending = true;
   for (let k = 1; k < heights.length && ascending; k++) {
     if (!(heights[k]! >= heights[k - 1]!) && Number.isFinite(heights[k]!)) ascending = false;

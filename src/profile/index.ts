@@ -10,6 +10,7 @@ export {
   type ValueColumn,
 } from './block.ts';
 export { BlockBuilder, type LevelInput, type ProfileInput } from './builder.ts';
+export { blockOfColumns, type ColumnsInput } from './columns.ts';
 export {
   DOUBTING,
   MARK,
