@@ -1,0 +1,135 @@
+// How likely it is that the criteria hold, given how far each level may be off: an ensemble of what the true wind may
+// have been, each member judged by the same engine as the levels themselves. An ensemble rather than a formula, because
+// the criteria pick maxima and walk to minima: no distribution of those is known in closed form. Its random numbers are
+// fixed and come in pairs of opposite sign, so that equal profiles have equal confidence.
+
+import type { WindColumn } from '../profile/index.ts';
+import { basinsOf, type Basin } from './basins.ts';
+import { between, type Cut } from './column.ts';
+import type { Criteria } from './criteria.ts';
+import { NORMAL } from './normal.ts';
+import { categoryOf, findNosesInto, noseColumn, noseList, type NoseColumn, type NoseList } from './nose.ts';
+import { fitPosteriorInto, posterior, sampleInto, type Posterior } from './posterior.ts';
+import type { UncertaintyOrigin } from './uncertainty.ts';
+
+/** What the members of the ensemble found. */
+export interface Verdict {
+  /** Share of members with a jet of at least this category, by category. */
+  readonly atLeast: readonly number[];
+  /** By basin, in the order given. */
+  readonly basins: readonly BasinVerdict[];
+}
+
+export interface BasinVerdict {
+  readonly basin: Basin;
+  /** Share of members that have a nose meeting the criteria in this stretch. */
+  readonly confidence: number;
+  /** Standard deviation of the height of the greatest speed in the stretch, m. */
+  readonly heightSpread: number;
+  /** The same of the greatest speed itself, m/s. */
+  readonly speedSpread: number;
+}
+
+/** Working space of the ensemble, reused from profile to profile. */
+export interface Ensemble {
+  readonly fit: Posterior;
+  sample: Float64Array;
+  readonly column: NoseColumn;
+  readonly list: NoseList;
+}
+
+export function ensemble(): Ensemble {
+  return { fit: posterior(), sample: new Float64Array(256), column: noseColumn(), list: noseList() };
+}
+
+/** Pairs of members; 64 pairs leave a standard error of at most 0.044. */
+export const MEMBER_PAIRS = 64;
+/** Distance in the table of normal numbers between members. */
+const STRIDE = 1021;
+
+/**
+ * Judges an ensemble of possible true winds.
+ * @param wind the usable levels, uncertainties complete, as they were before the cut
+ * @param judged the column cut from them; its heights, uncertainties and reach are used
+ */
+export function judgeEnsemble(
+  wind: WindColumn,
+  judged: NoseColumn,
+  cut: Cut,
+  criteria: Criteria,
+  origin: UncertaintyOrigin,
+  pairs: number,
+  work: Ensemble,
+): Verdict {
+  const { fit, column, list } = work;
+  const levels = cut.ceilingShare >= 0 ? cut.kept + 1 : cut.kept;
+  fitPosteriorInto(wind, levels, origin, fit);
+  if (work.sample.length < levels) work.sample = new Float64Array(2 * levels);
+  const { sample } = work;
+  if (column.heightAgl.length < judged.count) Object.assign(column, noseColumn(2 * judged.count));
+  column.count = judged.count;
+  column.reachesCeiling = judged.reachesCeiling;
+  column.heightAgl.set(judged.heightAgl.subarray(0, judged.count));
+  column.uncertainty.set(judged.uncertainty.subarray(0, judged.count));
+
+  const basins = basinsOf(fit.mean, fit.uncertainty, cut.kept);
+  const tallies = basins.map(() => ({ hits: 0, height: 0, heightSquare: 0, speed: 0, speedSquare: 0 }));
+  const counts = new Array<number>(criteria.categories.length).fill(0);
+  const members = 2 * pairs;
+  for (let member = 0; member < members; member++) {
+    sampleInto(fit, NORMAL, (member >> 1) * STRIDE, (member & 1) === 0 ? 1 : -1, sample);
+    for (let k = 0; k < cut.kept; k++) column.speed[k] = sample[k]!;
+    if (cut.ceilingShare >= 0) {
+      column.speed[cut.kept] = between(sample[cut.kept - 1]!, sample[cut.kept]!, cut.ceilingShare);
+    }
+    findNosesInto(column, criteria, list);
+    let best = -1;
+    let hit = 0;
+    for (let i = 0; i < list.count; i++) {
+      const category = categoryOf(column, criteria, list, i);
+      if (category < 0) continue;
+      best = Math.max(best, category);
+      hit |= 1 << basinAt(basins, list.nose[i]!);
+    }
+    for (let k = 0; k <= best; k++) counts[k]!++;
+    basins.forEach((basin, i) => {
+      const tally = tallies[i]!;
+      if ((hit & (1 << i)) !== 0) tally.hits++;
+      const nose = strongestOf(column.speed, basin);
+      // Around the smooth curve's own nose, so that squares stay small.
+      const height = column.heightAgl[nose]! - column.heightAgl[basin.nose]!;
+      const speed = column.speed[nose]! - fit.mean[basin.nose]!;
+      tally.height += height;
+      tally.heightSquare += height * height;
+      tally.speed += speed;
+      tally.speedSquare += speed * speed;
+    });
+  }
+  const spread = (sum: number, squares: number): number =>
+    Math.sqrt(Math.max(0, squares / members - (sum / members) ** 2));
+  return {
+    atLeast: counts.map((count) => count / members),
+    basins: basins.map((basin, i) => {
+      const { hits, height, heightSquare, speed, speedSquare } = tallies[i]!;
+      return {
+        basin,
+        confidence: hits / members,
+        heightSpread: spread(height, heightSquare),
+        speedSpread: spread(speed, speedSquare),
+      };
+    }),
+  };
+}
+
+/** Which basin a level belongs to; 31, which no basin has, where it belongs to none. */
+function basinAt(basins: readonly Basin[], level: number): number {
+  for (let i = 0; i < basins.length && i < 31; i++)
+    if (level >= basins[i]!.lowest && level <= basins[i]!.highest) return i;
+  return 31;
+}
+
+function strongestOf(speed: Float64Array, basin: Basin): number {
+  let strongest = basin.lowest;
+  for (let k = basin.lowest + 1; k <= basin.highest; k++) if (speed[k]! > speed[strongest]!) strongest = k;
+  return strongest;
+}

@@ -1,0 +1,3 @@
+export { CRITERIA, CRITERIA_NAMES, criteriaOf, hasCategories, type Criteria, type CriteriaName } from './criteria.ts';
+export { findJets, type FindOptions, type Jet, type JetFinding, type SmoothNose } from './find-jets.ts';
+export type { JetCore } from './layer.ts';

@@ -1,0 +1,198 @@
+// What the true wind may have been, given uncertain levels: a smooth curve through them and its scatter.
+//
+// The true profile is taken as smooth in height, its curvature as independent from level to level with a variance that
+// falls with height (a smoothing spline in its Bayesian form: Wahba 1978, J. Roy. Stat. Soc. B 40; as a Gaussian Markov
+// field: Rue & Held 2005). Precision is then a matrix with five diagonals; its Cholesky factor gives mean and samples in a
+// handful of operations a level. How rough the profile is and how noisy its levels are is weighed by marginal likelihood.
+
+import type { WindColumn } from '../profile/index.ts';
+import type { UncertaintyOrigin } from './uncertainty.ts';
+
+/** Gaussian posterior of the speeds of a column. Reused from profile to profile. */
+export interface Posterior {
+  count: number;
+  /** m/s */
+  mean: Float64Array;
+  /** Standard uncertainty taken for each level after weighing the roughness, m/s. */
+  uncertainty: Float64Array;
+  /** Cholesky factor of the precision: diagonal and the two below it. */
+  diagonal: Float64Array;
+  below1: Float64Array;
+  below2: Float64Array;
+  /** Precision of the smooth curve alone, same form, and work space. */
+  smooth0: Float64Array;
+  smooth1: Float64Array;
+  smooth2: Float64Array;
+}
+
+export function posterior(capacity = 256): Posterior {
+  const column = (): Float64Array => new Float64Array(capacity);
+  return {
+    count: 0,
+    mean: column(),
+    uncertainty: column(),
+    diagonal: column(),
+    below1: column(),
+    below2: column(),
+    smooth0: column(),
+    smooth1: column(),
+    smooth2: column(),
+  };
+}
+
+/**
+ * Intensity of the curvature of wind profiles, (m/s/m2)2 m: at 100 m, how steeply it falls with height, and the least
+ * aloft. From the true profiles of simulated nights, widened aloft because the real air has layers; the likelihood
+ * scales it for each profile.
+ */
+const CURVATURE_AT_100M = 5e-6;
+const CURVATURE_SLOPE = -2.5;
+const CURVATURE_LEAST = 3e-8;
+
+/** Factors tried on the curvature relative to the noise, and on the noise. */
+const RATIOS = [0.01, 0.1, 1, 10, 100];
+const NOISE_FACTORS = [0.25, 0.35, 0.5, 0.7, 1, 1.4, 2, 2.8, 4];
+/** Standard deviation of ln(noise factor) beforehand: stated uncertainties are trusted more than assumed ones. */
+const NOISE_DOUBT: Readonly<Record<UncertaintyOrigin, number>> = { stated: 0.15, assumed: 0.7 };
+/** The same for the curvature ratio. */
+const RATIO_DOUBT = 2.5;
+/** A level that lies further off the curve than so many standard deviations is taken as that much less certain. */
+const WILD = 3.5;
+
+/** Fits the posterior to the first `count` levels of a column with complete uncertainties. */
+export function fitPosteriorInto(wind: WindColumn, count: number, origin: UncertaintyOrigin, out: Posterior): void {
+  if (out.mean.length < count) Object.assign(out, posterior(2 * count));
+  out.count = count;
+  fillSmoothness(wind, count, out);
+  out.uncertainty.set(wind.speedUncertainty.subarray(0, count));
+  weigh(wind, origin, out);
+  if (widenWild(wind, out)) weigh(wind, origin, out);
+}
+
+/** One sample of the true speeds, m/s, from independent standard normal numbers at `from` onward. */
+export function sampleInto(fit: Posterior, normal: Float64Array, from: number, sign: number, out: Float64Array): void {
+  const { count, mean, diagonal, below1, below2 } = fit;
+  let above1 = 0;
+  let above2 = 0;
+  for (let k = count - 1; k >= 0; k--) {
+    let sum = sign * normal[(from + k) % normal.length]!;
+    if (k + 1 < count) sum -= below1[k + 1]! * above1;
+    if (k + 2 < count) sum -= below2[k + 2]! * above2;
+    const departure = sum / diagonal[k]!;
+    above2 = above1;
+    above1 = departure;
+    const speed = mean[k]! + departure;
+    out[k] = speed > 0 ? speed : 0;
+  }
+}
+
+/** Sum of squared second derivatives, each over its share of height, as a matrix of five diagonals. */
+function fillSmoothness(wind: WindColumn, count: number, out: Posterior): void {
+  const { smooth0, smooth1, smooth2 } = out;
+  smooth0.fill(0, 0, count);
+  smooth1.fill(0, 0, count);
+  smooth2.fill(0, 0, count);
+  for (let k = 1; k < count - 1; k++) {
+    const height = wind.heightAgl[k]!;
+    const lower = height - wind.heightAgl[k - 1]!;
+    const upper = wind.heightAgl[k + 1]! - height;
+    const a = 2 / (lower * (lower + upper));
+    const c = 2 / (upper * (lower + upper));
+    const b = -a - c;
+    const intensity = CURVATURE_AT_100M * Math.pow(Math.max(height, 20) / 100, CURVATURE_SLOPE) + CURVATURE_LEAST;
+    const weight = (lower + upper) / 2 / intensity;
+    smooth0[k - 1]! += weight * a * a;
+    smooth0[k]! += weight * b * b;
+    smooth0[k + 1]! += weight * c * c;
+    smooth1[k]! += weight * a * b;
+    smooth1[k + 1]! += weight * b * c;
+    smooth2[k + 1]! += weight * a * c;
+  }
+}
+
+/** Chooses noise and curvature by marginal likelihood times what was thought beforehand, and leaves the fit in `out`. */
+function weigh(wind: WindColumn, origin: UncertaintyOrigin, out: Posterior): void {
+  const free = Math.max(1, out.count - 2);
+  let best = -Infinity;
+  let bestRatio = 1;
+  let bestNoise = 1;
+  for (const ratio of RATIOS) {
+    const logDeterminant = factorise(out, ratio, 1);
+    solveMean(wind, out);
+    const misfit = misfitOf(wind, out, ratio);
+    for (const noise of NOISE_FACTORS) {
+      const scale = noise * noise;
+      const likelihood = -logDeterminant - 0.5 * (free * Math.log(ratio) + free * Math.log(scale) + misfit / scale);
+      const beforehand =
+        -0.5 * ((Math.log(noise) / NOISE_DOUBT[origin]) ** 2 + (Math.log(ratio * scale) / RATIO_DOUBT) ** 2);
+      if (likelihood + beforehand > best) {
+        best = likelihood + beforehand;
+        bestRatio = ratio;
+        bestNoise = noise;
+      }
+    }
+  }
+  for (let k = 0; k < out.count; k++) out.uncertainty[k]! *= bestNoise;
+  factorise(out, bestRatio * bestNoise * bestNoise, 1);
+  solveMean(wind, out);
+}
+
+/** Cholesky factor of smoothness/curvature + 1/noise. @returns half the logarithm of its determinant */
+function factorise(out: Posterior, curvature: number, noise: number): number {
+  const { count, uncertainty, smooth0, smooth1, smooth2, diagonal, below1, below2 } = out;
+  let logSum = 0;
+  for (let k = 0; k < count; k++) {
+    const sigma = noise * uncertainty[k]!;
+    const two = k >= 2 ? smooth2[k]! / curvature / diagonal[k - 2]! : 0;
+    const one = k >= 1 ? (smooth1[k]! / curvature - (k >= 2 ? two * below1[k - 1]! : 0)) / diagonal[k - 1]! : 0;
+    const root = Math.sqrt(smooth0[k]! / curvature + 1 / (sigma * sigma) - one * one - two * two);
+    below2[k] = two;
+    below1[k] = one;
+    diagonal[k] = root;
+    logSum += Math.log(root);
+  }
+  return logSum;
+}
+
+function solveMean(wind: WindColumn, out: Posterior): void {
+  const { count, uncertainty, diagonal, below1, below2, mean } = out;
+  for (let k = 0; k < count; k++) {
+    const sigma = uncertainty[k]!;
+    let sum = wind.speed[k]! / (sigma * sigma);
+    if (k >= 1) sum -= below1[k]! * mean[k - 1]!;
+    if (k >= 2) sum -= below2[k]! * mean[k - 2]!;
+    mean[k] = sum / diagonal[k]!;
+  }
+  for (let k = count - 1; k >= 0; k--) {
+    let sum = mean[k]!;
+    if (k + 1 < count) sum -= below1[k + 1]! * mean[k + 1]!;
+    if (k + 2 < count) sum -= below2[k + 2]! * mean[k + 2]!;
+    mean[k] = sum / diagonal[k]!;
+  }
+}
+
+/** Squared distance of the levels from the curve plus the curve's own roughness, both in units of their variance. */
+function misfitOf(wind: WindColumn, out: Posterior, curvature: number): number {
+  const { count, uncertainty, mean, smooth0, smooth1, smooth2 } = out;
+  let misfit = 0;
+  for (let k = 0; k < count; k++) {
+    const residual = (wind.speed[k]! - mean[k]!) / uncertainty[k]!;
+    let rough = smooth0[k]! * mean[k]!;
+    if (k >= 1) rough += 2 * smooth1[k]! * mean[k - 1]!;
+    if (k >= 2) rough += 2 * smooth2[k]! * mean[k - 2]!;
+    misfit += residual * residual + (mean[k]! * rough) / curvature;
+  }
+  return misfit;
+}
+
+/** Makes levels far off the curve uncertain, so that a lone wild level does not carry the profile. @returns whether any was */
+function widenWild(wind: WindColumn, out: Posterior): boolean {
+  let any = false;
+  for (let k = 0; k < out.count; k++) {
+    const off = Math.abs(wind.speed[k]! - out.mean[k]!);
+    if (off <= WILD * out.uncertainty[k]!) continue;
+    out.uncertainty[k] = 2 * off;
+    any = true;
+  }
+  return any;
+}
