@@ -16,6 +16,23 @@ export interface Site {
   readonly criteria: string | OwnCriteria;
   readonly units: DisplayUnits;
   readonly columns: ColumnMapping;
+  /** IANA time-zone name of the times in files that state no zone. */
+  readonly fileTimeZone: string;
+  /** Sets of three or more stations, by identifier, between which divergence is computed. */
+  readonly neighbours: readonly (readonly string[])[];
+  /** Where moist air comes from, by station. */
+  readonly upstream: readonly Upstream[];
+  readonly migration: readonly MigrationHeading[];
+  readonly limits: readonly WorkLimit[];
+  readonly ramps: readonly RampDefinition[];
+  /** Shear exponent that the turbines' design assumes: 0.2 on land (IEC 61400-1), 0.14 offshore (IEC 61400-3-1). */
+  readonly designShear: number;
+  /** What the farm yields of the sum of its turbines' curves; 1 where it has not been fitted. */
+  readonly farmFactor: number;
+  /** What stands below and above the measured heights of a disc: nothing, or the power law through the lowest heights. */
+  readonly continuation: 'none' | 'power-law';
+  /** Geostrophic wind where somebody states it; null where it is estimated or unknown. */
+  readonly geostrophicWind: { readonly speed: number; readonly direction: number } | null;
 }
 
 /** A station of the site; what it says wins over what a file says, so that a file without a position still opens. */
@@ -35,6 +52,16 @@ export interface TurbineType {
   /** m */
   readonly rotorDiameter: number;
   readonly powerCurve: PowerCurve | null;
+  /** m/s; NaN where not stated, as the three below. Turns from here on. */
+  readonly cutIn: number;
+  /** m/s, full power from here on. */
+  readonly rated: number;
+  /** m/s, stops above this. */
+  readonly cutOut: number;
+  /** m/s, starts again below this. */
+  readonly restart: number;
+  /** m above sea level: ground under this group; NaN where it stands at the station's height. */
+  readonly groundElevation: number;
 }
 
 export interface PowerCurve {
@@ -80,6 +107,41 @@ export interface OwnCriteria {
   readonly riseBelow: number;
 }
 
+/** Stations from which the air comes to a station when the jet blows, the nearest first. */
+export interface Upstream {
+  readonly station: string;
+  readonly from: readonly string[];
+}
+
+/** The way birds fly over the site in some months. */
+export interface MigrationHeading {
+  /** degrees toward which they fly; wind that they feign comes from the opposite */
+  readonly toward: number;
+  /** degrees either side that still count */
+  readonly spread: number;
+  /** 1 to 12 */
+  readonly months: readonly number[];
+}
+
+/** Wind above which a kind of work stops, by the site's own rules. */
+export interface WorkLimit {
+  readonly name: string;
+  readonly kind: 'lifting' | 'climbing' | 'blade-work' | 'other';
+  /** m above ground at which the wind counts */
+  readonly height: number;
+  /** m/s */
+  readonly speed: number;
+}
+
+/** A change of output that counts as a ramp. */
+export interface RampDefinition {
+  readonly name: string;
+  /** At least this share of the farm's capacity, 0 to 1 … */
+  readonly share: number;
+  /** … within this time, s. */
+  readonly withinS: number;
+}
+
 export interface DisplayUnits {
   readonly speed: 'm/s' | 'kt' | 'km/h' | 'mph';
   readonly height: 'm' | 'ft';
@@ -99,6 +161,16 @@ export const PLAIN_SITE: Site = {
   criteria: 'duskveer',
   units: { speed: 'm/s', height: 'm' },
   columns: {},
+  fileTimeZone: 'UTC',
+  neighbours: [],
+  upstream: [],
+  migration: [],
+  limits: [],
+  ramps: [],
+  designShear: 0.2,
+  farmFactor: 1,
+  continuation: 'none',
+  geostrophicWind: null,
 };
 
 /** The site's record of a station, by identifier or alias, without regard to case. */
