@@ -1,0 +1,160 @@
+// Larkmoor Ridge, an invented wind farm on invented plains: a night with a jet from dusk to dawn, and a calm one after it.
+
+import type { Wind } from './air-column.ts';
+import type { AtmospherePlan } from './atmosphere.ts';
+import { at, everyMinutes, ramp, spell } from './clock.ts';
+import { mastCsv } from './mast.ts';
+import { profilerNetcdf } from './profiler-netcdf.ts';
+import { profilerRecord } from './profiler.ts';
+import { sondeCsv } from './sonde.ts';
+
+const PLACE = { latitude: 38.2, longitude: -99.4, elevation: 640 };
+const SONDE_PLACE = { latitude: 38.05, longitude: -99.7, elevation: 662 };
+
+// Sun at this place (UTC): sets 01:42, rises 11:26. The site's clock is six hours behind.
+const FIRST_DUSK = at('2024-05-22T00:45Z');
+const FIRST_DAWN = at('2024-05-22T11:26Z');
+const SECOND_DUSK = at('2024-05-23T00:45Z');
+const SECOND_DAWN = at('2024-05-23T11:26Z');
+const HOUR = 3_600_000;
+
+/** A south-south-westerly with its core a few hundred metres up, as over ground that slopes; it dies on the second day. */
+function pressureWind(heightAgl: number, timeMs: number): Wind {
+  const aboveCore = Math.max(0, heightAgl - 320) / 950;
+  const belowCore = Math.max(0, 320 - heightAgl) / 900;
+  const shape = 6.5 + 8.5 * Math.exp(-Math.pow(aboveCore, 1.6)) - 2 * belowCore + 2.2 * ramp(heightAgl, 1800, 4000);
+  const strength = 1 - 0.86 * ramp(timeMs, FIRST_DAWN + 2 * HOUR, SECOND_DUSK - 3 * HOUR);
+  const direction = ((196 + 16 * Math.min(2.5, heightAgl / 1000)) * Math.PI) / 180;
+  return { u: -shape * strength * Math.sin(direction), v: -shape * strength * Math.cos(direction) };
+}
+
+function mixedDepth(timeMs: number): number {
+  if (timeMs < FIRST_DUSK) return 1750;
+  if (timeMs < FIRST_DAWN + HOUR) return 0;
+  if (timeMs < SECOND_DUSK) return 1800 * ramp(timeMs, FIRST_DAWN, FIRST_DAWN + 8 * HOUR);
+  return 0;
+}
+
+/** Hours since dusk, while it is night. */
+function nightHours(timeMs: number): number {
+  const dusk = timeMs < SECOND_DUSK ? FIRST_DUSK : SECOND_DUSK;
+  return Math.max(0, (timeMs - dusk) / HOUR);
+}
+
+function stillCool(timeMs: number): number {
+  const dawn = timeMs < SECOND_DUSK ? FIRST_DAWN : SECOND_DAWN;
+  return 1 - ramp(timeMs, dawn, dawn + 4 * HOUR);
+}
+
+const ATMOSPHERE: AtmospherePlan = {
+  seed: 862001,
+  latitude: PLACE.latitude,
+  pressureWind,
+  mixedDepth,
+  frictionDepth: 105,
+  surfacePressure: 93_900,
+  mixedTheta: 305.5,
+  mixedHumidity: 0.0112,
+  lidHeight: 1700,
+  groundCooling: (timeMs) => 3.4 * Math.sqrt(nightHours(timeMs)) * stillCool(timeMs),
+  coolingDepth: (timeMs) => 60 + 14 * nightHours(timeMs),
+  broughtHumidity: (timeMs) =>
+    0.0032 * ramp(timeMs, FIRST_DUSK + HOUR, FIRST_DAWN) * (1 - 0.7 * ramp(timeMs, FIRST_DAWN, SECOND_DUSK)),
+  broughtHeight: 420,
+  broughtWidth: 520,
+  eddies: (timeMs) => 0.3 + 0.6 * Math.min(1, mixedDepth(timeMs) / 400),
+};
+
+const START = at('2024-05-21T21:00Z');
+const END = at('2024-05-23T14:00Z');
+const GATES = [
+  ...Array.from({ length: 14 }, (_, k) => 40 + 20 * k),
+  ...Array.from({ length: 43 }, (_, k) => 340 + 40 * k),
+];
+
+const SITE = {
+  name: 'Larkmoor Ridge',
+  about: 'Invented: the place, its coordinates, its turbines and its weather exist nowhere.',
+  time_zone: 'Etc/GMT+6',
+  stations: [
+    { id: 'larkmoor-lidar', name: 'Larkmoor Ridge lidar', instrument: 'lidar', ...placeKeys(PLACE) },
+    { id: 'larkmoor-mast', name: 'Larkmoor Ridge mast', instrument: 'mast', ...placeKeys(PLACE) },
+    { id: 'tern-hollow', name: 'Tern Hollow soundings', instrument: 'radiosonde', ...placeKeys(SONDE_PLACE) },
+  ],
+  turbines: [
+    {
+      name: 'Plover 140',
+      count: 34,
+      hub_height_m: 105,
+      rotor_diameter_m: 140,
+      power_curve: {
+        air_density_kg_per_m3: 1.225,
+        speed_mps: [3, 4, 5, 6, 7, 8, 9, 10, 11, 12, 13, 25],
+        power_kw: [40, 170, 410, 760, 1240, 1870, 2640, 3390, 3920, 4150, 4200, 4200],
+      },
+    },
+    {
+      name: 'Dunlin 112',
+      count: 20,
+      hub_height_m: 84,
+      rotor_diameter_m: 112,
+      power_curve: {
+        air_density_kg_per_m3: 1.225,
+        speed_mps: [3, 4, 5, 6, 7, 8, 9, 10, 11, 12, 13, 25],
+        power_kw: [20, 95, 235, 445, 735, 1115, 1560, 1990, 2310, 2450, 2500, 2500],
+      },
+    },
+  ],
+  units: { speed: 'm/s', height: 'm' },
+};
+
+function placeKeys(place: typeof PLACE): Record<string, number> {
+  return { latitude_deg: place.latitude, longitude_deg: place.longitude, elevation_m: place.elevation };
+}
+
+/** The files of the plains nights by path, and what the manifest says of them. */
+export function plains(): { files: Record<string, Uint8Array | string>; entry: Record<string, unknown> } {
+  const record = profilerRecord(ATMOSPHERE, {
+    seed: 862002,
+    gates: GATES,
+    timesMs: everyMinutes(10, START, END),
+    noise: 0.12,
+    noisePerKm: 0.12,
+    echoAtGround: 20,
+    echoLossPerKm: 10.5,
+    leastEcho: -1,
+    outages: [spell('2024-05-22T04:20Z', '2024-05-22T05:00Z'), spell('2024-05-22T18:10Z', '2024-05-22T19:30Z')],
+    noisySpells: [spell('2024-05-22T06:40Z', '2024-05-22T07:30Z')],
+    withAir: true,
+  });
+  const sounding = (seed: number, launch: string): string =>
+    sondeCsv(ATMOSPHERE, { seed, station: 'tern-hollow', ...SONDE_PLACE, launchMs: at(launch), top: 12_000 });
+  const files = {
+    'plains/site.json': `${JSON.stringify(SITE, null, 2)}\n`,
+    'plains/larkmoor-lidar.nc': profilerNetcdf(record, {
+      station: 'larkmoor-lidar',
+      title: 'Larkmoor Ridge: winds of a lidar, temperature and humidity of a radiometer beside it',
+      instrument: 'lidar',
+      ...PLACE,
+      periodS: 600,
+    }),
+    'plains/larkmoor-mast.csv': mastCsv(ATMOSPHERE, {
+      seed: 862003,
+      station: 'larkmoor-mast',
+      heights: [10, 40, 80, 120],
+      timesMs: everyMinutes(10, START, END),
+    }),
+    'plains/tern-hollow-evening.csv': sounding(862004, '2024-05-21T23:30Z'),
+    'plains/tern-hollow-midnight.csv': sounding(862005, '2024-05-22T05:30Z'),
+  };
+  return {
+    files,
+    entry: {
+      id: 'plains',
+      title: 'Larkmoor Ridge: a jet over the plains, and a calm night after it',
+      site: 'plains/site.json',
+      files: Object.keys(files).filter((path) => path !== 'plains/site.json'),
+      now: '2024-05-22T08:40:00Z',
+    },
+  };
+}
