@@ -1,6 +1,6 @@
 // Density of the air at hub height, out of whatever the profile carries, and from what it was taken.
 
-import { GAS_CONSTANT_DRY, GRAVITY, virtualTemperature } from '../air/index.ts';
+import { airDensity, GAS_CONSTANT_DRY, GRAVITY, standardAtmosphere, virtualTemperature } from '../air/index.ts';
 import { REJECTING, type Profile } from '../profile/index.ts';
 
 export interface HubDensity {
@@ -14,7 +14,7 @@ export interface HubDensity {
 const NEAR = 150;
 
 /**
- * Density of moist air at a height: p/(Rd Tv). Temperature is linear in height between the levels around it, or that of the
+ * Density of moist air at a height: the gas law for dry air and vapour. Temperature is linear in height between the levels around it, or that of the
  * nearest level within 150 m; pressure is carried from the nearest level that has one hydrostatically. Where the profile has
  * no pressure, that of the standard atmosphere (US Standard Atmosphere 1976) at the hub's height above sea level serves and
  * is said: weather moves it by 3 % at most, the normalised speed by 1 %. Without temperature there is no density.
@@ -23,16 +23,15 @@ export function densityAt(profile: Profile, heightAgl: number): HubDensity {
   const warm = nearest(profile, profile.temperature, heightAgl, NEAR);
   if (warm === undefined) return { airDensity: NaN, densityFrom: 'no temperature near the hub' };
   const humid = nearest(profile, profile.specificHumidity, heightAgl, NEAR);
-  const temperature = humid === undefined ? warm.value : virtualTemperature(warm.value, humid.value);
+  const humidity = humid?.value ?? 0;
   const dry = humid === undefined ? ', taken as dry' : '';
   const level = nearest(profile, profile.pressure, heightAgl, Infinity);
   if (level !== undefined) {
-    // Where two levels enclose the hub the nearer one serves: the step is hydrostatic, so both give the same.
-    const pressure =
-      level.nearValue * Math.exp((-GRAVITY * (heightAgl - level.nearHeight)) / (GAS_CONSTANT_DRY * temperature));
-    return { airDensity: pressure / (GAS_CONSTANT_DRY * temperature), densityFrom: `pressure and temperature${dry}` };
+    const scale = (GAS_CONSTANT_DRY * virtualTemperature(warm.value, humidity)) / GRAVITY;
+    const pressure = level.nearValue * Math.exp((level.nearHeight - heightAgl) / scale);
+    return { airDensity: airDensity(warm.value, pressure, humidity), densityFrom: `pressure and temperature${dry}` };
   }
-  const pressure = standardPressure(profile.station.elevation + heightAgl);
+  const { pressure } = standardAtmosphere(profile.station.elevation + heightAgl);
   if (Number.isNaN(pressure)) {
     return {
       airDensity: NaN,
@@ -40,7 +39,7 @@ export function densityAt(profile: Profile, heightAgl: number): HubDensity {
     };
   }
   return {
-    airDensity: pressure / (GAS_CONSTANT_DRY * temperature),
+    airDensity: airDensity(warm.value, pressure, humidity),
     densityFrom: `temperature and the standard atmosphere's pressure${dry}`,
   };
 }
@@ -70,10 +69,4 @@ function nearest(profile: Profile, column: Float32Array | null, heightAgl: numbe
   if (below < 0 || above < 0) return { value: nearValue, nearValue, nearHeight };
   const weight = (heightAgl - profile.heightAgl[below]!) / (profile.heightAgl[above]! - profile.heightAgl[below]!);
   return { value: column[below]! * (1 - weight) + column[above]! * weight, nearValue, nearHeight };
-}
-
-/** Pressure, Pa, at a geometric height above sea level in the lowest layer of the US Standard Atmosphere 1976. */
-function standardPressure(heightAmsl: number): number {
-  const geopotential = (6_356_766 * heightAmsl) / (6_356_766 + heightAmsl);
-  return 101_325 * Math.pow((288.15 - 0.0065 * geopotential) / 288.15, 5.25588);
 }

@@ -1,9 +1,9 @@
 // The fast kernel: the wind on many discs out of one profile, profile after profile, without allocating.
 
-import { directionOf, eastward, northward, signedAngle, speedOf } from '../air/index.ts';
+import { directionOf, eastward, northward, shearExponent, signedAngle, speedOf } from '../air/index.ts';
 import type { WindColumn } from '../profile/index.ts';
 import type { Disc } from './disc.ts';
-import { planDisc, powerLawWeights, type Between, type DiscPlan } from './plan.ts';
+import { planDisc, type Between, type DiscPlan } from './plan.ts';
 
 /**
  * Wind on each disc of a fleet, one value a disc in every column. Where `plans[i].why` is not empty every column but
@@ -203,14 +203,10 @@ export class FleetScan {
 
   /** The rare case of a calm level in the disc: its logarithm does not exist, the fit rests on the others. */
   #shearWithoutCalm(plan: DiscPlan): number {
-    const kept = Array.from(plan.fitWeight, (_, k) => plan.fitFirst + k).filter((k) => this.#levels.speed[k]! > 0);
-    const weights = powerLawWeights(
-      kept.map((k) => this.#levels.heightAgl[k]!),
-      0,
-      kept.length,
-    );
-    if (weights.length === 0) return NaN;
-    return kept.reduce((sum, k, position) => sum + weights[position]! * this.#logSpeed[k]!, 0);
+    const first = plan.fitFirst;
+    const end = first + plan.fitWeight.length;
+    const { heightAgl, speed } = this.#levels;
+    return shearExponent(heightAgl.subarray(first, end), speed.subarray(first, end)).exponent;
   }
 }
 

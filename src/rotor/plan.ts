@@ -103,7 +103,7 @@ function slices(disc: Disc, heightAgl: ArrayLike<number>, count: number): { firs
 }
 
 /** Where a height lies between ascending levels. */
-export function between(height: number, heightAgl: ArrayLike<number>, count: number): Between {
+function between(height: number, heightAgl: ArrayLike<number>, count: number): Between {
   if (count === 0 || !(height >= heightAgl[0]!) || !(height <= heightAgl[count - 1]!))
     return { below: -1, weight: NaN };
   let above = 1;
@@ -130,7 +130,7 @@ function shearFit(
 }
 
 /** Weights w so that the exponent of the least-squares power law over levels first..end is the sum of w ln V. */
-export function powerLawWeights(heightAgl: ArrayLike<number>, first: number, end: number): Float64Array {
+function powerLawWeights(heightAgl: ArrayLike<number>, first: number, end: number): Float64Array {
   const weights = new Float64Array(Math.max(0, end - first));
   let mean = 0;
   for (let k = first; k < end; k++) mean += Math.log(heightAgl[k]!) / weights.length;

@@ -12,7 +12,8 @@ import {
 } from '../../src/rotor/index.ts';
 import { checkBlock, expectAgrees } from '../support/check-table.ts';
 import { sharedIsHere } from '../support/shared.ts';
-import { columnOf, profileOf } from './support.ts';
+import { profileOf } from '../support/profiles.ts';
+import { columnOf } from './support.ts';
 
 describe.skipIf(!sharedIsHere)('checks/rotor.json', () => {
   const cases = (name: string) => {

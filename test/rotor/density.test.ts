@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { unplacedStation } from '../../src/profile/index.ts';
 import { densityAt } from '../../src/rotor/index.ts';
-import { profileOf } from './support.ts';
+import { profileOf } from '../support/profiles.ts';
 
 const sea = { ...unplacedStation('sea'), elevation: 0 };
 

@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { DuskveerError } from '../../src/air/index.ts';
 import { windOnDisc, type DiscWind } from '../../src/rotor/index.ts';
-import { profileOf } from './support.ts';
+import { profileOf } from '../support/profiles.ts';
 
 const disc = { hubHeight: 100, rotorDiameter: 120 };
 const HEIGHTS = [40, 60, 80, 100, 120, 140, 160];

@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { gatherWind, windColumn } from '../../src/profile/index.ts';
 import { FleetScan, windOnDisc } from '../../src/rotor/index.ts';
-import { profileOf } from './support.ts';
+import { profileOf } from '../support/profiles.ts';
 
 const DISCS = [
   { hubHeight: 80, rotorDiameter: 90 },

@@ -3,7 +3,8 @@
 import { describe, expect, it } from 'vitest';
 import { windOnDisc } from '../../src/rotor/index.ts';
 import { readSharedJson, sharedIsHere } from '../support/shared.ts';
-import { nightLevels, profileOf, type NightSource } from './support.ts';
+import { profileOf } from '../support/profiles.ts';
+import { nightLevels, type NightSource } from './support.ts';
 
 interface NightRotor {
   readonly alpha: number;

@@ -1,21 +1,6 @@
-// Profiles for the tests of this room.
+// The real night and check columns for the tests of this room.
 
-import {
-  BlockBuilder,
-  profileAt,
-  unplacedStation,
-  type LevelInput,
-  type Profile,
-  type Station,
-} from '../../src/profile/index.ts';
 import { readShared } from '../support/shared.ts';
-
-/** A profile of these levels. */
-export function profileOf(levels: LevelInput, station: Station = unplacedStation('here')): Profile {
-  const builder = new BlockBuilder();
-  builder.add({ station, source: 'test', timeMs: 0, levels });
-  return profileAt(builder.finish(), 0);
-}
 
 /** A column out of a check table: null becomes NaN. */
 export function columnOf(values: unknown): number[] {

@@ -1,0 +1,117 @@
+// What vapour one profile carries, with the reason where it cannot be said.
+
+import type { Profile } from '../profile/index.ts';
+import { airColumn, type AirColumn } from './air-column.ts';
+import { moistLayerTop, potentialInstability, thetaEProfile, type PotentialInstability } from './instability.ts';
+import {
+  fluxOf,
+  NO_TRANSPORT,
+  precipitableWater,
+  transportByHeight,
+  transportByPressure,
+  type Transport,
+} from './transport.ts';
+
+export interface MoistureOptions {
+  /** Pa; limits of the layer of `transport` and `precipitableWater`, cut to the data; absent: all of the data. */
+  readonly bottomPressure?: number | undefined;
+  readonly topPressure?: number | undefined;
+  /** Bounds of the jet's layer, m above ground. */
+  readonly jetLayer?: { readonly bottom: number; readonly top: number } | undefined;
+  /** Pa at the ground, for profiles without pressure of their own. */
+  readonly surfacePressure?: number | undefined;
+}
+
+/** Numbers are NaN where they could not be had. */
+export interface MoistureNumbers {
+  readonly status: 'ok' | 'not-assessable';
+  /** Empty when ok, else the reason: `no humidity`. */
+  readonly why: string;
+  /** Station whose humidity was used; empty where there was none. */
+  readonly humidityFrom: string;
+  /** Its age against the wind, s. */
+  readonly humidityAgeS: number;
+  /** kg/m2 of the layer */
+  readonly precipitableWater: number;
+  /** Pressure form over the layer, kg/(m s). */
+  readonly transport: Transport;
+  /** Height form from the lowest level to 3 km above ground or the top of data, which `reaches` gives in m. */
+  readonly below3Km: Transport & { readonly reaches: number };
+  /** Height form within the jet's layer. */
+  readonly inJet: Transport;
+  /** kg/(m2 s) at the levels where it is known. */
+  readonly flux: { readonly heightAgl: Float64Array; readonly east: Float64Array; readonly north: Float64Array };
+  /** Top of the moist layer, m above ground. */
+  readonly moistTop: number;
+  /** K at the levels where it is known. */
+  readonly thetaE: { readonly heightAgl: Float64Array; readonly value: Float64Array };
+  readonly instability: PotentialInstability;
+  /** What limits the numbers, in words. */
+  readonly notes: readonly string[];
+}
+
+/** m above ground */
+const THREE_KILOMETRES = 3000;
+
+/** Moisture numbers of a profile that carries its own humidity. */
+export function moistureOf(profile: Profile, options: MoistureOptions = {}): MoistureNumbers {
+  const air = airColumn(profile, options.surfacePressure);
+  return moistureOfAir(air, { id: profile.station.id, ageS: 0 }, options);
+}
+
+/** The same of an air column whose humidity came from `from`. */
+export function moistureOfAir(
+  air: AirColumn,
+  from: { readonly id: string; readonly ageS: number },
+  options: MoistureOptions,
+): MoistureNumbers {
+  const humid = air.specificHumidity.some((value) => value >= 0);
+  const why = whyNot(air, humid);
+  const limits = { bottom: options.bottomPressure, top: options.topPressure };
+  const transport = transportByPressure(air, limits);
+  const below3Km = transportByHeight(air, { top: THREE_KILOMETRES });
+  const inJet = options.jetLayer === undefined ? NO_TRANSPORT : transportByHeight(air, options.jetLayer);
+  const notAssessable = why !== '' || Number.isNaN(transport.size);
+  const thetaE = thetaEProfile(air);
+  return {
+    status: notAssessable ? 'not-assessable' : 'ok',
+    why: why !== '' || !notAssessable ? why : 'fewer than two levels of the layer have humidity, wind and pressure',
+    humidityFrom: humid ? from.id : '',
+    humidityAgeS: humid ? from.ageS : NaN,
+    precipitableWater: precipitableWater(air, limits),
+    transport,
+    below3Km,
+    inJet,
+    flux: fluxProfile(air),
+    moistTop: moistLayerTop(air.heightAgl, air.specificHumidity),
+    thetaE: known(air.heightAgl, thetaE),
+    instability: potentialInstability(air.heightAgl, thetaE),
+    notes: notes(air, below3Km.reaches),
+  };
+}
+
+function whyNot(air: AirColumn, humid: boolean): string {
+  if (!humid) return 'no humidity';
+  if (!air.u.some((value) => Number.isFinite(value))) return 'no wind';
+  if (!air.pressure.some((value) => value > 0)) return 'neither pressure nor temperature to work it out from';
+  return '';
+}
+
+function notes(air: AirColumn, reaches: number): string[] {
+  const words: string[] = [];
+  if (air.pressureFrom !== '') words.push(air.pressureFrom);
+  if (reaches < THREE_KILOMETRES) words.push(`data end at ${Math.round(reaches)} m, below 3 km`);
+  return words;
+}
+
+function fluxProfile(air: AirColumn): MoistureNumbers['flux'] {
+  const east = air.u.map((u, k) => fluxOf(air.density[k]!, air.specificHumidity[k]!, u));
+  const north = air.v.map((v, k) => fluxOf(air.density[k]!, air.specificHumidity[k]!, v));
+  const keep = (_: number, k: number): boolean => Number.isFinite(east[k]!) && Number.isFinite(north[k]!);
+  return { heightAgl: air.heightAgl.filter(keep), east: east.filter(keep), north: north.filter(keep) };
+}
+
+function known(heightAgl: Float64Array, value: Float64Array): { heightAgl: Float64Array; value: Float64Array } {
+  const keep = (_: number, k: number): boolean => Number.isFinite(value[k]!);
+  return { heightAgl: heightAgl.filter(keep), value: value.filter(keep) };
+}
