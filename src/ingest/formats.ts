@@ -2,5 +2,6 @@
 // unmistakable beginning first, tables of text last. A new format is a file or folder and one line here.
 
 import type { FileFormat } from './format.ts';
+import { netcdf4, netcdfClassic } from './netcdf/formats.ts';
 
-export const FORMATS: readonly FileFormat[] = [];
+export const FORMATS: readonly FileFormat[] = [netcdfClassic, netcdf4];

@@ -1,0 +1,25 @@
+// Text that was UTF-8 but was taken for the Western code page: the HDF5 library does so where a writer left its texts
+// flagged as ASCII, and "Jülich" comes out as "JÃ¼lich".
+
+const CODE_PAGE: ReadonlyMap<string, number> = new Map(
+  Array.from(new TextDecoder('windows-1252').decode(Uint8Array.from({ length: 256 }, (_, byte) => byte))).map(
+    (letter, byte) => [letter, byte],
+  ),
+);
+
+/** The text as its writer meant it; unchanged where it does not read as UTF-8 in disguise. NULs at the end go. */
+export function mendText(text: string): string {
+  const plain = text.replace(/\0+$/u, '');
+  if (/^[\0-\x7f]*$/u.test(plain)) return plain;
+  const bytes: number[] = [];
+  for (const letter of plain) {
+    const byte = CODE_PAGE.get(letter) ?? (letter.charCodeAt(0) < 256 ? letter.charCodeAt(0) : undefined);
+    if (byte === undefined) return plain;
+    bytes.push(byte);
+  }
+  try {
+    return new TextDecoder('utf-8', { fatal: true }).decode(Uint8Array.from(bytes));
+  } catch {
+    return plain;
+  }
+}
