@@ -1,3 +1,4 @@
 export { CRITERIA, CRITERIA_NAMES, criteriaOf, hasCategories, type Criteria, type CriteriaName } from './criteria.ts';
 export { findJets, type FindOptions, type Jet, type JetFinding, type SmoothNose } from './find-jets.ts';
 export type { JetCore } from './layer.ts';
+export { NO_JET, NOT_ASSESSABLE, scanNoses, type NoseTable } from './scan.ts';

@@ -2,6 +2,7 @@
 
 import { describe, expect, it } from 'vitest';
 import { CRITERIA, findJets, type Criteria } from '../../src/jet/index.ts';
+import { ALLOWANCE } from '../../src/jet/nose.ts';
 import { checkBlock, expectAgrees, type CheckCase, type CheckValue } from '../support/check-table.ts';
 import { sharedIsHere } from '../support/shared.ts';
 import { profileOf } from './support.ts';
@@ -67,6 +68,22 @@ describe.skipIf(!sharedIsHere)('check table jet', () => {
       expectAgrees(block, 'bottom_m', core.bottom, want.bottom_m!, check.id);
       expectAgrees(block, 'top_m', core.top, want.top_m!, check.id);
       expect(Math.abs(core.threshold - (want.threshold_m_per_s as number))).toBeLessThanOrEqual(STORED);
+    }
+  });
+
+  it('has no margin so small that the allowance for 32-bit floats could decide a case', () => {
+    const thresholds = [...CRITERIA['whiteman-1997'].categories.flatMap((one) => [one.speed, one.falloff]), 2];
+    for (const check of block.cases) {
+      const speed = missing(check.in.speed_m_per_s).filter((value) => !Number.isNaN(value));
+      for (const nose of speed) {
+        const margins = thresholds.map((threshold) => nose - threshold);
+        for (const minimum of speed) {
+          margins.push(nose - 1.25 * minimum, ...thresholds.map((threshold) => nose - minimum - threshold));
+        }
+        // In doubles a margin of nought is off by a few times 1e-16.
+        const smallest = Math.min(...margins.map(Math.abs).filter((margin) => margin > 1e-12));
+        expect(smallest, check.id).toBeGreaterThan(100 * ALLOWANCE);
+      }
     }
   });
 });
