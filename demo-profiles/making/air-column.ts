@@ -3,12 +3,17 @@
 // and van de Wiel et al. (2010, J. Atmos. Sci. 67): by day a mixed layer, slowed and turned toward low pressure; after
 // sunset it comes loose and swings at the inertial rate; below, a shallow layer stays bound by friction.
 
-import { EARTH_ROTATION } from '../../src/air/index.ts';
+import { EARTH_ROTATION, eastward, northward } from '../../src/air/index.ts';
 
 /** Eastward and northward, m/s. */
 export interface Wind {
   readonly u: number;
   readonly v: number;
+}
+
+/** Wind of a speed, m/s, from a direction, degrees. */
+export function windFrom(speed: number, direction: number): Wind {
+  return { u: eastward(speed, direction), v: northward(speed, direction) };
 }
 
 export interface Weather {
@@ -19,12 +24,11 @@ export interface Weather {
   mixedDepth(timeMs: number): number;
   /** Scale of the night's friction layer, m. */
   frictionDepth: number;
-  /** Further push on the air, m/s2, such as a slope's; zero where absent. */
-  push?(heightAgl: number, timeMs: number): Wind;
 }
 
-export const COLUMN_STEP_M = 20;
+const COLUMN_STEP_M = 20;
 const LEVELS = 201;
+const TOP = COLUMN_STEP_M * (LEVELS - 1);
 const STEP_S = 60;
 /** Mixed layer: share of the pressure wind that friction leaves, and turn toward low pressure, degrees. */
 const MIXED_SHARE = 0.68;
@@ -35,15 +39,16 @@ const ROUGHNESS = 0.05;
 const MIXING_S = 1500;
 const BINDING_S = 1200;
 
-/** The wind at every step of the column, from 0 to 4000 m, as it stands at the asked times (ascending, UTC ms). */
-export function* windThroughTime(weather: Weather, timesMs: readonly number[]): Generator<Wind[]> {
+/** The wind of the column as it stands at the asked times (ascending, UTC ms); above its top the pressure wind. */
+export function* columnWinds(weather: Weather, timesMs: readonly number[]): Generator<(heightAgl: number) => Wind> {
   const coriolis = 2 * EARTH_ROTATION * Math.sin((weather.latitude * Math.PI) / 180);
   // Begun half a day early, so that no trace of the beginning is left.
   let nowMs = timesMs[0]! - 12 * 3_600_000;
   const column = Array.from({ length: LEVELS }, (_, k) => weather.pressureWind(k * COLUMN_STEP_M, nowMs));
   for (const timeMs of timesMs) {
     for (; nowMs < timeMs; nowMs += STEP_S * 1000) step(column, weather, coriolis, nowMs);
-    yield column.map((wind) => ({ ...wind }));
+    const now = column.map((wind) => ({ ...wind }));
+    yield (heightAgl) => (heightAgl < TOP ? windAt(now, heightAgl) : weather.pressureWind(heightAgl, timeMs));
   }
 }
 
@@ -53,14 +58,13 @@ function step(column: Wind[], weather: Weather, coriolis: number, timeMs: number
   for (let k = 0; k < column.length; k++) {
     const height = k * COLUMN_STEP_M;
     const pressure = weather.pressureWind(height, timeMs);
-    const push = weather.push?.(height, timeMs) ?? { u: 0, v: 0 };
     // Turning about the pressure wind is exact, so that speed is neither made nor lost by the step.
     const cos = Math.cos(-coriolis * STEP_S);
     const sin = Math.sin(-coriolis * STEP_S);
     const du = column[k]!.u - pressure.u;
     const dv = column[k]!.v - pressure.v;
-    let u = pressure.u + du * cos - dv * sin + push.u * STEP_S;
-    let v = pressure.v + du * sin + dv * cos + push.v * STEP_S;
+    let u = pressure.u + du * cos - dv * sin;
+    let v = pressure.v + du * sin + dv * cos;
     for (const { toward, perSecond } of [
       byDay(mixed, height, depth),
       byNight(pressure, height, depth, weather.frictionDepth, coriolis),
@@ -123,8 +127,8 @@ function byNight(
 }
 
 /** The wind of a column between its steps. */
-export function windAt(column: readonly Wind[], heightAgl: number): Wind {
-  const position = Math.min(heightAgl / COLUMN_STEP_M, column.length - 1.001);
+function windAt(column: readonly Wind[], heightAgl: number): Wind {
+  const position = heightAgl / COLUMN_STEP_M;
   const below = Math.floor(position);
   const share = position - below;
   const mix = (a: number, b: number): number => a + share * (b - a);

@@ -18,6 +18,8 @@ export interface AirPlan {
   readonly mixedHumidity: number;
   /** m above ground: lid of the day's mixed layer, left aloft by night */
   readonly lidHeight: number;
+  /** Gain of potential temperature, K, at a height above the lid, m. */
+  thetaAbove(aboveLid: number): number;
   /** How much the ground has cooled below the mixed layer, K, at a time. */
   groundCooling(timeMs: number): number;
   /** Depth scale of the cooled layer, m, at a time. */
@@ -60,10 +62,8 @@ export function airAt(plan: AirPlan, heights: readonly number[], timeMs: number)
 
 function stateAt(plan: AirPlan, height: number, pressure: number, timeMs: number): Omit<Air, 'pressure'> {
   const aboveLid = Math.max(0, height - plan.lidHeight);
-  // The lid gains 4 K over some 200 m; above it 3.5 K a kilometre, as air that no mixing reaches.
-  const lid = 4 * (1 - Math.exp(-aboveLid / 150)) + 0.0035 * aboveLid;
   const cooled = plan.groundCooling(timeMs) * Math.exp(-height / plan.coolingDepth(timeMs));
-  const temperature = (plan.mixedTheta + lid - cooled) * Math.pow(pressure / 100_000, KAPPA);
+  const temperature = (plan.mixedTheta + plan.thetaAbove(aboveLid) - cooled) * Math.pow(pressure / 100_000, KAPPA);
 
   const dryAloft = Math.exp(-aboveLid / 1800) * (1 - 0.35 * (1 - Math.exp(-aboveLid / 200)));
   const fromLayer = (height - plan.broughtHeight) / plan.broughtWidth;

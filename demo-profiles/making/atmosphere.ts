@@ -1,11 +1,15 @@
 // An invented atmosphere that instruments can look at: wind of the column, its eddies, and the state of the air.
 
-import { windAt, windThroughTime, type Weather, type Wind } from './air-column.ts';
+import type { Wind } from './air-column.ts';
 import { airAt, type Air, type AirPlan } from './air-state.ts';
 import { Chance, Wandering } from './chance.ts';
 
-export interface AtmospherePlan extends Weather, AirPlan {
+export interface AtmospherePlan extends AirPlan {
   readonly seed: number;
+  /** The wind without eddies at heights above ground, m, as it stands at each of the times (ascending, UTC ms). */
+  winds(timesMs: readonly number[]): Iterable<(heightAgl: number) => Wind>;
+  /** How strongly day's heating stirs the air, 0 to 1. */
+  convection(timeMs: number): number;
   /** Deviation of the eddies in each component, m/s, at a time. */
   eddies(timeMs: number): number;
 }
@@ -27,13 +31,13 @@ export function* momentsOf(plan: AtmospherePlan, timesMs: readonly number[]): Ge
   // Eddies are counted from midnight UTC of the first day, so that every instrument meets the same ones.
   const dayMs = Math.floor(timesMs[0]! / 86_400_000) * 86_400_000;
   let index = 0;
-  for (const column of windThroughTime(plan, timesMs)) {
+  for (const windAt of plan.winds(timesMs)) {
     const timeMs = timesMs[index++]!;
     const hours = (timeMs - dayMs) / 3_600_000;
     yield {
       timeMs,
       wind(heightAgl) {
-        const mean = windAt(column, heightAgl);
+        const mean = windAt(heightAgl);
         // Eddies cannot be larger than the ground lets them.
         const size = plan.eddies(timeMs) * Math.min(1, 0.3 + heightAgl / 150);
         return {

@@ -1,9 +1,10 @@
 // Larkmoor Ridge, an invented wind farm on invented plains: a night with a jet from dusk to dawn, and a calm one after it.
 
-import type { Wind } from './air-column.ts';
+import { columnWinds, windFrom, type Wind } from './air-column.ts';
 import type { AtmospherePlan } from './atmosphere.ts';
 import { at, everyMinutes, ramp, spell } from './clock.ts';
 import { mastCsv } from './mast.ts';
+import { demoNight, siteFileStation, type DemoNight } from './night.ts';
 import { profilerNetcdf } from './profiler-netcdf.ts';
 import { profilerRecord } from './profiler.ts';
 import { sondeCsv } from './sonde.ts';
@@ -11,11 +12,11 @@ import { sondeCsv } from './sonde.ts';
 const PLACE = { latitude: 38.2, longitude: -99.4, elevation: 640 };
 const SONDE_PLACE = { latitude: 38.05, longitude: -99.7, elevation: 662 };
 
-// Sun at this place (UTC): sets 01:42, rises 11:26. The site's clock is six hours behind.
+// Sun at this place (UTC): sets 01:48, rises 11:23. The site's clock is six hours behind.
 const FIRST_DUSK = at('2024-05-22T00:45Z');
-const FIRST_DAWN = at('2024-05-22T11:26Z');
+const FIRST_DAWN = at('2024-05-22T11:23Z');
 const SECOND_DUSK = at('2024-05-23T00:45Z');
-const SECOND_DAWN = at('2024-05-23T11:26Z');
+const SECOND_DAWN = at('2024-05-23T11:23Z');
 const HOUR = 3_600_000;
 
 /** A south-south-westerly with its core a few hundred metres up, as over ground that slopes; it dies on the second day. */
@@ -24,8 +25,7 @@ function pressureWind(heightAgl: number, timeMs: number): Wind {
   const belowCore = Math.max(0, 320 - heightAgl) / 900;
   const shape = 6.5 + 8.5 * Math.exp(-Math.pow(aboveCore, 1.6)) - 2 * belowCore + 2.2 * ramp(heightAgl, 1800, 4000);
   const strength = 1 - 0.86 * ramp(timeMs, FIRST_DAWN + 2 * HOUR, SECOND_DUSK - 3 * HOUR);
-  const direction = ((196 + 16 * Math.min(2.5, heightAgl / 1000)) * Math.PI) / 180;
-  return { u: -shape * strength * Math.sin(direction), v: -shape * strength * Math.cos(direction) };
+  return windFrom(shape * strength, 196 + 16 * Math.min(2.5, heightAgl / 1000));
 }
 
 function mixedDepth(timeMs: number): number {
@@ -48,14 +48,13 @@ function stillCool(timeMs: number): number {
 
 const ATMOSPHERE: AtmospherePlan = {
   seed: 862001,
-  latitude: PLACE.latitude,
-  pressureWind,
-  mixedDepth,
-  frictionDepth: 105,
+  winds: (timesMs) => columnWinds({ latitude: PLACE.latitude, pressureWind, mixedDepth, frictionDepth: 105 }, timesMs),
+  convection: (timeMs) => Math.min(1, mixedDepth(timeMs) / 500),
   surfacePressure: 93_900,
   mixedTheta: 305.5,
   mixedHumidity: 0.0112,
   lidHeight: 1700,
+  thetaAbove: (aboveLid) => 4 * (1 - Math.exp(-aboveLid / 150)) + 0.0035 * aboveLid,
   groundCooling: (timeMs) => 3.4 * Math.sqrt(nightHours(timeMs)) * stillCool(timeMs),
   coolingDepth: (timeMs) => 60 + 14 * nightHours(timeMs),
   broughtHumidity: (timeMs) =>
@@ -77,9 +76,9 @@ const SITE = {
   about: 'Invented: the place, its coordinates, its turbines and its weather exist nowhere.',
   time_zone: 'Etc/GMT+6',
   stations: [
-    { id: 'larkmoor-lidar', name: 'Larkmoor Ridge lidar', instrument: 'lidar', ...placeKeys(PLACE) },
-    { id: 'larkmoor-mast', name: 'Larkmoor Ridge mast', instrument: 'mast', ...placeKeys(PLACE) },
-    { id: 'tern-hollow', name: 'Tern Hollow soundings', instrument: 'radiosonde', ...placeKeys(SONDE_PLACE) },
+    siteFileStation('larkmoor-lidar', 'Larkmoor Ridge lidar', 'lidar', PLACE),
+    siteFileStation('larkmoor-mast', 'Larkmoor Ridge mast', 'mast', PLACE),
+    siteFileStation('tern-hollow', 'Tern Hollow soundings', 'radiosonde', SONDE_PLACE),
   ],
   turbines: [
     {
@@ -108,12 +107,8 @@ const SITE = {
   units: { speed: 'm/s', height: 'm' },
 };
 
-function placeKeys(place: typeof PLACE): Record<string, number> {
-  return { latitude_deg: place.latitude, longitude_deg: place.longitude, elevation_m: place.elevation };
-}
-
-/** The files of the plains nights by path, and what the manifest says of them. */
-export function plains(): { files: Record<string, Uint8Array | string>; entry: Record<string, unknown> } {
+/** The nights at Larkmoor Ridge. */
+export function plains(): DemoNight {
   const record = profilerRecord(ATMOSPHERE, {
     seed: 862002,
     gates: GATES,
@@ -129,32 +124,29 @@ export function plains(): { files: Record<string, Uint8Array | string>; entry: R
   });
   const sounding = (seed: number, launch: string): string =>
     sondeCsv(ATMOSPHERE, { seed, station: 'tern-hollow', ...SONDE_PLACE, launchMs: at(launch), top: 12_000 });
-  const files = {
-    'plains/site.json': `${JSON.stringify(SITE, null, 2)}\n`,
-    'plains/larkmoor-lidar.nc': profilerNetcdf(record, {
-      station: 'larkmoor-lidar',
-      title: 'Larkmoor Ridge: winds of a lidar, temperature and humidity of a radiometer beside it',
-      instrument: 'lidar',
-      ...PLACE,
-      periodS: 600,
-    }),
-    'plains/larkmoor-mast.csv': mastCsv(ATMOSPHERE, {
-      seed: 862003,
-      station: 'larkmoor-mast',
-      heights: [10, 40, 80, 120],
-      timesMs: everyMinutes(10, START, END),
-    }),
-    'plains/tern-hollow-evening.csv': sounding(862004, '2024-05-21T23:30Z'),
-    'plains/tern-hollow-midnight.csv': sounding(862005, '2024-05-22T05:30Z'),
-  };
-  return {
-    files,
-    entry: {
+  return demoNight(
+    {
       id: 'plains',
       title: 'Larkmoor Ridge: a jet over the plains, and a calm night after it',
-      site: 'plains/site.json',
-      files: Object.keys(files).filter((path) => path !== 'plains/site.json'),
       now: '2024-05-22T08:40:00Z',
     },
-  };
+    SITE,
+    {
+      'larkmoor-lidar.nc': profilerNetcdf(record, {
+        station: 'larkmoor-lidar',
+        title: 'Larkmoor Ridge: winds of a lidar, temperature and humidity of a radiometer beside it',
+        instrument: 'lidar',
+        ...PLACE,
+        periodS: 600,
+      }),
+      'larkmoor-mast.csv': mastCsv(ATMOSPHERE, {
+        seed: 862003,
+        station: 'larkmoor-mast',
+        heights: [10, 40, 80, 120],
+        timesMs: everyMinutes(10, START, END),
+      }),
+      'tern-hollow-evening.csv': sounding(862004, '2024-05-21T23:30Z'),
+      'tern-hollow-midnight.csv': sounding(862005, '2024-05-22T05:30Z'),
+    },
+  );
 }

@@ -67,7 +67,7 @@ export function profilerRecord(atmosphere: AtmospherePlan, plan: ProfilerPlan): 
     const drowned = within(moment.timeMs, plan.noisySpells);
     const air = plan.withAir ? moment.air(plan.gates) : null;
     const haze = 1.5 * chance.normal();
-    const convection = Math.min(1, atmosphere.mixedDepth(moment.timeMs) / 500);
+    const convection = atmosphere.convection(moment.timeMs);
     plan.gates.forEach((height, k) => {
       const wind = moment.wind(height);
       const echo =
