@@ -1,0 +1,16 @@
+export type { LayerAdvection } from './advection.ts';
+export { liftParcel, parcelTemperatures, type Ascent, type ParcelStart } from './ascent.ts';
+export { fineEnvironment, type Environment } from './environment.ts';
+export type { Figure, VectorFigure } from './figure.ts';
+export { hodographOf, meanWind, windAt, type Hodograph } from './hodograph.ts';
+export type { Inflow, InflowKind, StableLayer } from './inflow.ts';
+export { ingredientsOf, INGREDIENTS_CAUTION, type Ingredient, type OtherIngredients } from './ingredients.ts';
+export type { JetWind } from './jet-wind.ts';
+export { joinWindAndAir, type JoinOptions, type WindAndAir } from './join.ts';
+export { clusterMotion, stormMotion, type ClusterMotion, type StormMotion } from './motion.ts';
+export type { Mover, StormNumbers } from './numbers.ts';
+export type { Parcel } from './parcel.ts';
+export { soundingOf, type Sounding } from './sounding.ts';
+export { equivalentTemperatures, type ParcelName } from './start.ts';
+export { stormOf, type StormOptions } from './storm.ts';
+export { bulkShear, helicity } from './wind-layers.ts';
