@@ -1,11 +1,11 @@
 // Text that was UTF-8 but was taken for the Western code page: the HDF5 library does so where a writer left its texts
 // flagged as ASCII, and "Jülich" comes out as "JÃ¼lich".
 
-const CODE_PAGE: ReadonlyMap<string, number> = new Map(
-  Array.from(new TextDecoder('windows-1252').decode(Uint8Array.from({ length: 256 }, (_, byte) => byte))).map(
-    (letter, byte) => [letter, byte],
-  ),
-);
+/** Bytes 0x80 to 0x9f in the Western code page (windows-1252); five of them stand for themselves. */
+const UPPER = '€\x81‚ƒ„…†‡ˆ‰Š‹Œ\x8dŽ\x8f\x90‘’“”•–—˜™š›œ\x9džŸ';
+
+// Spelled out: not every host's decoder knows that page in full.
+const BYTE_OF: ReadonlyMap<string, number> = new Map(Array.from(UPPER, (letter, k) => [letter, 0x80 + k]));
 
 /** The text as its writer meant it; unchanged where it does not read as UTF-8 in disguise. NULs at the end go. */
 export function mendText(text: string): string {
@@ -13,7 +13,7 @@ export function mendText(text: string): string {
   if (/^[\0-\x7f]*$/u.test(plain)) return plain;
   const bytes: number[] = [];
   for (const letter of plain) {
-    const byte = CODE_PAGE.get(letter) ?? (letter.charCodeAt(0) < 256 ? letter.charCodeAt(0) : undefined);
+    const byte = BYTE_OF.get(letter) ?? (letter.charCodeAt(0) < 256 ? letter.charCodeAt(0) : undefined);
     if (byte === undefined) return plain;
     bytes.push(byte);
   }

@@ -49,8 +49,9 @@ export function planOf(dataset: Dataset, options: ReadOptions, problems: Problem
     .find(({ height }) => height !== undefined);
   if (withHeight?.height === undefined) throw missing(dataset, 'height', unknown);
   const { pivot, height } = withHeight;
-  const time = findTime(dataset, problems);
-  if (time === null) throw missing(dataset, 'time', unknown);
+  const refused: Problem[] = [];
+  const time = findTime(dataset, refused);
+  if (time === null) throw refused[0] === undefined ? missing(dataset, 'time', unknown) : new DuskveerError(refused[0]);
   const layout = layoutOf(dataset, pivot, height.variable, time.variable.dimensions, options.limits.levels);
   const roles = new Map<Role, Finding>();
   for (const role of LEVEL_ROLES) {

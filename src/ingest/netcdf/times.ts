@@ -33,9 +33,9 @@ const AS_IT_IS = { scale: 1, offset: 0 };
 
 /**
  * Finds the time: by standard name or axis, then by the usual names; the unit must be one of time since a date.
- * @param problems told of a time whose unit or calendar cannot be used
+ * @param refused told of times whose unit or calendar cannot be used
  */
-export function findTime(dataset: Dataset, problems: Problem[]): TimeSource | null {
+export function findTime(dataset: Dataset, refused: Problem[]): TimeSource | null {
   const all = [...dataset.variables.values()];
   const marked = all.filter(
     (variable) =>
@@ -43,7 +43,6 @@ export function findTime(dataset: Dataset, problems: Problem[]): TimeSource | nu
       textOf(variable.attributes, 'axis').toUpperCase() === 'T',
   );
   const named = NAMES.flatMap((name) => all.filter((variable) => variable.name.toLowerCase() === name));
-  const refused: Problem[] = [];
   for (const variable of new Set([...marked, ...named])) {
     if (variable.type === 'text') return { variable, unit: null };
     const units = textOf(variable.attributes, 'units');
@@ -57,7 +56,6 @@ export function findTime(dataset: Dataset, problems: Problem[]): TimeSource | nu
       where: { source: dataset.source, key: variable.name },
     });
   }
-  problems.push(...refused);
   return null;
 }
 
