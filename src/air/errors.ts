@@ -23,6 +23,8 @@ export interface Problem {
   /** How to mend it, one plain sentence. */
   readonly mend: string;
   readonly where: Place;
+  /** True when nothing was lost that the house could use: worth telling, no failure. */
+  readonly mild?: boolean;
 }
 
 /** The base of every error the house throws; `problem` is what callers read. */

@@ -1,7 +1,8 @@
 // Every format the house reads, in the order in which each is asked whether the bytes are its own: those with an
 // unmistakable beginning first, tables of text last. A new format is a file or folder and one line here.
 
+import { bufr } from './bufr/bufr.ts';
 import type { FileFormat } from './format.ts';
 import { netcdf4, netcdfClassic } from './netcdf/formats.ts';
 
-export const FORMATS: readonly FileFormat[] = [netcdfClassic, netcdf4];
+export const FORMATS: readonly FileFormat[] = [netcdfClassic, netcdf4, bufr];

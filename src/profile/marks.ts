@@ -32,6 +32,8 @@ const MEANINGS = [
   ['clock', 'doubt', 'the clock of the source jumped'],
   ['few-beams', 'doubt', 'the wind rests on few beams or a poor fit'],
   ['air-impossible', 'reject-air', 'temperature or humidity lies outside what the atmosphere can do'],
+  ['air-source-rejects', 'reject-air', 'the source itself marks temperature or humidity as bad'],
+  ['height-worked-out', 'note', 'the height was worked out from the pressure'],
 ] as const;
 
 export type MarkName = (typeof MEANINGS)[number][0];
