@@ -15,13 +15,33 @@ const folder = process.argv[2];
 if (folder === undefined) throw new Error('Say where the tables are: node test/support/make-bufr-tables.mjs FOLDER');
 
 const UPPER_AIR_SEQUENCES = ['301', '303', '309', '321'];
-const WHOLE_CLASSES = ['01', '02', '04', '05', '06', '07', '08', '10', '11', '12', '13', '20', '21', '25', '31', '33', '35'];
+const WHOLE_CLASSES = [
+  '01',
+  '02',
+  '04',
+  '05',
+  '06',
+  '07',
+  '08',
+  '10',
+  '11',
+  '12',
+  '13',
+  '20',
+  '21',
+  '25',
+  '31',
+  '33',
+  '35',
+];
 
 const rowsOf = (pattern) =>
   readdirSync(folder)
     .filter((name) => pattern.test(name))
     .sort()
-    .flatMap((name) => Papa.parse(readFileSync(join(folder, name), 'utf8'), { header: true, skipEmptyLines: true }).data);
+    .flatMap(
+      (name) => Papa.parse(readFileSync(join(folder, name), 'utf8'), { header: true, skipEmptyLines: true }).data,
+    );
 
 const elements = new Map(rowsOf(/^BUFRCREX_TableB_en_\d+\.csv$/).map((row) => [row.FXY, row]));
 const sequences = new Map();
