@@ -4,15 +4,16 @@
 import type { Profile } from '../profile/index.ts';
 import { advectionByLayers } from './advection.ts';
 import { effectiveShear, inflowHelicity } from './effective.ts';
-import { figure, hectopascals, metres, noVector, vectorFigure, type VectorFigure } from './figure.ts';
+import { figure, metres, noVector, vectorFigure, type VectorFigure } from './figure.ts';
 import { hodographOf, windAt, type Hodograph } from './hodograph.ts';
 import { inflowOf } from './inflow.ts';
 import { jetInflow, jetOf, type JetWind } from './jet-wind.ts';
 import { CLOUD_LEVELS, clusterMotion, stormMotion, type StormMotion } from './motion.ts';
 import type { Mover, StormNumbers } from './numbers.ts';
 import { liftParcels } from './parcel.ts';
+import { heightsOfPressures } from './pressure-height.ts';
 import { reasonsOf } from './reasons.ts';
-import { atLnPressure, soundingOf, type Sounding } from './sounding.ts';
+import { soundingOf, type Sounding } from './sounding.ts';
 import { equivalentTemperatures, parcelStarts } from './start.ts';
 import { bulkShear, helicity } from './wind-layers.ts';
 
@@ -62,7 +63,7 @@ export function stormOf(profile: Profile, options: StormOptions = {}): StormNumb
     },
     motion,
     clusters: {
-      ...clusterMotion(cloudWinds(hodograph, sounding, profile, air), jet.wind),
+      ...clusterMotion(cloudWinds(hodograph, profile, air), jet.wind),
       jet: jet.wind,
       jetFrom: jet.from,
     },
@@ -97,21 +98,12 @@ function moverOf(
   return { mover: 'unknown', vector: noVector(why) };
 }
 
-function cloudWinds(hodograph: Hodograph, sounding: Sounding, wind: Profile, air: Profile): VectorFigure[] {
+function cloudWinds(hodograph: Hodograph, wind: Profile, air: Profile): VectorFigure[] {
   // Heights above the one station's ground become heights above the other's where both elevations are known.
   const shift = air.station.elevation - wind.station.elevation;
-  return CLOUD_LEVELS.map((pressure) => {
-    if (sounding.count < 2) return noVector('Pressure is not known, so neither are the heights of 850 to 300 hPa.');
-    const height = atLnPressure(sounding, sounding.heightAgl, Math.log(pressure));
-    if (Number.isNaN(height)) {
-      return noVector(
-        pressure > sounding.pressure[0]!
-          ? `${hectopascals(pressure)} lies below the lowest level, at ${hectopascals(sounding.pressure[0]!)}.`
-          : `Pressure data end at ${hectopascals(sounding.pressure[sounding.count - 1]!)}; ${hectopascals(pressure)} is needed.`,
-      );
-    }
-    return windAt(hodograph, height + (Number.isNaN(shift) ? 0 : shift));
-  });
+  return heightsOfPressures(air, CLOUD_LEVELS).map(({ value, why }) =>
+    why === '' ? windAt(hodograph, value + (Number.isNaN(shift) ? 0 : shift)) : noVector(why),
+  );
 }
 
 function notesOf(sounding: Sounding, hodograph: Hodograph): string[] {

@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { ingredientsOf, joinWindAndAir, stormOf, type StormNumbers } from '../../src/storm/index.ts';
 import { airLevels, EVENING, MIDNIGHT, PLAINS, profileOf } from './soundings.ts';
@@ -87,6 +88,35 @@ describe('stormOf', () => {
       for (const [value, why] of figures(storm)) expect(Number.isNaN(value)).toBe(why !== '');
       for (const parcel of storm.parcels) if (Number.isNaN(parcel.cape)) expect(parcel.why).not.toBe('');
     }
+  });
+
+  it('survives any column of numbers, and never leaves a gap without a reason (property)', () => {
+    const column = (low: number, high: number) =>
+      fc.array(fc.oneof({ weight: 5, arbitrary: fc.double({ min: low, max: high, noNaN: true }) }, fc.constant(NaN)), {
+        minLength: 12,
+        maxLength: 12,
+      });
+    fc.assert(
+      fc.property(
+        column(0, 16_000),
+        column(500, 110_000),
+        column(150, 350),
+        column(0, 0.1),
+        column(-80, 80),
+        fc.boolean(),
+        (heightAgl, pressure, temperature, specificHumidity, u, falling) => {
+          const sorted = falling ? pressure.toSorted((a, b) => b - a) : pressure;
+          const heights = falling ? heightAgl.toSorted((a, b) => a - b) : heightAgl;
+          const v = u.toReversed();
+          const storm = stormOf(
+            profileOf({ heightAgl: heights, pressure: sorted, temperature, specificHumidity, u, v }),
+            { jet: JET },
+          );
+          for (const [value, why] of figures(storm)) expect(Number.isNaN(value)).toBe(why !== '');
+          for (const parcel of storm.parcels) if (Number.isNaN(parcel.cape)) expect(parcel.why).not.toBe('');
+        },
+      ),
+    );
   });
 
   it('takes the right mover in the north, the left one in the south, and the motion given above both', () => {
