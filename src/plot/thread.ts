@@ -17,14 +17,12 @@ export interface Thread {
 }
 
 export interface ThreadStyle {
-  /** Ring at the last point, for the thread that ends now. */
-  readonly endRing?: boolean;
   /** Width of the line, CSS pixels; 2 unless told. */
   readonly width?: number;
 }
 
 export function drawThread(pen: Pen, frame: Frame, thread: Thread, look: Look, style: ThreadStyle = {}): void {
-  const { width = 2, endRing = false } = style;
+  const { width = 2 } = style;
   const { theme, ratio } = look;
   pen.lineJoin = 'round';
   pen.lineCap = 'round';
@@ -53,7 +51,6 @@ export function drawThread(pen: Pen, frame: Frame, thread: Thread, look: Look, s
     trace();
     pen.setLineDash([]);
   }
-  if (endRing) drawEndRing(pen, frame, thread, look);
 }
 
 /** Points that are joined: from `first` up to, not including, `end`. */
@@ -99,17 +96,4 @@ function drawDot(pen: Pen, x: number, y: number, width: number, { theme, ratio }
   pen.beginPath();
   pen.arc(x, y, width * ratio, 0, 2 * Math.PI);
   pen.fill();
-}
-
-function drawEndRing(pen: Pen, frame: Frame, { timeMs, height }: Thread, { theme, ratio }: Look): void {
-  let last = timeMs.length - 1;
-  while (last >= 0 && Number.isNaN(height[last]!)) last--;
-  if (last < 0) return;
-  pen.beginPath();
-  pen.arc(xPixel(frame, timeMs[last]!), yPixel(frame, height[last]!), 5 * ratio, 0, 2 * Math.PI);
-  pen.fillStyle = theme.ink;
-  pen.fill();
-  pen.lineWidth = 1.5 * ratio;
-  pen.strokeStyle = theme.ground;
-  pen.stroke();
 }
