@@ -3,7 +3,7 @@
 // the right of the shaft seen from its foot in the northern hemisphere, to the left in the southern.
 
 import { KNOT, type SpeedUnit } from '../air/index.ts';
-import { strokeLine, type Look, type Pen } from './pen.ts';
+import type { Look, Pen } from './pen.ts';
 
 export interface Feathers {
   readonly pennants: number;
@@ -34,6 +34,8 @@ export interface BarbStyle {
   readonly length?: number;
   /** Ink unless told. */
   readonly colour?: string;
+  /** Rims the barb with the ground, for barbs over a picture. */
+  readonly rimmed?: boolean;
 }
 
 /**
@@ -48,16 +50,38 @@ export function drawBarb(
   speed: number,
   direction: number,
   look: Look,
-  { hemisphere, unit = 'm/s', length = 22, colour = look.theme.ink }: BarbStyle,
+  { hemisphere, unit = 'm/s', length = 22, colour = look.theme.ink, rimmed = false }: BarbStyle,
 ): void {
   if (Number.isNaN(speed)) return;
-  const { pennants, whole, half, calm } = feathersOf(speed, unit);
-  if (!calm && Number.isNaN(direction)) return;
-  const size = length * look.ratio;
-  pen.strokeStyle = colour;
-  pen.fillStyle = colour;
-  pen.lineWidth = 1.25 * look.ratio;
+  const feathers = feathersOf(speed, unit);
+  if (!feathers.calm && Number.isNaN(direction)) return;
+  const turned = hemisphere === 'north' ? 1 : -1;
+  const stroke = (strokeColour: string, width: number): void => {
+    pen.strokeStyle = strokeColour;
+    pen.fillStyle = strokeColour;
+    pen.lineWidth = width * look.ratio;
+    strokeBarb(pen, x, y, direction, feathers, turned, length * look.ratio);
+  };
   pen.lineCap = 'round';
+  pen.lineJoin = 'round';
+  if (rimmed) {
+    pen.globalAlpha = 0.55;
+    stroke(look.theme.ground, 3.25);
+    pen.globalAlpha = 1;
+  }
+  stroke(colour, 1.25);
+}
+
+/** @param side 1 where feathers stand to the right of the shaft seen from its foot, -1 to the left */
+function strokeBarb(
+  pen: Pen,
+  x: number,
+  y: number,
+  direction: number,
+  { pennants, whole, half, calm }: Feathers,
+  side: number,
+  size: number,
+): void {
   if (calm) {
     pen.beginPath();
     pen.arc(x, y, 0.16 * size, 0, 2 * Math.PI);
@@ -68,13 +92,18 @@ export function drawBarb(
   // Along the shaft, outward, and the way the feathers stand out from it; screen y points down.
   const angle = (direction * Math.PI) / 180;
   const [alongX, alongY] = [Math.sin(angle), -Math.cos(angle)];
-  const side = hemisphere === 'north' ? 1 : -1;
   const [outX, outY] = [-alongY * side, alongX * side];
   const point = (along: number, out: number): [number, number] => [
     x + (along * alongX + out * outX) * size,
     y + (along * alongY + out * outY) * size,
   ];
-  strokeLine(pen, x, y, ...point(1, 0));
+  const line = (from: [number, number], to: [number, number]): void => {
+    pen.beginPath();
+    pen.moveTo(...from);
+    pen.lineTo(...to);
+    pen.stroke();
+  };
+  line([x, y], point(1, 0));
 
   const spacing = 0.15;
   let along = 1;
@@ -85,16 +114,17 @@ export function drawBarb(
     pen.lineTo(...point(along - 0.2, 0));
     pen.closePath();
     pen.fill();
+    pen.stroke();
     along -= 0.2;
   }
   if (pennants > 0) along -= 0.06;
   for (let k = 0; k < whole; k++) {
-    strokeLine(pen, ...point(along, 0), ...point(along + 0.14, 0.42));
+    line(point(along, 0), point(along + 0.14, 0.42));
     along -= spacing;
   }
   if (half === 1) {
     // Alone at the end it could be taken for a whole feather, so it stands in a little.
     if (pennants + whole === 0) along -= spacing;
-    strokeLine(pen, ...point(along, 0), ...point(along + 0.07, 0.21));
+    line(point(along, 0), point(along + 0.07, 0.21));
   }
 }

@@ -56,8 +56,7 @@ export function drawHodograph(pen: Pen, data: HodographData, place: HodographPla
 
   drawRings(pen, rings, place, look);
   if (data.trail !== null && data.trail !== undefined) {
-    pen.setLineDash([1.5 * ratio, 3 * ratio]);
-    strokePath(pen, data.trail, point, theme.soft, 1.25 * ratio);
+    strokePath(pen, data.trail, point, theme.soft, ratio);
   }
   if (data.turning !== null && data.turning !== undefined) {
     pen.setLineDash([5 * ratio, 4 * ratio]);

@@ -1,3 +1,5 @@
+export { drawBarb, feathersOf, type BarbStyle, type Feathers } from './barbs.ts';
+export { drawDiscBands, drawDiscs, type Disc } from './disc.ts';
 export {
   FIELD_NAMES,
   FIELDS,
@@ -9,8 +11,13 @@ export {
   type PixelRule,
   type ShownUnit,
 } from './fields.ts';
+export { drawHodograph, hodographRings, type HodographData, type HodographPlace, type WindPath } from './hodograph.ts';
+export { drawLegend, legendOf, type Legend } from './legend.ts';
+export { drawNightStrip, type StripStyle } from './night-strip.ts';
 export { SectionPainter, type SectionPaint } from './paint-section.ts';
+export { FONT, xPixel, xValue, yPixel, yValue, type Frame, type Look, type Pen } from './pen.ts';
 export type { SectionView } from './pixel-ranges.ts';
+export { drawProfiles, type ProfileChartStyle, type ProfileLine } from './profile-chart.ts';
 export {
   colourScale,
   scaleColour,
@@ -21,5 +28,20 @@ export {
   type ScaleName,
   type ValueRange,
 } from './scales.ts';
+export {
+  emptyData,
+  profileOptions,
+  sectionOptions,
+  type ProfileAxesOptions,
+  type SectionAxesOptions,
+  type SectionExtent,
+} from './section-axes.ts';
+export { drawSectionBarbs, pickBarbs, type BarbTiles } from './section-barbs.ts';
 export { buildSectionGrid, type SectionGrid, type SectionGridOptions } from './section-grid.ts';
+export { SectionPicture, viewOf } from './section-picture.ts';
+export { drawSectionOver, drawSectionUnder, type Call, type SectionScene } from './section-scene.ts';
 export { THEMES, type Theme, type ThemeName } from './theme.ts';
+export { drawThread, type Thread, type ThreadStyle } from './thread.ts';
+export { timeText, timeTicks, valueTicks, type Tick } from './ticks.ts';
+export { chartData, frameOf, thinned, timeAxis, valueAxis } from './uplot-adapter.ts';
+export { WindLookup, type MeasuredWind } from './wind-lookup.ts';

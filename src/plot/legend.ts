@@ -1,7 +1,7 @@
 // What a colour means: the strip of colours with its numbers, and the same in words.
 
 import type { SpeedUnit } from '../air/index.ts';
-import { FIELDS, shownUnit, toShown, type FieldName } from './fields.ts';
+import { FIELDS, shownUnit, toShown, type FieldName, type ShownUnit } from './fields.ts';
 import { setFont, writeText, type Look, type Pen } from './pen.ts';
 import { colourScale, SCALE_STEPS, type ColourScale, type ValueRange } from './scales.ts';
 import type { ThemeName } from './theme.ts';
@@ -36,9 +36,28 @@ export function legendOf(field: FieldName, range: ValueRange, theme: ThemeName, 
     scale,
     range,
     unit: shown.unit,
-    ticks: valueTicks(range.low, range.high, 5, shown.factor, shown.offset),
+    ticks: legendTicks(range, shown),
     words,
   };
+}
+
+/** Equal parts of the whole range where these are round numbers, so that both ends are told; else round numbers inside. */
+function legendTicks({ low, high }: ValueRange, { factor, offset }: ShownUnit): Tick[] {
+  const start = low * factor + offset;
+  for (const parts of [4, 3, 5, 6, 2]) {
+    const step = ((high - low) * factor) / parts;
+    const decimals = isWhole(step) ? 0 : 1;
+    if (!isWhole(step * 10 ** decimals) || !isWhole(start / step)) continue;
+    return Array.from({ length: parts + 1 }, (_, k) => ({
+      at: low + (k / parts) * (high - low),
+      label: numberText(start + k * step, decimals),
+    }));
+  }
+  return valueTicks(low, high, 5, factor, offset);
+}
+
+function isWhole(value: number): boolean {
+  return Math.abs(value - Math.round(value)) < 1e-6;
 }
 
 function senseWords(scale: ColourScale, theme: ThemeName): string {

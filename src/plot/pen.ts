@@ -98,7 +98,7 @@ export function within(pen: Pen, frame: Frame, draw: () => void): void {
 
 /** A straight line, laid on whole device pixels where it is upright or level so that hairlines stay hairlines. */
 export function strokeLine(pen: Pen, x1: number, y1: number, x2: number, y2: number): void {
-  const half = (pen.lineWidth % 2) / 2;
+  const half = (Math.round(pen.lineWidth) % 2) / 2;
   const align = (from: number, to: number): [number, number] =>
     from === to ? [Math.round(from - half) + half, Math.round(from - half) + half] : [from, to];
   const [fromX, toX] = align(x1, x2);

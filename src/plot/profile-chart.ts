@@ -1,7 +1,7 @@
 // The current profile beside the section: speed across, the section's own height axis up.
 
 import { REJECTING, type Profile } from '../profile/index.ts';
-import { strokeLine, within, writeText, xPixel, yPixel, type Frame, type Look, type Pen } from './pen.ts';
+import { within, writeText, xPixel, yPixel, type Frame, type Look, type Pen } from './pen.ts';
 import { scaleColour, type ColourScale, type ValueRange } from './scales.ts';
 
 export interface ProfileLine {
@@ -49,8 +49,9 @@ export function drawProfiles(
       pen.stroke();
     }
   });
-  for (const line of earlier) labelProfile(pen, frame, line, look, theme.soft, 400);
-  if (current !== null) labelProfile(pen, frame, current, look, theme.ink, 600);
+  const taken: number[] = [];
+  if (current !== null) taken.push(labelProfile(pen, frame, current, look, [], theme.ink, 600));
+  for (const line of earlier) taken.push(labelProfile(pen, frame, line, look, taken, theme.soft, 400));
 }
 
 /** Levels that count, in order of height. */
@@ -116,29 +117,29 @@ function drawDots(
   }
 }
 
-/** Beside the fastest level in view, where there is room to the right of the line. */
+/**
+ * Beside the fastest level in view that keeps clear of the lines of text at `taken`.
+ * @returns the line it took, device pixels; NaN when nothing was written
+ */
 function labelProfile(
   pen: Pen,
   frame: Frame,
   { profile, label }: ProfileLine,
   look: Look,
+  taken: readonly number[],
   colour: string,
   weight: number,
-): void {
-  if (label === undefined) return;
+): number {
+  if (label === undefined) return NaN;
   const { heightAgl, speed } = profile;
-  const inView = usableLevels(profile).filter((k) => heightAgl[k]! >= frame.yLow && heightAgl[k]! <= frame.yHigh);
-  if (inView.length === 0) return;
+  const lineOf = (k: number): number => yPixel(frame, heightAgl[k]!);
+  const inView = usableLevels(profile).filter((k) => {
+    const inside = heightAgl[k]! >= frame.yLow && heightAgl[k]! <= frame.yHigh;
+    return inside && !taken.some((line) => Math.abs(line - lineOf(k)) < 18 * look.ratio);
+  });
+  if (inView.length === 0) return NaN;
   const fastest = inView.reduce((best, k) => (speed[k]! > speed[best]! ? k : best));
   const x = Math.min(xPixel(frame, speed[fastest]!) + 11 * look.ratio, frame.left + frame.width);
-  const y = yPixel(frame, heightAgl[fastest]!);
-  writeText(pen, look, label, x, y, { colour, weight, baseline: 'middle', rimmed: true });
-}
-
-/** A level line across the panel, for the height under the cursor. */
-export function drawHeightMark(pen: Pen, frame: Frame, height: number, { theme, ratio }: Look): void {
-  pen.strokeStyle = theme.soft;
-  pen.lineWidth = ratio;
-  const y = yPixel(frame, height);
-  strokeLine(pen, frame.left, y, frame.left + frame.width, y);
+  writeText(pen, look, label, x, lineOf(fastest), { colour, weight, baseline: 'middle', rimmed: true });
+  return lineOf(fastest);
 }

@@ -48,7 +48,7 @@ export interface ProfileAxesOptions extends PanelOptions {
 
 /** CSS pixels above the frame, and from the frame to the right edge: half a number's width. */
 const ROOM_ABOVE = 8;
-const ROOM_RIGHT = 12;
+const ROOM_RIGHT = 22;
 const NUMBERS_WIDTH = 46;
 const LABEL_WIDTH = 20;
 const DISC_WIDTH = 13;
@@ -118,7 +118,7 @@ export function profileOptions(options: ProfileAxesOptions): uPlot.Options {
       { ...valueAxis(look, 56, toSpeedUnit(1, speedUnit)), size: ROOM_BELOW, gap: 8 },
       { ...valueAxis(look, 60, toHeightUnit(1, heightUnit)), scale: 'height', size: 0, values: () => [] },
     ],
-    cursor: { points: { show: false }, drag: { x: false, y: false, setScale: false } },
+    cursor: { x: false, points: { show: false }, drag: { x: false, y: false, setScale: false } },
     hooks: panelHooks(options, 'x'),
   };
 }

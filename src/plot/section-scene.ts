@@ -3,7 +3,7 @@
 import type { LightSpan, SpeedUnit } from '../air/index.ts';
 import { drawDiscBands, drawDiscs, type Disc } from './disc.ts';
 import { drawNightStrip } from './night-strip.ts';
-import { strokeLine, within, writeText, xPixel, yPixel, type Frame, type Look, type Pen } from './pen.ts';
+import { setFont, strokeLine, within, writeText, xPixel, yPixel, type Frame, type Look, type Pen } from './pen.ts';
 import { drawSectionBarbs, pickBarbs, type BarbTiles } from './section-barbs.ts';
 import type { SectionPicture } from './section-picture.ts';
 import { drawThread, type Thread } from './thread.ts';
@@ -57,9 +57,7 @@ export function drawSectionOver(pen: Pen, frame: Frame, scene: SectionScene, loo
   pen.save();
   if (scene.winds !== null) {
     const winds = pickBarbs(scene.winds, frame, look, scene.barbTiles);
-    pen.globalAlpha = 0.8;
-    drawSectionBarbs(pen, frame, winds, look, { hemisphere: scene.hemisphere, unit: scene.speedUnit });
-    pen.globalAlpha = 1;
+    drawSectionBarbs(pen, frame, winds, look, { hemisphere: scene.hemisphere, unit: scene.speedUnit, rimmed: true });
   }
   within(pen, frame, () => {
     for (const thread of scene.threads) drawThread(pen, frame, thread, look);
@@ -112,11 +110,14 @@ function drawThreadEnd(pen: Pen, frame: Frame, thread: Thread, nowMs: number, { 
 
 function drawCall(pen: Pen, frame: Frame, call: Call, look: Look): void {
   const { ratio, theme } = look;
+  if (call.endMs <= frame.xLow || call.startMs >= frame.xHigh) return;
   const left = xPixel(frame, call.startMs);
   const top = yPixel(frame, call.top);
   pen.strokeStyle = theme.call;
   pen.lineWidth = 1.5 * ratio;
   pen.strokeRect(left, top, xPixel(frame, call.endMs) - left, yPixel(frame, call.bottom) - top);
-  const style = { colour: theme.call, weight: 600, rimmed: true } as const;
-  writeText(pen, look, call.words, left, top - 6 * ratio, style);
+  // Near the right edge the words begin further left rather than be cut off.
+  const wide = setFont(pen, look, 13, 600).measureText(call.words).width;
+  const at = Math.max(frame.left, Math.min(left, frame.left + frame.width - wide - 4 * ratio));
+  writeText(pen, look, call.words, at, top - 6 * ratio, { colour: theme.call, weight: 600, rimmed: true });
 }
