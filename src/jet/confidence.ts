@@ -8,7 +8,15 @@ import { basinsOf, type Basin } from './basins.ts';
 import { between, type Cut } from './column.ts';
 import type { Criteria } from './criteria.ts';
 import { NORMAL } from './normal.ts';
-import { categoryOf, findNosesInto, noseColumn, noseList, type NoseColumn, type NoseList } from './nose.ts';
+import {
+  categoryOf,
+  findNosesInto,
+  noseColumn,
+  noseList,
+  RISE_FACTOR,
+  type NoseColumn,
+  type NoseList,
+} from './nose.ts';
 import { fitPosteriorInto, posterior, sampleInto, type Posterior } from './posterior.ts';
 import type { UncertaintyOrigin } from './uncertainty.ts';
 
@@ -24,7 +32,7 @@ export interface BasinVerdict {
   readonly basin: Basin;
   /** Share of members that have a nose meeting the criteria in this stretch. */
   readonly confidence: number;
-  /** Standard deviation of the height of the greatest speed in the stretch, m. */
+  /** Standard deviation of the height of the greatest speed in the stretch, m; the spacing of the levels is part of it. */
   readonly heightSpread: number;
   /** The same of the greatest speed itself, m/s. */
   readonly speedSpread: number;
@@ -70,8 +78,9 @@ export function judgeEnsemble(
   column.count = judged.count;
   column.reachesCeiling = judged.reachesCeiling;
   column.heightAgl.set(judged.heightAgl.subarray(0, judged.count));
-  column.uncertainty.set(judged.uncertainty.subarray(0, judged.count));
-
+  const tolerated = toleratedRise(criteria);
+  for (let k = 0; k < judged.count; k++) column.uncertainty[k] = tolerated * fit.uncertainty[Math.min(k, levels - 1)]!;
+  const asked = askedOfMembers(criteria);
   const basins = basinsOf(fit.mean, fit.uncertainty, cut.kept);
   const tallies = basins.map(() => ({ hits: 0, height: 0, heightSquare: 0, speed: 0, speedSquare: 0 }));
   const counts = new Array<number>(criteria.categories.length).fill(0);
@@ -82,11 +91,11 @@ export function judgeEnsemble(
     if (cut.ceilingShare >= 0) {
       column.speed[cut.kept] = between(sample[cut.kept - 1]!, sample[cut.kept]!, cut.ceilingShare);
     }
-    findNosesInto(column, criteria, list);
+    findNosesInto(column, asked, list);
     let best = -1;
     let hit = 0;
     for (let i = 0; i < list.count; i++) {
-      const category = categoryOf(column, criteria, list, i);
+      const category = categoryOf(column, asked, list, i);
       if (category < 0) continue;
       best = Math.max(best, category);
       hit |= 1 << basinAt(basins, list.nose[i]!);
@@ -114,11 +123,29 @@ export function judgeEnsemble(
       return {
         basin,
         confidence: hits / members,
-        heightSpread: spread(height, heightSquare),
+        heightSpread: Math.hypot(spread(height, heightSquare), betweenLevels(column.heightAgl, basin.nose)),
         speedSpread: spread(speed, speedSquare),
       };
     }),
   };
+}
+
+/**
+ * Members are smoother than the levels but keep some of their wiggles. For a fall-off as shallow as 2 m/s these would end
+ * the fall too soon: there a rise within so many uncertainties of the levels does not. Found on simulated nights, where
+ * confidence is then right about as often as it says (test/outside/confidence-on-nights.test.ts).
+ */
+const TOLERATED_RISE = 0.4;
+const SHALLOW_FALLOFF = 4;
+
+function toleratedRise(criteria: Criteria): number {
+  return criteria.categories[0]!.falloff < SHALLOW_FALLOFF ? TOLERATED_RISE / RISE_FACTOR : 0;
+}
+
+/** The criteria as put to members: their first minimum tolerates such rises. */
+function askedOfMembers(criteria: Criteria): Criteria {
+  if (criteria.falloffTo !== 'first-minimum') return criteria;
+  return { ...criteria, falloffTo: 'risen-minimum', endingRise: 'uncertainty' };
 }
 
 /** Which basin a level belongs to; 31, which no basin has, where it belongs to none. */
@@ -126,6 +153,11 @@ function basinAt(basins: readonly Basin[], level: number): number {
   for (let i = 0; i < basins.length && i < 31; i++)
     if (level >= basins[i]!.lowest && level <= basins[i]!.highest) return i;
   return 31;
+}
+
+/** Standard deviation of a height known to lie within the half ways to the levels around, m: even odds in between. */
+function betweenLevels(heightAgl: Float64Array, nose: number): number {
+  return (heightAgl[nose + 1]! - heightAgl[nose - 1]!) / 2 / Math.sqrt(12);
 }
 
 function strongestOf(speed: Float64Array, basin: Basin): number {

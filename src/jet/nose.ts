@@ -36,7 +36,7 @@ export interface NoseList {
 export const ALLOWANCE = 1e-5;
 
 /** How many times its standard uncertainty a rise must reach to be more than the levels' uncertainty explains. */
-const RISE_FACTOR = 2;
+export const RISE_FACTOR = 2;
 
 export function noseColumn(capacity = 256): NoseColumn {
   return {

@@ -56,8 +56,6 @@ const NOISE_FACTORS = [0.25, 0.35, 0.5, 0.7, 1, 1.4, 2, 2.8, 4];
 const NOISE_DOUBT: Readonly<Record<UncertaintyOrigin, number>> = { stated: 0.15, assumed: 0.7 };
 /** The same for the curvature ratio. */
 const RATIO_DOUBT = 2.5;
-/** A level that lies further off the curve than so many standard deviations is taken as that much less certain. */
-const WILD = 3.5;
 
 /** Fits the posterior to the first `count` levels of a column with complete uncertainties. */
 export function fitPosteriorInto(wind: WindColumn, count: number, origin: UncertaintyOrigin, out: Posterior): void {
@@ -65,8 +63,8 @@ export function fitPosteriorInto(wind: WindColumn, count: number, origin: Uncert
   out.count = count;
   fillSmoothness(wind, count, out);
   out.uncertainty.set(wind.speedUncertainty.subarray(0, count));
+  widenWild(wind, out);
   weigh(wind, origin, out);
-  if (widenWild(wind, out)) weigh(wind, origin, out);
 }
 
 /** One sample of the true speeds, m/s, from independent standard normal numbers at `from` onward. */
@@ -185,14 +183,32 @@ function misfitOf(wind: WindColumn, out: Posterior, curvature: number): number {
   return misfit;
 }
 
-/** Makes levels far off the curve uncertain, so that a lone wild level does not carry the profile. @returns whether any was */
-function widenWild(wind: WindColumn, out: Posterior): boolean {
-  let any = false;
+/** Levels on either side that a level is held against. */
+const NEIGHBOURS = 2;
+/**
+ * A level further than so many uncertainties, and so many m/s, from the median around it is wild; more is allowed the
+ * further its nearer neighbour is away, by a shear (1/s) that jets do reach. Our own choice.
+ */
+const WILD_UNCERTAINTIES = 5;
+const WILD_LEAST = 3;
+const WILD_SHEAR = 0.03;
+
+/** Makes a lone wild level as uncertain as it is far off, so that it does not carry the profile. */
+function widenWild(wind: WindColumn, out: Posterior): void {
+  const { heightAgl, speed } = wind;
+  const around: number[] = [];
   for (let k = 0; k < out.count; k++) {
-    const off = Math.abs(wind.speed[k]! - out.mean[k]!);
-    if (off <= WILD * out.uncertainty[k]!) continue;
-    out.uncertainty[k] = 2 * off;
-    any = true;
+    around.length = 0;
+    const first = Math.max(0, k - NEIGHBOURS);
+    const last = Math.min(out.count - 1, k + NEIGHBOURS);
+    for (let j = first; j <= last; j++) around.push(speed[j]!);
+    around.sort((a, b) => a - b);
+    const off = Math.abs(speed[k]! - around[around.length >> 1]!);
+    const gap = Math.min(
+      k > 0 ? heightAgl[k]! - heightAgl[k - 1]! : Infinity,
+      k < out.count - 1 ? heightAgl[k + 1]! - heightAgl[k]! : Infinity,
+    );
+    const allowed = Math.max(WILD_LEAST, WILD_UNCERTAINTIES * out.uncertainty[k]!) + WILD_SHEAR * gap;
+    if (off > allowed) out.uncertainty[k] = off;
   }
-  return any;
 }

@@ -7,8 +7,9 @@ export interface Refined {
 }
 
 /**
- * Vertex of the parabola through levels k - 1, k and k + 1, where k is not slower than either. At an edge of the column, or
- * where the three lie on a line, the level itself.
+ * Vertex of the parabola through levels k - 1, k and k + 1, where k is not slower than either. Never further away than the
+ * nearer neighbour: across a wide gap a parabola invents a peak. At an edge of the column, or where the three lie on a
+ * line, the level itself.
  */
 export function refineNose(heightAgl: ArrayLike<number>, speed: ArrayLike<number>, count: number, k: number): Refined {
   const height = heightAgl[k]!;
@@ -21,6 +22,7 @@ export function refineNose(heightAgl: ArrayLike<number>, speed: ArrayLike<number
   const curvature = (upperChange - lowerChange) / (upper - lower);
   if (!(curvature < 0)) return { height, speed: peak };
   const slope = lowerChange - curvature * lower;
-  const offset = Math.min(upper, Math.max(lower, -slope / (2 * curvature)));
+  const reach = Math.min(upper, -lower);
+  const offset = Math.min(reach, Math.max(-reach, -slope / (2 * curvature)));
   return { height: height + offset, speed: peak + (slope + curvature * offset) * offset };
 }
