@@ -31,7 +31,7 @@ const LEVELS = 201;
 const TOP = COLUMN_STEP_M * (LEVELS - 1);
 const STEP_S = 60;
 /** Mixed layer: share of the pressure wind that friction leaves, and turn toward low pressure, degrees. */
-const MIXED_SHARE = 0.68;
+const MIXED_SHARE = 0.6;
 const MIXED_TURN = 22;
 /** Roughness length of open farmland, m. */
 const ROUGHNESS = 0.05;

@@ -26,7 +26,7 @@ const STRENGTHENED = 1.45;
 /** Far upstream: south-westerly, veering and freshening with height, slowed near the ground. */
 function undisturbed(heightAgl: number, timeMs: number): Wind {
   const strength = 0.75 + 0.25 * ramp(timeMs, START, FULL) - 0.2 * ramp(timeMs, EASE, OVER);
-  const speed = (11.5 + 1.6 * (heightAgl / 1000)) * (1 - 0.55 * Math.exp(-heightAgl / 130));
+  const speed = (12.6 + 0.5 * (heightAgl / 1000)) * (1 - 0.55 * Math.exp(-heightAgl / 130));
   return windFrom(speed * strength, 204 + 8 * Math.min(4, heightAgl / 1000));
 }
 
@@ -37,9 +37,12 @@ function atFoot(heightAgl: number, timeMs: number): Wind {
   const belowCrest = 1 - ramp(heightAgl, 0.55 * CREST_HEIGHT, 1.15 * CREST_HEIGHT);
   const fromNose = (heightAgl - 950) / 560;
   const core = Math.exp(-fromNose * fromNose);
+  // Just below the crest the air stands between the jet and the free flow above.
+  const fromSlack = (heightAgl - 1950) / 450;
+  const slack = Math.exp(-fromSlack * fromSlack);
   return {
     u: far.u * (1 - 0.85 * held * belowCrest),
-    v: far.v * (1 + (STRENGTHENED - 1) * held * core - 0.25 * held * ramp(heightAgl, 1500, 2100) * belowCrest),
+    v: far.v * (1 + (STRENGTHENED - 1) * held * core - 0.4 * held * slack),
   };
 }
 

@@ -21,9 +21,9 @@ const HOUR = 3_600_000;
 
 /** A south-south-westerly with its core a few hundred metres up, as over ground that slopes; it dies on the second day. */
 function pressureWind(heightAgl: number, timeMs: number): Wind {
-  const aboveCore = Math.max(0, heightAgl - 320) / 950;
+  const aboveCore = Math.max(0, heightAgl - 320) / 780;
   const belowCore = Math.max(0, 320 - heightAgl) / 900;
-  const shape = 6.5 + 8.5 * Math.exp(-Math.pow(aboveCore, 1.6)) - 2 * belowCore + 2.2 * ramp(heightAgl, 1800, 4000);
+  const shape = 7.2 + 7.8 * Math.exp(-Math.pow(aboveCore, 1.6)) - 2 * belowCore + 1.6 * ramp(heightAgl, 1800, 4000);
   const strength = 1 - 0.86 * ramp(timeMs, FIRST_DAWN + 2 * HOUR, SECOND_DUSK - 3 * HOUR);
   return windFrom(shape * strength, 196 + 16 * Math.min(2.5, heightAgl / 1000));
 }
@@ -61,14 +61,14 @@ const ATMOSPHERE: AtmospherePlan = {
     0.0032 * ramp(timeMs, FIRST_DUSK + HOUR, FIRST_DAWN) * (1 - 0.7 * ramp(timeMs, FIRST_DAWN, SECOND_DUSK)),
   broughtHeight: 420,
   broughtWidth: 520,
-  eddies: (timeMs) => 0.3 + 0.6 * Math.min(1, mixedDepth(timeMs) / 400),
+  eddies: (timeMs) => 0.28 + 0.15 * Math.min(1, mixedDepth(timeMs) / 400),
 };
 
 const START = at('2024-05-21T21:00Z');
 const END = at('2024-05-23T14:00Z');
 const GATES = [
-  ...Array.from({ length: 14 }, (_, k) => 40 + 20 * k),
-  ...Array.from({ length: 43 }, (_, k) => 340 + 40 * k),
+  ...Array.from({ length: 14 }, (_, k) => 30 + 20 * k),
+  ...Array.from({ length: 43 }, (_, k) => 330 + 40 * k),
 ];
 
 const SITE = {
@@ -95,7 +95,7 @@ const SITE = {
     {
       name: 'Dunlin 112',
       count: 20,
-      hub_height_m: 84,
+      hub_height_m: 88,
       rotor_diameter_m: 112,
       power_curve: {
         air_density_kg_per_m3: 1.225,

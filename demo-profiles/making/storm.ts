@@ -65,7 +65,7 @@ const LONG_SLOUGH: StormStation = {
 function pressureWind(station: StormStation, heightAgl: number): Wind {
   const aboveCore = Math.max(0, heightAgl - 650) / 1000;
   const belowCore = Math.max(0, 650 - heightAgl) / 1600;
-  const low = 9 + 8.5 * Math.exp(-Math.pow(aboveCore, 1.6)) - 3 * belowCore;
+  const low = 10.4 + 7.2 * Math.exp(-Math.pow(aboveCore, 1.6)) - 3 * belowCore;
   const speed = low * station.strength + 22 * ramp(heightAgl, 2500, 11_500);
   const direction = 188 + 24 * ramp(heightAgl, 0, 2500) + 46 * ramp(heightAgl, 2000, 8000);
   return windFrom(speed, direction + station.turned * (1 - ramp(heightAgl, 1500, 4000)));
@@ -98,7 +98,7 @@ function atmosphere(station: StormStation): AtmospherePlan {
         timesMs,
       ),
     convection: (timeMs) => Math.min(1, mixedDepth(timeMs) / 500),
-    eddies: (timeMs) => 0.35 + 0.5 * Math.min(1, mixedDepth(timeMs) / 400),
+    eddies: (timeMs) => 0.35 + 0.15 * Math.min(1, mixedDepth(timeMs) / 400),
     surfacePressure: 96_300 + (430 - station.elevation) * 11,
     mixedTheta: 307.5,
     mixedHumidity: 0.0135,

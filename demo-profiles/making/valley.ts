@@ -92,7 +92,7 @@ export function valley(): DemoNight {
   const timesMs = everyMinutes(10, START, END);
   const record = profilerRecord(ATMOSPHERE, {
     seed: 862202,
-    gates: Array.from({ length: 49 }, (_, k) => 40 + 20 * k),
+    gates: Array.from({ length: 49 }, (_, k) => 30 + 20 * k),
     timesMs,
     noise: 0.1,
     noisePerKm: 0.15,
