@@ -54,7 +54,7 @@ async function bundle(configFile, outDir) {
   const { build } = await import('vite').catch((cause) => {
     throw new Error('The tools for building are not installed. Run: npm ci', { cause });
   });
-  await build({ configFile: join(root, configFile), logLevel: 'error', build: { outDir, emptyOutDir: true } });
+  await build({ configFile: join(root, configFile), logLevel: 'silent', build: { outDir, emptyOutDir: true } });
 }
 
 /** Names, sizes and times of all sources in one digest: sees a file that came, went or changed. */

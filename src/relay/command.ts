@@ -13,9 +13,6 @@ export const EXIT = {
 } as const;
 
 export interface Command {
-  readonly name: string;
-  /** One line for the list of commands. */
-  readonly summary: string;
   /** What it reads, what it prints, its options. */
   readonly help: string;
   /** @returns the exit code; throws UsageError when called wrongly */

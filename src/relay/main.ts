@@ -2,19 +2,44 @@
 
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { DuskveerError, placeInWords } from '../air/index.ts';
 import { EXIT, UsageError, type Command } from './command.ts';
-import { serveCommand } from './serve.ts';
 
 // Both src/relay and dist/relay lie two folders below the checkout.
 const root = fileURLToPath(new URL('../..', import.meta.url));
 
-const COMMANDS: readonly Command[] = [
-  serveCommand({ board: join(root, 'dist/board'), demo: join(root, 'demo-profiles') }),
-];
+/** Each is loaded when it is called, so that none waits for the libraries of another. */
+const COMMANDS: Readonly<Record<string, { summary: string; load: () => Promise<Command> }>> = {
+  read: {
+    summary: 'prints the profiles that files hold',
+    load: async () => (await import('./read.ts')).command,
+  },
+  jets: {
+    summary: 'finds low-level jets in each profile',
+    load: async () => (await import('./jets.ts')).command,
+  },
+  rotor: {
+    summary: 'computes speed, shear and veer over rotor discs',
+    load: async () => (await import('./rotor.ts')).command,
+  },
+  moisture: {
+    summary: 'computes humidity flux, transport and precipitable water',
+    load: async () => (await import('./moisture.ts')).command,
+  },
+  serve: {
+    summary: 'shows the page in a browser, with the demo loaded',
+    load: async () =>
+      (await import('./serve.ts')).serveCommand({ board: join(root, 'dist/board'), demo: join(root, 'demo-profiles') }),
+  },
+};
+
+const LIST = Object.entries(COMMANDS)
+  .map(([name, { summary }]) => `  ${name.padEnd(10)} ${summary}`)
+  .join('\n');
 
 const HELP = `duskveer COMMAND [OPTIONS] [PATH ...]
 
-${COMMANDS.map((command) => `  ${command.name.padEnd(10)} ${command.summary}`).join('\n')}
+${LIST}
 
 duskveer COMMAND --help says what a command reads and prints.
 Exit: 0 all well, 1 could not run, 2 wrong usage, 3 some input could not be read (the rest is printed).
@@ -26,11 +51,12 @@ async function run(args: readonly string[]): Promise<number> {
     process.stdout.write(HELP);
     return name === undefined ? EXIT.wrongUsage : EXIT.well;
   }
-  const command = COMMANDS.find((candidate) => candidate.name === name);
-  if (command === undefined) {
+  const entry = Object.hasOwn(COMMANDS, name) ? COMMANDS[name] : undefined;
+  if (entry === undefined) {
     process.stderr.write(`There is no command ${name}.\n\n${HELP}`);
     return EXIT.wrongUsage;
   }
+  const command = await entry.load();
   if (rest.includes('--help') || rest.includes('-h')) {
     process.stdout.write(`${command.help}\n`);
     return EXIT.well;
@@ -38,10 +64,21 @@ async function run(args: readonly string[]): Promise<number> {
   try {
     return await command.run(rest);
   } catch (error) {
-    if (!(error instanceof UsageError)) throw error;
+    return explained(name, error);
+  }
+}
+
+/** Trouble with the call or with the site file in words; anything else is a fault of ours and is thrown on. */
+function explained(name: string, error: unknown): number {
+  if (error instanceof UsageError) {
     process.stderr.write(`${error.message}\nHow to call it: duskveer ${name} --help\n`);
     return EXIT.wrongUsage;
   }
+  if (!(error instanceof DuskveerError)) throw error;
+  const { where, what, mend } = error.problem;
+  const place = placeInWords(where);
+  process.stderr.write(`${place === '' ? '' : `${place}: `}${what} ${mend}\n`);
+  return EXIT.wrongUsage;
 }
 
 process.exitCode = await run(process.argv.slice(2));

@@ -13,8 +13,6 @@ const DEFAULT_HOST = '127.0.0.1';
 /** The command, serving these folders. */
 export function serveCommand(folders: AppFolders): Command {
   return {
-    name: 'serve',
-    summary: 'shows the page in a browser, with the demo loaded',
     help: `duskveer serve [--port NUMBER] [--host ADDRESS]
 
 Serves the page and the demo's files until stopped with Ctrl-C, and prints the address to open.

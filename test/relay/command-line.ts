@@ -5,6 +5,9 @@ import { fileURLToPath } from 'node:url';
 
 const launcher = fileURLToPath(new URL('../../src/relay/duskveer.mjs', import.meta.url));
 
+/** Path of a file of the demo. */
+export const demo = (path: string): string => fileURLToPath(new URL(`../../demo-profiles/${path}`, import.meta.url));
+
 export interface Ran {
   readonly code: number | null;
   readonly out: string;

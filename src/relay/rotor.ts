@@ -1,0 +1,103 @@
+// `rotor`: what the wind of each profile does on a turbine's disc; a JSON line a profile and turbine type.
+
+import { toJsonNumber } from '../air/index.ts';
+import { profilesOf, type Profile } from '../profile/index.ts';
+import { screen } from '../quality/index.ts';
+import { normaliseSpeed, powerFromCurve, windOnDisc, type Disc, type DiscWind } from '../rotor/index.ts';
+import { PLAIN_SITE, type PowerCurve, type Site } from '../site/index.ts';
+import { forEachBlock } from './blocks.ts';
+import { numberOption, parseOptions, UsageError, type Command } from './command.ts';
+import { chosenCriteria, findingOf } from './jets.ts';
+import { DECIMALS, isoTime } from './json-edge.ts';
+import { LineWriter } from './output.ts';
+
+export const command: Command = {
+  help: `duskveer rotor PATH... --hub M --diameter M
+
+Reads profiles from files, from all files in folders, or from stdin (-), screens them and computes what their wind does on a
+rotor disc. Nothing is extrapolated: a disc that the levels do not cover is not assessable.
+
+Prints a JSON line a profile and turbine type:
+  station, time, turbine
+  status, why                      ok, or not-assessable with the reason
+  coverage                         part of the disc between lowest and highest level, 0 to 1
+  hub_speed_mps, hub_direction_deg
+  rews_mps, rews_veer_mps          rotor-equivalent speed (IEC 61400-12-1, slices), without and with veer
+  shear_exponent                   power law, least squares over the levels from tip to tip
+  veer_deg                         turn from the lower to the upper tip, clockwise positive
+  nose_in_rotor                    whether the jet's nose lies between the tips; null without a jet
+  air_density_kg_per_m3            at the hub, where temperature is known
+  power_kw, power_equivalent_kw    of one machine, from the site's curve, by hub speed and by rotor-equivalent speed (with veer
+                                   where directions are known), each corrected to the curve's density where density is known
+
+  --hub M         hub height above ground
+  --diameter M    rotor diameter`,
+  async run(args) {
+    const { values, positionals } = parseOptions(args, {
+      hub: { type: 'string' },
+      diameter: { type: 'string' },
+    });
+    const site = PLAIN_SITE;
+    const machines = chosenMachines(site, values.hub, values.diameter);
+    const criteria = chosenCriteria(site, undefined);
+    const out = new LineWriter(process.stdout);
+    return forEachBlock(positionals, site, async (block) => {
+      for (const profile of profilesOf(screen(block, { site }).block)) {
+        const nose = findingOf(profile, criteria, site).jets[0]?.noseHeight ?? NaN;
+        for (const machine of machines) {
+          await out.write(rotorLine(profile, machine, windOnDisc(profile, machine.disc, { nose })));
+        }
+      }
+      await out.flush();
+    });
+  },
+};
+
+interface Machine {
+  readonly name: string;
+  readonly disc: Disc;
+  readonly powerCurve: PowerCurve | null;
+}
+
+function chosenMachines(site: Site, hub: string | undefined, diameter: string | undefined): Machine[] {
+  if (hub === undefined && diameter === undefined) {
+    if (site.turbines.length > 0) return site.turbines.map((turbine) => ({ ...turbine, disc: turbine }));
+    throw new UsageError('It needs a disc: --hub and --diameter in metres.');
+  }
+  if (hub === undefined || diameter === undefined) throw new UsageError('--hub and --diameter go together.');
+  const hubHeight = numberOption('hub', hub, 1, 500);
+  const rotorDiameter = numberOption('diameter', diameter, 1, 500);
+  if (rotorDiameter / 2 > hubHeight) throw new UsageError('Half the diameter is more than the hub height.');
+  const name = `hub ${hubHeight} m, diameter ${rotorDiameter} m`;
+  return [{ name, disc: { hubHeight, rotorDiameter }, powerCurve: null }];
+}
+
+/** The numbers of a disc as the contract of `rotor` has them. */
+export function rotorLine(profile: Profile, machine: Machine, wind: DiscWind): Record<string, unknown> {
+  const equivalent = Number.isNaN(wind.equivalentSpeedVeer) ? wind.equivalentSpeed : wind.equivalentSpeedVeer;
+  return {
+    station: profile.station.id,
+    time: isoTime(profile.timeMs),
+    turbine: machine.name,
+    status: wind.status,
+    why: wind.why,
+    coverage: toJsonNumber(wind.coverage, DECIMALS.share),
+    hub_speed_mps: toJsonNumber(wind.hubSpeed, DECIMALS.speed),
+    hub_direction_deg: toJsonNumber(wind.hubDirection, DECIMALS.direction),
+    rews_mps: toJsonNumber(wind.equivalentSpeed, DECIMALS.speed),
+    rews_veer_mps: toJsonNumber(wind.equivalentSpeedVeer, DECIMALS.speed),
+    shear_exponent: toJsonNumber(wind.shearExponent, DECIMALS.exponent),
+    veer_deg: toJsonNumber(wind.veer, DECIMALS.direction),
+    nose_in_rotor: wind.noseInRotor,
+    air_density_kg_per_m3: toJsonNumber(wind.airDensity, DECIMALS.density),
+    power_kw: toJsonNumber(powerOf(machine, wind.hubSpeed, wind), DECIMALS.power),
+    power_equivalent_kw: toJsonNumber(powerOf(machine, equivalent, wind), DECIMALS.power),
+  };
+}
+
+/** kW of one machine; NaN without a curve. */
+function powerOf({ powerCurve }: Machine, speed: number, { airDensity }: DiscWind): number {
+  if (powerCurve === null) return NaN;
+  const atCurve = Number.isNaN(airDensity) ? speed : normaliseSpeed(speed, airDensity, powerCurve.airDensity);
+  return powerFromCurve(powerCurve, atCurve);
+}

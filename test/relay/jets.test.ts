@@ -1,0 +1,50 @@
+import { describe, expect, it } from 'vitest';
+import { demo, duskveer } from './command-line.ts';
+
+interface JetLine {
+  readonly station: string;
+  readonly time: string;
+  readonly status: string;
+  readonly why: string;
+  readonly jets: Record<string, number | boolean | null>[];
+}
+
+const LIDAR = demo('plains/larkmoor-lidar.nc');
+
+describe('jets', () => {
+  it('tells the night of the demo: a jet before dawn, none in the calm night', async () => {
+    const ran = await duskveer(['jets', LIDAR]);
+    expect(ran).toMatchObject({ code: 0, err: '' });
+    const lines = ran.lines() as unknown as JetLine[];
+    const at = (time: string): JetLine => lines.find((line) => line.time === time)!;
+    expect(Object.keys(lines[0]!)).toEqual(['station', 'time', 'criteria', 'status', 'why', 'jets']);
+
+    const strong = at('2024-05-22T08:40:00Z');
+    expect(strong).toMatchObject({ station: 'larkmoor-lidar', criteria: 'duskveer', status: 'jet', why: '' });
+    expect(Object.keys(strong.jets[0]!).join(' ')).toBe(
+      'category nose_height_agl_m nose_speed_mps nose_direction_deg falloff_mps falloff_is_bound confidence',
+    );
+    // As the demo's README tells it: nose between 300 and 500 m.
+    expect(strong.jets[0]!.nose_height_agl_m).toBeGreaterThan(300);
+    expect(strong.jets[0]!.nose_height_agl_m).toBeLessThan(500);
+    expect(strong.jets[0]!.category).toBe(3);
+
+    const calm = at('2024-05-23T08:40:00Z');
+    expect(calm).toMatchObject({ status: 'no-jet', jets: [] });
+    expect(calm.why).not.toBe('');
+  });
+
+  it('asks the question that --criteria names', async () => {
+    const ran = await duskveer(['jets', '--criteria', 'baas-2009', LIDAR]);
+    const [first] = ran.lines();
+    expect(first).toMatchObject({ criteria: 'baas-2009' });
+    expect((ran.lines() as unknown as JetLine[]).flatMap((line) => line.jets)[0]).toMatchObject({ category: null });
+  });
+
+  it('lists the criteria when the name is none of them', async () => {
+    const { code, out, err } = await duskveer(['jets', '--criteria', 'loud', LIDAR]);
+    expect(code).toBe(2);
+    expect(out).toBe('');
+    expect(err).toContain('There are no criteria named loud. Known: whiteman-1997, ');
+  });
+});
