@@ -34,7 +34,8 @@ export function duskveer(args: readonly string[], input?: Uint8Array | string): 
           .split('\n')
           .filter((line) => line !== '')
           .map((line) => JSON.parse(line) as Record<string, unknown>);
-      resolve({ code, out, err, lines });
+      // The first run after a change of the sources builds, and says so.
+      resolve({ code, out, err: err.replace(/^Building .*\n/, ''), lines });
     });
   });
 }
