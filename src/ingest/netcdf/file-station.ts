@@ -1,5 +1,6 @@
 // Where a file's profiles were measured, and with what: from its variables first, from its global attributes otherwise.
 
+import type { Quantity } from '../../air/index.ts';
 import type { Instrument, Station } from '../../profile/index.ts';
 import type { Site } from '../../site/index.ts';
 import { stationBySite, stationOfFileName } from '../site-station.ts';
@@ -25,9 +26,9 @@ const AS_IT_IS = { scale: 1, offset: 0 };
 
 /** @param heightName name of the variable that holds the levels' heights: it is not the station's */
 export function stationsOf(dataset: Dataset, piece: Piece, heightName: string | undefined, site: Site): FileStations {
-  const latitude = column(dataset, piece, LATITUDES, 'latitude', undefined);
-  const longitude = column(dataset, piece, LONGITUDES, 'longitude', undefined);
-  const elevation = column(dataset, piece, ELEVATIONS, 'surface_altitude', heightName);
+  const latitude = column(dataset, piece, LATITUDES, 'latitude', 'angle');
+  const longitude = column(dataset, piece, LONGITUDES, 'longitude', 'angle');
+  const elevation = column(dataset, piece, ELEVATIONS, 'surface_altitude', 'length', heightName);
   const { id, name } = namesOf(dataset);
   const identifiers = identifiersOf(dataset, piece);
   const stations: Station[] = [];
@@ -90,13 +91,15 @@ function column(
   piece: Piece,
   names: string,
   standardName: string,
-  except: string | undefined,
+  quantity: Quantity,
+  except?: string,
 ): Float64Array {
   for (const variable of placing(dataset, names, standardName)) {
     if (variable.name === except) continue;
     const unit = unitIn(textOf(variable.attributes, 'units'));
-    const scale = unit === null || unit.quantity === 'angle' ? AS_IT_IS : unit;
-    const values = piece.perProfileOrStation(variable, scale, dataset);
+    // An `elevation` in degrees is that of a beam.
+    if (unit !== null && unit.quantity !== quantity) continue;
+    const values = piece.perProfileOrStation(variable, unit ?? AS_IT_IS, dataset);
     if (values?.some((value) => !Number.isNaN(value)) === true) return values;
   }
   const global = names

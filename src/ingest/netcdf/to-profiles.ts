@@ -11,6 +11,8 @@ import {
 import { blockOfColumns, INSTRUMENTS, type ProfileBlock } from '../../profile/index.ts';
 import type { ReadOptions } from '../format.ts';
 import { ASSUMED_PRESSURE_NOTE, levelHumidity } from '../level-humidity.ts';
+import { findScan } from '../scan/find-scan.ts';
+import { profilesFromScan } from '../scan/scan-profiles.ts';
 import { assumedUnit } from './assumed-unit.ts';
 import { textOf, type Dataset } from './dataset.ts';
 import { instrumentOf, stationsOf } from './file-station.ts';
@@ -36,7 +38,13 @@ export function* profilesFrom(dataset: Dataset, options: ReadOptions): Generator
   try {
     plan = planOf(dataset, options, problems);
   } catch (error) {
-    if (dataset.groups.length === 0 || !(error instanceof DuskveerError)) throw error;
+    if (!(error instanceof DuskveerError)) throw error;
+    const scan = findScan(dataset);
+    if (scan !== null) {
+      yield* profilesFromScan(dataset, scan, options);
+      return;
+    }
+    if (dataset.groups.length === 0) throw error;
     for (const group of dataset.groups) yield* profilesFrom(group, options);
     return;
   }
