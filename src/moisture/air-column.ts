@@ -10,7 +10,7 @@ import {
   standardAtmosphere,
   virtualTemperature,
 } from '../air/index.ts';
-import { REJECTING, type Profile } from '../profile/index.ts';
+import { REJECTING, REJECTING_AIR, type Profile } from '../profile/index.ts';
 
 /** Columns of equal length, ascending, without rejected levels; NaN where missing. */
 export interface AirColumn {
@@ -43,8 +43,10 @@ export function airColumn(profile: Profile, surfacePressure = NaN): AirColumn {
   const speed = take(profile.speed);
   const direction = take(profile.direction);
   const heightAgl = take(profile.heightAgl);
-  const temperature = take(profile.temperature);
-  const specificHumidity = take(profile.specificHumidity);
+  const takeAir = (column: Float32Array | null): Float64Array =>
+    take(column).map((value, position) => ((profile.mark[levels[position]!]! & REJECTING_AIR) === 0 ? value : NaN));
+  const temperature = takeAir(profile.temperature);
+  const specificHumidity = takeAir(profile.specificHumidity);
   const { pressure, pressureFrom } = fillPressure(
     { heightAgl, pressure: take(profile.pressure), temperature, specificHumidity },
     { surfacePressure, elevation: profile.station.elevation },

@@ -1,7 +1,7 @@
 // Density of the air at hub height, out of whatever the profile carries, and from what it was taken.
 
 import { airDensity, GAS_CONSTANT_DRY, GRAVITY, standardAtmosphere, virtualTemperature } from '../air/index.ts';
-import { REJECTING, type Profile } from '../profile/index.ts';
+import { REJECTING_AIR, type Profile } from '../profile/index.ts';
 
 export interface HubDensity {
   /** kg/m3; NaN when there is no temperature near the hub */
@@ -56,8 +56,7 @@ function nearest(profile: Profile, column: Float32Array | null, heightAgl: numbe
   let below = -1;
   let above = -1;
   for (let k = 0; k < profile.levelCount; k++) {
-    // A level whose wind is rejected for its signal may still carry a good temperature, but rejected is rejected.
-    if ((profile.mark[k]! & REJECTING) !== 0 || !(column[k]! > 0 || column[k] === 0)) continue;
+    if ((profile.mark[k]! & REJECTING_AIR) !== 0 || !(column[k]! > 0 || column[k] === 0)) continue;
     if (profile.heightAgl[k]! <= heightAgl) below = k;
     else if (above < 0 && profile.heightAgl[k]! > heightAgl) above = k;
   }
