@@ -10,6 +10,8 @@ export interface HubDensity {
   readonly densityFrom: string;
 }
 
+/** kg/m3 that air at a rotor can have: from 4 km height in heat to sea level in the hardest cold, with room. */
+const POSSIBLE = { least: 0.6, most: 1.7 };
 /** A level without temperature at the hub may be replaced by one so near, m: 1 K there is 0.3 % of density. */
 const NEAR = 150;
 
@@ -29,7 +31,7 @@ export function densityAt(profile: Profile, heightAgl: number): HubDensity {
   if (level !== undefined) {
     const scale = (GAS_CONSTANT_DRY * virtualTemperature(warm.value, humidity)) / GRAVITY;
     const pressure = level.nearValue * Math.exp((level.nearHeight - heightAgl) / scale);
-    return { airDensity: airDensity(warm.value, pressure, humidity), densityFrom: `pressure and temperature${dry}` };
+    return plausible(airDensity(warm.value, pressure, humidity), `pressure and temperature${dry}`);
   }
   const { pressure } = standardAtmosphere(profile.station.elevation + heightAgl);
   if (Number.isNaN(pressure)) {
@@ -38,10 +40,15 @@ export function densityAt(profile: Profile, heightAgl: number): HubDensity {
       densityFrom: 'no pressure, and the station has no elevation to take the standard one from',
     };
   }
-  return {
-    airDensity: airDensity(warm.value, pressure, humidity),
-    densityFrom: `temperature and the standard atmosphere's pressure${dry}`,
-  };
+  return plausible(
+    airDensity(warm.value, pressure, humidity),
+    `temperature and the standard atmosphere's pressure${dry}`,
+  );
+}
+
+function plausible(density: number, densityFrom: string): HubDensity {
+  if (density >= POSSIBLE.least && density <= POSSIBLE.most) return { airDensity: density, densityFrom };
+  return { airDensity: NaN, densityFrom: `pressure and temperature give ${density.toFixed(2)} kg/m3, which cannot be` };
 }
 
 interface Near {

@@ -1,5 +1,4 @@
 export { densityAt, type HubDensity } from './density.ts';
-export { bottomTip, discArea, segmentArea, topTip, type Disc } from './disc.ts';
 export {
   measureDisagreement,
   pairInTime,
@@ -7,9 +6,34 @@ export {
   type HeightDifference,
   type ProfilePair,
 } from './disagreement.ts';
+export { bottomTip, discArea, segmentArea, topTip, type Disc } from './disc.ts';
 export type { DiscUncertainty } from './disc-uncertainty.ts';
 export { bestSpeed, noseInDisc, windOnDisc, type DiscWind, type DiscWindOptions, type WindAt } from './disc-wind.ts';
+export { sampleDurationsS, timeInBands, type BandTimes } from './durations.ts';
+export {
+  farmOutput,
+  fitFarmFactor,
+  keepsTurning,
+  ratedPower,
+  typeOutput,
+  type FactorFit,
+  type FarmOutput,
+  type TurbineState,
+  type TypeOutput,
+} from './fleet-power.ts';
 export { FleetScan, type FleetWind } from './fleet-scan.ts';
 export { cubeMean, discQuadrature, type DiscQuadrature } from './integral.ts';
 export { disagreementInWords, joinProfiles, type Join, type JoinedProfile, type KnownDisagreement } from './join.ts';
+export { LOADS_CAUTION, timeInState, watchLoads, type LoadState, type TimeInState } from './loads.ts';
 export { normalisePower, normaliseSpeed, powerFromCurve } from './power.ts';
+export {
+  causesOfRamp,
+  rampInWords,
+  type NoseTrack,
+  type RampCause,
+  type RampCauseName,
+  type RampEvidence,
+} from './ramp-causes.ts';
+export { findRamps, type OutputSeries, type Ramp } from './ramps.ts';
+export { swingingDoor } from './swinging-door.ts';
+export { windAtHeight } from './wind-at-height.ts';
