@@ -1,3 +1,4 @@
+export { readSite } from './read-site.ts';
 export {
   PLAIN_SITE,
   siteStation,
