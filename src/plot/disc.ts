@@ -18,8 +18,8 @@ export function drawDiscBands(pen: Pen, frame: Frame, discs: readonly Disc[], { 
       pen.globalAlpha = 0.07;
       pen.fillStyle = theme.ink;
       pen.fillRect(frame.left, top, frame.width, bottom - top);
-      pen.globalAlpha = 0.6;
-      pen.strokeStyle = theme.soft;
+      pen.globalAlpha = 0.5;
+      pen.strokeStyle = theme.ink;
       pen.lineWidth = ratio;
       pen.lineCap = 'butt';
       pen.setLineDash([ratio, 4 * ratio]);

@@ -18,14 +18,20 @@ const NEAREST_GAPS = 5;
 
 /**
  * Rows that all profiles share: one per distinct gate where these are few, else `maxRows` of equal height.
+ * @param runs as by `gateRuns`, one per block
  * @param ceiling m above ground; gates above it are left out
  */
-export function heightRows(blocks: readonly ProfileBlock[], ceiling: number, maxRows: number): HeightRows {
+export function heightRows(
+  blocks: readonly ProfileBlock[],
+  runs: readonly Uint32Array[],
+  ceiling: number,
+  maxRows: number,
+): HeightRows {
   const gates = new Set<number>();
   let highest = 0;
-  for (const block of blocks) {
+  for (const [b, block] of blocks.entries()) {
     for (let index = 0; index < block.profileCount; index++) {
-      if (index > 0 && sameGates(block, index - 1, index)) continue;
+      if (runs[b]![index] !== index) continue;
       for (let k = block.offsets[index]!; k < block.offsets[index + 1]!; k++) {
         const height = block.heightAgl[k]!;
         if (!(height <= ceiling) || height < 0) continue;
@@ -38,8 +44,17 @@ export function heightRows(blocks: readonly ProfileBlock[], ceiling: number, max
   return gates.size <= maxRows ? rowsAt(gates) : equalRows(highest, maxRows);
 }
 
+/** For each profile of a block the first of the run of profiles before it that have the same gates; itself if none. */
+export function gateRuns(block: ProfileBlock): Uint32Array {
+  const runs = new Uint32Array(block.profileCount);
+  for (let index = 1; index < block.profileCount; index++) {
+    runs[index] = sameGates(block, index - 1, index) ? runs[index - 1]! : index;
+  }
+  return runs;
+}
+
 /** Whether two profiles of a block have levels at the same heights, doubled ones at the same places. */
-export function sameGates({ offsets, heightAgl, mark }: ProfileBlock, first: number, second: number): boolean {
+function sameGates({ offsets, heightAgl, mark }: ProfileBlock, first: number, second: number): boolean {
   const start = offsets[first]!;
   const other = offsets[second]!;
   const count = offsets[first + 1]! - start;

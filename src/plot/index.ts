@@ -32,9 +32,9 @@ export {
   emptyData,
   profileOptions,
   sectionOptions,
+  showCursor,
   type ProfileAxesOptions,
   type SectionAxesOptions,
-  type SectionExtent,
 } from './section-axes.ts';
 export { drawSectionBarbs, pickBarbs, type BarbTiles } from './section-barbs.ts';
 export { buildSectionGrid, type SectionGrid, type SectionGridOptions } from './section-grid.ts';
@@ -45,3 +45,14 @@ export { drawThread, type Thread, type ThreadStyle } from './thread.ts';
 export { timeText, timeTicks, valueTicks, type Tick } from './ticks.ts';
 export { chartData, frameOf, thinned, timeAxis, valueAxis } from './uplot-adapter.ts';
 export { WindLookup, type MeasuredWind } from './wind-lookup.ts';
+export {
+  boundExtent,
+  panExtent,
+  zoomExtent,
+  type ExtentLimits,
+  type SectionExtent,
+  type SectionPoint,
+  type ZoomWay,
+} from './section-extent.ts';
+export { sectionCells, sectionCsv, type SectionCell } from './section-rows.ts';
+export { drawSectionSheet, sectionPng, sheetFrame, type SectionSheet, type SheetSize } from './section-sheet.ts';

@@ -57,8 +57,14 @@ export class Pyramid {
 
   #nextFloor(below: Floor, runs: number): Floor {
     const { rowCount } = this;
-    const values = new Float32Array(runs * rowCount).fill(NaN);
-    const strength = below.strength === null ? null : new Float32Array(runs * rowCount).fill(NaN);
+    const values = new Float32Array(runs * rowCount);
+    const strength = below.strength === null ? null : new Float32Array(runs * rowCount);
+    if (this.rule === 'greatest') {
+      greatestOfPairs(values, below.values, rowCount);
+      return { values, strength };
+    }
+    values.fill(NaN);
+    strength?.fill(NaN);
     for (let run = 0; run < runs; run++) {
       const out = {
         values: values.subarray(run * rowCount, (run + 1) * rowCount),
@@ -83,6 +89,17 @@ function takeGreatest(out: Float32Array, values: Float32Array, base: number): vo
   for (let row = 0; row < out.length; row++) {
     const value = values[base + row]!;
     if (!(value <= out[row]!) && value === value) out[row] = value;
+  }
+}
+
+function greatestOfPairs(out: Float32Array, below: Float32Array, rowCount: number): void {
+  let at = 0;
+  for (let first = 0; at < out.length; first += 2 * rowCount) {
+    for (let row = first; row < first + rowCount; row++, at++) {
+      const one = below[row]!;
+      const other = below[row + rowCount]!;
+      out[at] = one > other ? one : Number.isNaN(other) ? one : other;
+    }
   }
 }
 

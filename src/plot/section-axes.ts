@@ -4,16 +4,9 @@
 import type uPlot from 'uplot';
 import { toHeightUnit, toSpeedUnit, type HeightUnit, type SpeedUnit } from '../air/index.ts';
 import type { Frame, Look } from './pen.ts';
-import { ROOM_BELOW } from './section-scene.ts';
+import type { SectionExtent } from './section-extent.ts';
+import { discsWidth, ROOM_BELOW } from './section-scene.ts';
 import { frameOf, timeAxis, valueAxis } from './uplot-adapter.ts';
-
-/** Time in UTC ms and height in m above ground that a section shows. */
-export interface SectionExtent {
-  readonly startMs: number;
-  readonly endMs: number;
-  readonly bottom: number;
-  readonly top: number;
-}
 
 interface PanelOptions {
   /** CSS pixels of the whole panel, axes included. */
@@ -51,12 +44,11 @@ const ROOM_ABOVE = 8;
 const ROOM_RIGHT = 22;
 const NUMBERS_WIDTH = 46;
 const LABEL_WIDTH = 20;
-const DISC_WIDTH = 13;
 
 /** Options for a section; its scales are `x` and `height`. Give it `emptyData`. */
 export function sectionOptions(options: SectionAxesOptions): uPlot.Options {
   const { extent, look, timeZone, heightUnit, discCount, onZoom } = options;
-  const gap = 8 + (discCount > 0 ? 6 + DISC_WIDTH * discCount : 0);
+  const gap = 8 + discsWidth(discCount);
   return {
     ...panelOptions(options),
     scales: {
@@ -129,6 +121,16 @@ export function emptyData(low: number, high: number): uPlot.AlignedData {
     [low, high],
     [null, null],
   ];
+}
+
+/** Moves a panel's cursor to a height, and to a place across if one is given; null takes it away. Nothing is redrawn. */
+export function showCursor(chart: uPlot, at: { readonly x?: number; readonly height: number } | null): void {
+  if (at === null) {
+    chart.setCursor({ left: -10, top: -10 }, false);
+    return;
+  }
+  const left = at.x === undefined ? 0 : chart.valToPos(at.x, 'x');
+  chart.setCursor({ left, top: chart.valToPos(at.height, 'height') }, false);
 }
 
 function panelOptions({

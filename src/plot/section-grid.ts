@@ -3,7 +3,7 @@
 import { DOUBTING, MARK, REJECTING, type ProfileBlock } from '../profile/index.ts';
 import { fieldValuesInto } from './field-values.ts';
 import { FIELDS, type FieldName, type PixelRule } from './fields.ts';
-import { heightRows, LevelRows, sameGates, type HeightRows } from './height-cells.ts';
+import { gateRuns, heightRows, LevelRows, type HeightRows } from './height-cells.ts';
 import { isSounding, timeCells } from './time-cells.ts';
 
 /** Plain data: it can be posted to a worker. */
@@ -40,7 +40,8 @@ export interface SectionGridOptions {
 export function buildSectionGrid(blocks: readonly ProfileBlock[], options: SectionGridOptions): SectionGrid {
   const { field, ceiling = 3000, maxRows = 256 } = options;
   const cells = timeCells(blocks);
-  const rows = heightRows(blocks, ceiling, maxRows);
+  const runs = blocks.map(gateRuns);
+  const rows = heightRows(blocks, runs, ceiling, maxRows);
   const columnCount = cells.startMs.length;
   const rowCount = rows.centres.length;
   const rule = FIELDS[field].pixelRule;
@@ -66,14 +67,15 @@ export function buildSectionGrid(blocks: readonly ProfileBlock[], options: Secti
   let levelValues = new Float32Array(256);
   let filledColumn = -1;
   for (let i = 0; i < cells.column.length; i++) {
-    const block = blocks[cells.blockIndex[i]!]!;
+    const at = cells.blockIndex[i]!;
+    const block = blocks[at]!;
     const index = cells.profileIndex[i]!;
     const column = cells.column[i]!;
     const start = block.offsets[index]!;
     const count = block.offsets[index + 1]! - start;
     if (levelValues.length < count) levelValues = new Float32Array(2 * count);
     fieldValuesInto(block, index, field, levelValues);
-    const pairs = places.of(block, index, levelValues);
+    const pairs = places.of(block, index, runs[at]![index]!, levelValues);
     if (column !== filledColumn && pairs.distinct) fillColumn(grid, column, pairs, levelValues, block.speed, start);
     else mergeColumn(grid, rule, column, pairs, levelValues, block.speed, start);
     if (hasDoubt(block.mark, start, count)) markDoubt(grid, column, pairs, levelValues, block.mark, start);
@@ -163,19 +165,20 @@ class ProfilePlaces {
   #heights = new Float64Array(256);
   #levels = new Uint32Array(256);
   #block: ProfileBlock | null = null;
-  #index = -1;
+  #run = -1;
 
   constructor(rows: HeightRows) {
     this.#rows = rows;
   }
 
-  of(block: ProfileBlock, index: number, values: Float32Array): LevelRows {
+  /** @param run the first profile of those with the same gates */
+  of(block: ProfileBlock, index: number, run: number, values: Float32Array): LevelRows {
     const passEmpty = isSounding(block, index);
-    if (!passEmpty && this.#block === block && sameGates(block, this.#index, index)) return this.#pairs;
+    if (!passEmpty && this.#block === block && this.#run === run) return this.#pairs;
     const count = this.#gather(block, index, passEmpty ? values : null);
     this.#pairs.assign(this.#heights, this.#levels, count, this.#rows);
     this.#block = passEmpty ? null : block;
-    this.#index = index;
+    this.#run = run;
     return this.#pairs;
   }
 

@@ -45,6 +45,11 @@ export const STRIP_BELOW = 28;
 export const STRIP_HEIGHT = 10;
 export const ROOM_BELOW = 62;
 
+/** CSS pixels that so many discs take between the height numbers and the frame. */
+export function discsWidth(count: number): number {
+  return count === 0 ? 0 : 6 + 13 * count;
+}
+
 /** What lies under the grid lines: the picture and the discs' bands. */
 export function drawSectionUnder(pen: Pen, frame: Frame, scene: SectionScene, look: Look): void {
   for (const picture of scene.pictures) picture.draw(pen, frame);
