@@ -5,8 +5,9 @@
 // A nose speaks for the way by the log odds of its confidence, a step against it by how far height, speed and direction
 // move for the time between; hence a weak nose between sure ones is passed through, and a lone one starts nothing.
 
-import { signedAngle } from '../air/index.ts';
+import { normalDirection, signedAngle } from '../air/index.ts';
 import type { JetFinding, SmoothNose } from './find-jets.ts';
+import { threadThrough } from './thread.ts';
 import { phaseOf, rateOf, type Phase, type Rate } from './rates.ts';
 
 /** What was found in one profile. */
@@ -16,6 +17,7 @@ export interface TimedFinding {
   readonly finding: JetFinding;
 }
 
+/** A point of the thread: the noses of single profiles smoothed along the track (`thread.ts`). */
 export interface TrackPoint {
   readonly timeMs: number;
   /** m above ground */
@@ -43,7 +45,7 @@ export interface JetTrack {
   readonly phase: Phase;
   readonly peak: TrackPoint;
   readonly points: readonly TrackPoint[];
-  /** Changes over the last hour and a half of the track. */
+  /** Changes over the last hour and a half of the track, from the noses as found: a smoothed thread would look too sure. */
   readonly rates: { readonly height: Rate; readonly speed: Rate; readonly direction: Rate };
   /** Index among the tracks returned of the one this flowed into or split from; null when neither. */
   readonly mergedInto: number | null;
@@ -70,6 +72,15 @@ const MOST_EVIDENCE = 3;
 /** Cost of an hour, and of each profile of 10 minutes, passed over without a nose. */
 const GAP_PER_HOUR = 0.5;
 const PASSED_OVER = 1;
+
+/** Gates of a step in height (m), speed (m/s) and direction (degrees): at once, and what an hour adds (as its root). */
+const GATES = {
+  height: { atOnce: 40, inAnHour: 150 },
+  speed: { atOnce: 0.7, inAnHour: 2 },
+  direction: { atOnce: 8, inAnHour: 25 },
+};
+/** A step of more than so many standard deviations in any of them joins nothing. */
+const FURTHEST = 4;
 
 interface Node extends SmoothNose {
   readonly timeMs: number;
@@ -186,17 +197,20 @@ function bestPath(nodes: Node[], passing: readonly number[], options: TrackOptio
 /** How unlikely a step from one nose to the next is; infinite beyond the gates, which widen with the time between. */
 function stepCost(before: Node, after: Node): number {
   const hours = (after.timeMs - before.timeMs) / HOUR_MS;
-  const height = Math.abs(after.height - before.height);
-  const speed = Math.abs(after.speed - before.speed);
-  const turn = Math.abs(signedAngle(after.direction - before.direction));
-  const heightGate = Math.hypot(40, 150 * Math.sqrt(hours), before.heightSpread, after.heightSpread);
-  const speedGate = Math.hypot(0.7, 2 * Math.sqrt(hours), before.speedSpread, after.speedSpread);
-  const turnGate = Math.hypot(8, 25 * Math.sqrt(hours));
-  const far = Math.max(height / heightGate, speed / speedGate, Number.isNaN(turn) ? 0 : turn / turnGate);
-  if (far > 4) return Infinity;
-  const square =
-    (height / heightGate) ** 2 + (speed / speedGate) ** 2 + (Number.isNaN(turn) ? 0 : (turn / turnGate) ** 2);
-  return square / 2 + GAP_PER_HOUR * hours;
+  const height2 =
+    square(after.height - before.height) / gate(GATES.height, hours, before.heightSpread, after.heightSpread);
+  const speed2 = square(after.speed - before.speed) / gate(GATES.speed, hours, before.speedSpread, after.speedSpread);
+  const turn = signedAngle(after.direction - before.direction);
+  const turn2 = Number.isNaN(turn) ? 0 : square(turn) / gate(GATES.direction, hours, 0, 0);
+  if (Math.max(height2, speed2, turn2) > square(FURTHEST)) return Infinity;
+  return (height2 + speed2 + turn2) / 2 + GAP_PER_HOUR * hours;
+}
+
+const square = (value: number): number => value * value;
+
+/** Square of the distance that is one standard deviation for a step. */
+function gate(widths: { atOnce: number; inAnHour: number }, hours: number, one: number, other: number): number {
+  return square(widths.atOnce) + square(widths.inAnHour) * hours + square(one) + square(other);
 }
 
 /** Cuts what comes before the first nose sure enough to begin with, and what trails off below giving up. */
@@ -220,25 +234,16 @@ function describe(
   usualStepMs: number,
   options: TrackOptions,
 ): JetTrack {
-  const points = path.map((node, k): TrackPoint => ({
-    timeMs: node.timeMs,
-    noseHeight: node.height,
-    noseSpeed: node.speed,
-    noseDirection: node.direction,
-    confidence: node.confidence,
-    heightSpread: node.heightSpread,
-    speedSpread: node.speedSpread,
-    afterGap: k > 0 && node.timeMs - path[k - 1]!.timeMs > 2.5 * usualStepMs,
-  }));
+  const points = pointsOf(path, usualStepMs);
   const last = path.at(-1)!;
   const first = path[0]!;
   const assessableAfter = findings.slice(last.profile + 1).filter(({ finding }) => finding.confidence >= 0).length;
   const ended = assessableAfter >= 2 || findings.at(-1)!.timeMs - last.timeMs > options.longestGapMs;
   const endedMs = ended ? last.timeMs : null;
   const rates = {
-    height: rateOf(points, (point) => point.noseHeight),
-    speed: rateOf(points, (point) => point.noseSpeed),
-    direction: rateOf(points, (point, reference) => signedAngle(point.noseDirection - reference.noseDirection)),
+    height: rateOf(path, (node) => node.height),
+    speed: rateOf(path, (node) => node.speed),
+    direction: rateOf(path, (node, reference) => signedAngle(node.direction - reference.direction)),
   };
   return {
     stationId: findings[0]!.stationId,
@@ -252,6 +257,58 @@ function describe(
     mergedInto: ended ? neighbourAt(last, path, paths, options) : null,
     splitFrom: neighbourAt(first, path, paths, options),
   };
+}
+
+/**
+ * What the true height (m), speed (m/s) and direction (degrees) of a nose wander in an hour, and how far the direction of
+ * a single profile may be off. Found on simulated nights: near these the threads lie closest to the true noses, and the
+ * spread of the height holds them about 70 % of the time.
+ */
+const WANDER = { height: 80, speed: 1, direction: 12 };
+const DIRECTION_SPREAD = 5;
+/** The least that a single profile's height (m) and speed (m/s) may be off, so that no point binds the thread wholly. */
+const LEAST_SPREAD = { height: 5, speed: 0.05 };
+
+/** The thread through the noses of a path. */
+function pointsOf(path: readonly Node[], usualStepMs: number): TrackPoint[] {
+  const timeMs = path.map((node) => node.timeMs);
+  const height = threadThrough(
+    timeMs,
+    path.map((node) => node.height),
+    path.map((node) => node.heightSpread + LEAST_SPREAD.height),
+    WANDER.height,
+  );
+  const speed = threadThrough(
+    timeMs,
+    path.map((node) => node.speed),
+    path.map((node) => node.speedSpread + LEAST_SPREAD.speed),
+    WANDER.speed,
+  );
+  const direction = threadThrough(
+    timeMs,
+    unwrapped(path),
+    path.map((node) => (Number.isNaN(node.direction) ? UNKNOWN : DIRECTION_SPREAD)),
+    WANDER.direction,
+  );
+  return path.map((node, k) => ({
+    timeMs: node.timeMs,
+    noseHeight: height.value[k]!,
+    noseSpeed: speed.value[k]!,
+    noseDirection: normalDirection(direction.value[k]!),
+    confidence: node.confidence,
+    heightSpread: height.spread[k]!,
+    speedSpread: speed.spread[k]!,
+    afterGap: k > 0 && node.timeMs - path[k - 1]!.timeMs > 2.5 * usualStepMs,
+  }));
+}
+
+/** Spread, degrees, of a direction that is not known: it bears on nothing. */
+const UNKNOWN = 1e6;
+
+/** Directions without the leap at north; one not known is taken as the one before, NaN where none is known. */
+function unwrapped(path: readonly Node[]): number[] {
+  let last = path.find(({ direction }) => !Number.isNaN(direction))?.direction ?? NaN;
+  return path.map(({ direction }) => (Number.isNaN(direction) ? last : (last += signedAngle(direction - last))));
 }
 
 /** Another track that runs on both sides of a node's time and lies within a step of it. */
