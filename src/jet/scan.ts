@@ -75,9 +75,6 @@ function scanMonotone(block: ProfileBlock, index: number, criteria: Criteria, ta
   const { heightAgl, speed, mark } = block;
   const start = block.offsets[index]!;
   const beyond = block.offsets[index + 1]!;
-  let unusable = 0;
-  for (let k = start; k < beyond; k++) unusable |= (mark[k]! & REJECTING) | Number(!(speed[k]! >= 0));
-  if (unusable !== 0) return false;
   const { ceiling, categories } = criteria;
   let end = beyond;
   while (end > start && !(heightAgl[end - 1]! <= ceiling)) end--;
@@ -92,18 +89,26 @@ function scanMonotone(block: ProfileBlock, index: number, criteria: Criteria, ta
   best.nose = -1;
   let top = start;
   let below = speed[start]!;
+  let unusable = (mark[start]! & REJECTING) | Number(!(below >= 0));
   for (let k = start + 1; k < end; k++) {
     const here = speed[k]!;
+    unusable |= (mark[k]! & REJECTING) | Number(!(here >= 0));
     const rising = -Number(here > below);
     top = (top & ~rising) | (k & rising);
     below = here;
     const peak = speed[top]!;
     if (peak - here >= leastFalloff && peak >= leastSpeed && top > start) {
-      while (k + 1 < end && speed[k + 1]! <= below) below = speed[++k]!;
+      while (k + 1 < end && speed[k + 1]! <= below) {
+        below = speed[++k]!;
+        unusable |= mark[k]! & REJECTING;
+      }
+      unusable |= Number(below < 0);
       take(categories, top, peak, below);
     }
   }
+  if (unusable !== 0) return false;
   if (wantsPoint) {
+    if ((mark[end]! & REJECTING) !== 0 || !(speed[end]! >= 0)) return false;
     const share = (ceiling - heightAgl[end - 1]!) / (heightAgl[end]! - heightAgl[end - 1]!);
     const here = between(below, speed[end]!, share);
     const peak = speed[top]!;
