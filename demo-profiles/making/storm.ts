@@ -133,12 +133,12 @@ export function storm(): DemoNight {
     profilerNetcdf(
       profilerRecord(atmosphere(station), {
         seed,
-        gates: Array.from({ length: 50 }, (_, k) => 100 + 60 * k),
+        gates: Array.from({ length: 54 }, (_, k) => 100 + 60 * k),
         timesMs: everyMinutes(10, START, END),
         noise: 0.3,
         noisePerKm: 0.1,
         echoAtGround: 24,
-        echoLossPerKm: 7.5,
+        echoLossPerKm: 7,
         leastEcho: -1,
         outages: [],
         noisySpells: [],

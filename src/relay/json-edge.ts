@@ -20,4 +20,6 @@ export const DECIMALS = {
   water: 3,
   transport: 3,
   flux: 6,
+  energy: 2,
+  area: 1,
 } as const;

@@ -26,6 +26,14 @@ const COMMANDS: Readonly<Record<string, { summary: string; load: () => Promise<C
     summary: 'computes humidity flux, transport and precipitable water',
     load: async () => (await import('./moisture.ts')).command,
   },
+  triangle: {
+    summary: 'computes divergence, vorticity and moisture convergence between stations',
+    load: async () => (await import('./triangle.ts')).command,
+  },
+  storm: {
+    summary: 'computes parcels, shear, helicity and storm motion',
+    load: async () => (await import('./storm.ts')).command,
+  },
   serve: {
     summary: 'shows the page in a browser, with the demo loaded',
     load: async () =>
