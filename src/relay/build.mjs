@@ -11,7 +11,7 @@ export const root = fileURLToPath(new URL('../../', import.meta.url));
 
 /** What can be built: its configuration, the file that comes last into place, and what it does not depend on. */
 const PARTS = {
-  relay: { config: 'src/relay/vite.config.ts', last: 'main.js', apart: ['src/board', 'src/plot'], inputs: [] },
+  relay: { config: 'src/relay/vite.config.ts', last: 'main.js', apart: ['src/board', 'src/plot'], inputs: ['static'] },
   board: {
     config: 'vite.config.ts',
     last: 'index.html',

@@ -63,7 +63,8 @@ function fileSource(name: string, path: string, size: number | undefined): ByteS
   return { name, size, stream: () => createReadStream(path, { highWaterMark: 1 << 18 }) };
 }
 
-function pathProblem(path: string, error: NodeJS.ErrnoException): Problem {
+/** Why a path cannot be read, in words. */
+export function pathProblem(path: string, error: NodeJS.ErrnoException): Problem {
   const reasons: Record<string, [what: string, mend: string]> = {
     ENOENT: ['There is no such file or folder.', 'Check the spelling and where you stand.'],
     EACCES: ['This user may not read it.', 'Ask its owner for the right to read, or copy it where you may.'],

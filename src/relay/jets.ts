@@ -4,14 +4,15 @@ import { toJsonNumber } from '../air/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { CRITERIA, CRITERIA_NAMES, criteriaOf, findJets, type Criteria, type JetFinding } from '../jet/index.ts';
 import { screen } from '../quality/index.ts';
-import { PLAIN_SITE, siteStation, type Site } from '../site/index.ts';
+import { siteStation, type Site } from '../site/index.ts';
 import { forEachBlock } from './blocks.ts';
 import { parseOptions, UsageError, type Command } from './command.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { SITE_OPTION, siteOf } from './site-option.ts';
 
 export const command: Command = {
-  help: `duskveer jets PATH... [--criteria NAME]
+  help: `duskveer jets PATH... [--criteria NAME] [--site FILE]
 
 Reads profiles from files, from all files in folders, or from stdin (-), screens them and looks for jets.
 
@@ -22,11 +23,12 @@ Prints a JSON line a profile:
   jets            category (null where the criteria know none), nose_height_agl_m, nose_speed_mps, nose_direction_deg,
                   falloff_mps, falloff_is_bound (data end while the speed still falls: at least this much), confidence (0 to 1)
 
-  --criteria NAME    one of these; without it duskveer
-${CRITERIA_NAMES.map((name) => `                     ${name.padEnd(24)} ${CRITERIA[name].title}`).join('\n')}`,
+  --criteria NAME    one of these; without it the site's, else duskveer
+${CRITERIA_NAMES.map((name) => `                     ${name.padEnd(24)} ${CRITERIA[name].title}`).join('\n')}
+  --site FILE        stations with their uncertainty, the site's own criteria`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, { criteria: { type: 'string' } });
-    const site = PLAIN_SITE;
+    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, criteria: { type: 'string' } });
+    const site = await siteOf(values.site);
     const criteria = chosenCriteria(site, values.criteria);
     const out = new LineWriter(process.stdout);
     return forEachBlock(positionals, site, async (block) => {

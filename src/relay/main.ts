@@ -2,8 +2,9 @@
 
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { DuskveerError, placeInWords } from '../air/index.ts';
+import { DuskveerError } from '../air/index.ts';
 import { EXIT, UsageError, type Command } from './command.ts';
+import { problemInWords } from './reporter.ts';
 
 // Both src/relay and dist/relay lie two folders below the checkout.
 const root = fileURLToPath(new URL('../..', import.meta.url));
@@ -21,6 +22,10 @@ const COMMANDS: Readonly<Record<string, { summary: string; load: () => Promise<C
   rotor: {
     summary: 'computes speed, shear and veer over rotor discs',
     load: async () => (await import('./rotor.ts')).command,
+  },
+  ramps: {
+    summary: 'finds fast changes of output and their causes',
+    load: async () => (await import('./ramps.ts')).command,
   },
   moisture: {
     summary: 'computes humidity flux, transport and precipitable water',
@@ -83,9 +88,7 @@ function explained(name: string, error: unknown): number {
     return EXIT.wrongUsage;
   }
   if (!(error instanceof DuskveerError)) throw error;
-  const { where, what, mend } = error.problem;
-  const place = placeInWords(where);
-  process.stderr.write(`${place === '' ? '' : `${place}: `}${what} ${mend}\n`);
+  process.stderr.write(`${problemInWords(error.problem)}\n`);
   return EXIT.wrongUsage;
 }
 

@@ -4,15 +4,15 @@ import { toJsonNumber, toJsonNumbers } from '../air/index.ts';
 import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { screen } from '../quality/index.ts';
-import { PLAIN_SITE } from '../site/index.ts';
 import { forEachBlock } from './blocks.ts';
 import { numberOption, parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { SITE_OPTION, siteOf } from './site-option.ts';
 
 export const command: Command = {
-  help: `duskveer moisture PATH... [--bottom-pa P] [--top-pa P]
+  help: `duskveer moisture PATH... [--site FILE] [--bottom-pa P] [--top-pa P]
 
 Reads profiles from files, from all files in folders, or from stdin (-), screens them and computes what vapour they carry.
 
@@ -27,14 +27,16 @@ Prints a JSON line a profile:
   in_jet_kg_per_m_s                           the same within the jet's layer; null without a jet
   flux                                        rho q V at each level: height_agl_m, east_kg_per_m2_s, north_kg_per_m2_s
 
+  --site FILE      stations, criteria of the jet
   --bottom-pa P    limits of the layer, Pa; without them all that was measured
   --top-pa P`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
+      ...SITE_OPTION,
       'bottom-pa': { type: 'string' },
       'top-pa': { type: 'string' },
     });
-    const site = PLAIN_SITE;
+    const site = await siteOf(values.site);
     const bottomPressure = pressureOption('bottom-pa', values['bottom-pa']);
     const topPressure = pressureOption('top-pa', values['top-pa']);
     if (topPressure !== undefined && bottomPressure !== undefined && !(topPressure < bottomPressure)) {

@@ -2,14 +2,14 @@
 
 import { dewPointOf, toJsonNumber, toJsonNumbers } from '../air/index.ts';
 import { markNames, profilesOf, type Profile } from '../profile/index.ts';
-import { PLAIN_SITE } from '../site/index.ts';
 import { forEachBlock } from './blocks.ts';
 import { parseOptions, type Command } from './command.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { SITE_OPTION, siteOf } from './site-option.ts';
 
 export const command: Command = {
-  help: `duskveer read PATH...
+  help: `duskveer read PATH... [--site FILE]
 
 Reads profiles from files, from all files in folders, or from stdin (-), recognising each format by its content, plain or
 in gzip or zip. Values are as the source gives them, turned into SI units; nothing is screened or left out.
@@ -22,10 +22,11 @@ Prints a JSON line a profile:
                                           pressure_pa, speed_mps, direction_deg (from), vertical_speed_mps, temperature_k,
                                           dewpoint_k, mark (names of quality marks, separated by blanks, "" for none)
   notes                                   what the reader has to say
-`,
+
+  --site FILE    positions of stations, headings of your own tables, time zone of files without one`,
   async run(args) {
-    const { positionals } = parseOptions(args, {});
-    const site = PLAIN_SITE;
+    const { values, positionals } = parseOptions(args, SITE_OPTION);
+    const site = await siteOf(values.site);
     const out = new LineWriter(process.stdout);
     return forEachBlock(positionals, site, async (block) => {
       for (const profile of profilesOf(block)) await out.write(profileLine(profile));

@@ -23,8 +23,7 @@ export class Reporter {
     const told = this.#told.get(source) ?? 0;
     this.#told.set(source, told + 1);
     if (told >= TOLD_PER_SOURCE) return;
-    const place = placeInWords(problem.where);
-    this.say(`${place === '' ? '' : `${place}: `}${problem.what} ${problem.mend}`);
+    this.say(problemInWords(problem));
   }
 
   /** How far the reading is; shown only where a person watches. */
@@ -52,4 +51,10 @@ export class Reporter {
     if (this.#progressShown) process.stderr.write('\r\x1b[K');
     this.#progressShown = false;
   }
+}
+
+/** A problem as one line: where, what, how to mend it. */
+export function problemInWords({ where, what, mend }: Problem): string {
+  const place = placeInWords(where);
+  return `${place === '' ? '' : `${place}: `}${what} ${mend}`;
 }

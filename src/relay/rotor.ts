@@ -3,19 +3,20 @@
 import { toJsonNumber } from '../air/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { screen } from '../quality/index.ts';
-import { normaliseSpeed, powerFromCurve, windOnDisc, type Disc, type DiscWind } from '../rotor/index.ts';
-import { PLAIN_SITE, type PowerCurve, type Site } from '../site/index.ts';
+import { typeOutput, windOnDisc, type DiscWind } from '../rotor/index.ts';
+import { siteStation, type Site, type TurbineType } from '../site/index.ts';
 import { forEachBlock } from './blocks.ts';
 import { numberOption, parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { SITE_OPTION, siteOf } from './site-option.ts';
 
 export const command: Command = {
-  help: `duskveer rotor PATH... --hub M --diameter M
+  help: `duskveer rotor PATH... (--hub M --diameter M | --site FILE)
 
 Reads profiles from files, from all files in folders, or from stdin (-), screens them and computes what their wind does on a
-rotor disc. Nothing is extrapolated: a disc that the levels do not cover is not assessable.
+rotor disc. Nothing is extrapolated unless the site file asks for it: a disc that the levels do not cover is not assessable.
 
 Prints a JSON line a profile and turbine type:
   station, time, turbine
@@ -28,24 +29,27 @@ Prints a JSON line a profile and turbine type:
   nose_in_rotor                    whether the jet's nose lies between the tips; null without a jet
   air_density_kg_per_m3            at the hub, where temperature is known
   power_kw, power_equivalent_kw    of one machine, from the site's curve, by hub speed and by rotor-equivalent speed (with veer
-                                   where directions are known), each corrected to the curve's density where density is known
+                                   where directions are known), brought to the curve's density where density is known;
+                                   each profile stands for itself, so a stop in high wind is not remembered
 
   --hub M         hub height above ground
-  --diameter M    rotor diameter`,
+  --diameter M    rotor diameter
+  --site FILE     takes the turbine types of a site instead`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
+      ...SITE_OPTION,
       hub: { type: 'string' },
       diameter: { type: 'string' },
     });
-    const site = PLAIN_SITE;
-    const machines = chosenMachines(site, values.hub, values.diameter);
+    const site = await siteOf(values.site);
+    const turbines = chosenTurbines(site, values.hub, values.diameter);
     const criteria = chosenCriteria(site, undefined);
     const out = new LineWriter(process.stdout);
     return forEachBlock(positionals, site, async (block) => {
       for (const profile of profilesOf(screen(block, { site }).block)) {
         const nose = findingOf(profile, criteria, site).jets[0]?.noseHeight ?? NaN;
-        for (const machine of machines) {
-          await out.write(rotorLine(profile, machine, windOnDisc(profile, machine.disc, { nose })));
+        for (const turbine of turbines) {
+          await out.write(rotorLine(profile, turbine, discWindOf(profile, turbine, nose, site)));
         }
       }
       await out.flush();
@@ -53,32 +57,38 @@ Prints a JSON line a profile and turbine type:
   },
 };
 
-interface Machine {
-  readonly name: string;
-  readonly disc: Disc;
-  readonly powerCurve: PowerCurve | null;
-}
-
-function chosenMachines(site: Site, hub: string | undefined, diameter: string | undefined): Machine[] {
+function chosenTurbines(site: Site, hub: string | undefined, diameter: string | undefined): readonly TurbineType[] {
   if (hub === undefined && diameter === undefined) {
-    if (site.turbines.length > 0) return site.turbines.map((turbine) => ({ ...turbine, disc: turbine }));
-    throw new UsageError('It needs a disc: --hub and --diameter in metres.');
+    if (site.turbines.length > 0) return site.turbines;
+    throw new UsageError('It needs a disc: --hub and --diameter in metres, or --site with a file that lists turbines.');
   }
   if (hub === undefined || diameter === undefined) throw new UsageError('--hub and --diameter go together.');
   const hubHeight = numberOption('hub', hub, 1, 500);
   const rotorDiameter = numberOption('diameter', diameter, 1, 500);
   if (rotorDiameter / 2 > hubHeight) throw new UsageError('Half the diameter is more than the hub height.');
+  const notStated = { cutIn: NaN, rated: NaN, cutOut: NaN, restart: NaN, groundElevation: NaN };
   const name = `hub ${hubHeight} m, diameter ${rotorDiameter} m`;
-  return [{ name, disc: { hubHeight, rotorDiameter }, powerCurve: null }];
+  return [{ name, count: 1, hubHeight, rotorDiameter, powerCurve: null, ...notStated }];
+}
+
+/** The wind of a profile on a turbine type of the site. */
+export function discWindOf(profile: Profile, turbine: TurbineType, nose: number, site: Site): DiscWind {
+  const groundOffset = turbine.groundElevation - profile.station.elevation;
+  return windOnDisc(profile, turbine, {
+    nose,
+    groundOffset: Number.isNaN(groundOffset) ? 0 : groundOffset,
+    continuation: site.continuation,
+    speedUncertainty: siteStation(site, profile.station.id)?.speedUncertainty ?? NaN,
+  });
 }
 
 /** The numbers of a disc as the contract of `rotor` has them. */
-export function rotorLine(profile: Profile, machine: Machine, wind: DiscWind): Record<string, unknown> {
-  const equivalent = Number.isNaN(wind.equivalentSpeedVeer) ? wind.equivalentSpeed : wind.equivalentSpeedVeer;
+export function rotorLine(profile: Profile, turbine: TurbineType, wind: DiscWind): Record<string, unknown> {
+  const output = typeOutput(turbine, [wind]);
   return {
     station: profile.station.id,
     time: isoTime(profile.timeMs),
-    turbine: machine.name,
+    turbine: turbine.name,
     status: wind.status,
     why: wind.why,
     coverage: toJsonNumber(wind.coverage, DECIMALS.share),
@@ -90,14 +100,7 @@ export function rotorLine(profile: Profile, machine: Machine, wind: DiscWind): R
     veer_deg: toJsonNumber(wind.veer, DECIMALS.direction),
     nose_in_rotor: wind.noseInRotor,
     air_density_kg_per_m3: toJsonNumber(wind.airDensity, DECIMALS.density),
-    power_kw: toJsonNumber(powerOf(machine, wind.hubSpeed, wind), DECIMALS.power),
-    power_equivalent_kw: toJsonNumber(powerOf(machine, equivalent, wind), DECIMALS.power),
+    power_kw: toJsonNumber(output.hubKw[0]!, DECIMALS.power),
+    power_equivalent_kw: toJsonNumber(output.equivalentKw[0]!, DECIMALS.power),
   };
-}
-
-/** kW of one machine; NaN without a curve. */
-function powerOf({ powerCurve }: Machine, speed: number, { airDensity }: DiscWind): number {
-  if (powerCurve === null) return NaN;
-  const atCurve = Number.isNaN(airDensity) ? speed : normaliseSpeed(speed, airDensity, powerCurve.airDensity);
-  return powerFromCurve(powerCurve, atCurve);
 }

@@ -3,16 +3,16 @@
 import { toJsonNumber } from '../air/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { screen } from '../quality/index.ts';
-import { PLAIN_SITE } from '../site/index.ts';
 import { stormOf, type Figure, type StormNumbers, type VectorFigure } from '../storm/index.ts';
 import { forEachBlock } from './blocks.ts';
 import { parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { SITE_OPTION, siteOf } from './site-option.ts';
 
 export const command: Command = {
-  help: `duskveer storm PATH... [--motion U,V]
+  help: `duskveer storm PATH... [--site FILE] [--motion U,V]
 
 Reads profiles from files, from all files in folders, or from stdin (-), screens them and computes what storms would get.
 An aid to judgement: official warnings come from the national weather service.
@@ -28,15 +28,17 @@ Prints a JSON line a profile:
   motion               mean, right, left: east_mps, north_mps (Bunkers et al. 2000)
   clusters             cloud_layer, upwind, downwind: east_mps, north_mps (Corfidi 2003)
 
+  --site FILE     stations, criteria of the jet
   --motion U,V    storm motion in m/s eastward and northward, for the helicity in place of the mover`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, { motion: { type: 'string' } });
+    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, motion: { type: 'string' } });
+    const site = await siteOf(values.site);
     const motion = motionOption(values.motion);
-    const criteria = chosenCriteria(PLAIN_SITE, undefined);
+    const criteria = chosenCriteria(site, undefined);
     const out = new LineWriter(process.stdout);
-    return forEachBlock(positionals, PLAIN_SITE, async (block) => {
-      for (const profile of profilesOf(screen(block, { site: PLAIN_SITE }).block)) {
-        const [jet] = findingOf(profile, criteria, PLAIN_SITE).jets;
+    return forEachBlock(positionals, site, async (block) => {
+      for (const profile of profilesOf(screen(block, { site }).block)) {
+        const [jet] = findingOf(profile, criteria, site).jets;
         const given = { ...(jet === undefined ? {} : { jet }), ...(motion === undefined ? {} : { motion }) };
         await out.write(stormLine(profile, stormOf(profile, given)));
       }

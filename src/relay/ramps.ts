@@ -1,0 +1,151 @@
+// `ramps`: when the output of a farm changed fast, by how much and why; a JSON line a ramp.
+
+import { nightOf, toJsonNumber } from '../air/index.ts';
+import { trackJets, type JetFinding } from '../jet/index.ts';
+import { profilesOf, type Profile } from '../profile/index.ts';
+import { screen } from '../quality/index.ts';
+import {
+  causesOfRamp,
+  findRamps,
+  rampInWords,
+  ratedPower,
+  typeOutput,
+  type DiscWind,
+  type NoseTrack,
+  type Ramp,
+  type RampCause,
+} from '../rotor/index.ts';
+import type { RampDefinition, Site, TurbineType } from '../site/index.ts';
+import { forEachBlock } from './blocks.ts';
+import { parseOptions, UsageError, type Command } from './command.ts';
+import { chosenCriteria, findingOf } from './jets.ts';
+import { DECIMALS, isoTime } from './json-edge.ts';
+import { LineWriter } from './output.ts';
+import { discWindOf } from './rotor.ts';
+import { SITE_OPTION, siteOf } from './site-option.ts';
+
+/** What counts as a ramp where the site file does not say; common practice, without source. */
+const USUAL_RAMPS: readonly RampDefinition[] = [{ name: '30 % within an hour', share: 0.3, withinS: 3600 }];
+
+export const command: Command = {
+  help: `duskveer ramps PATH... --site FILE
+
+Reads profiles from files, from all files in folders, or from stdin (-), screens them, reckons what the site's turbines would
+yield by their rotor-equivalent wind, and finds fast changes. What profiles give is held in short until all are read.
+
+Prints a JSON line a ramp:
+  station, turbine         whose wind; the turbine type, all of its machines together
+  definition               the site file's definition that it meets; without any there, ${USUAL_RAMPS[0]!.name} of capacity
+  start, end               UTC
+  change_kw, change_share  from start to end, negative when output fell; share of the type's capacity
+  cause                    shutdown, restart, jet-onset, nose-descends, nose-rises, jet-decay, wind-shift, wind-rises, wind-falls
+                           or unknown: the firmest by the evidence
+  words                    the same in a sentence
+
+  --site FILE    turbines with power curves, definitions of ramps`,
+  async run(args) {
+    const { values, positionals } = parseOptions(args, SITE_OPTION);
+    if (values.site === undefined) throw new UsageError('It needs --site with a file that lists turbines.');
+    const site = await siteOf(values.site);
+    const turbines = site.turbines.filter((turbine) => turbine.powerCurve !== null && turbine.count > 0);
+    if (turbines.length === 0) throw new UsageError(`${values.site} lists no turbine with a power curve.`);
+    const criteria = chosenCriteria(site, undefined);
+    const stations = new Map<string, ProfileFacts[]>();
+    const code = await forEachBlock(positionals, site, (block) => {
+      for (const profile of profilesOf(screen(block, { site }).block)) {
+        const facts = factsOf(profile, findingOf(profile, criteria, site), turbines, site);
+        const known = stations.get(profile.station.id);
+        if (known === undefined) stations.set(profile.station.id, [facts]);
+        else known.push(facts);
+      }
+      return Promise.resolve();
+    });
+    const out = new LineWriter(process.stdout);
+    for (const [station, facts] of stations) {
+      facts.sort((a, b) => a.timeMs - b.timeMs);
+      for (const line of rampLines(station, facts, turbines, site)) await out.write(line);
+    }
+    await out.flush();
+    return code;
+  },
+};
+
+/** All that ramps need of a profile. */
+interface ProfileFacts {
+  readonly timeMs: number;
+  readonly finding: JetFinding;
+  /** One for each turbine type. */
+  readonly winds: readonly DiscWind[];
+  /** UTC, ms; NaN where the sun does not rise or the place is not known. */
+  readonly sunriseMs: number;
+}
+
+function factsOf(profile: Profile, finding: JetFinding, turbines: readonly TurbineType[], site: Site): ProfileFacts {
+  const { timeMs, station } = profile;
+  const nose = finding.jets[0]?.noseHeight ?? NaN;
+  return {
+    timeMs,
+    finding,
+    winds: turbines.map((turbine) => discWindOf(profile, turbine, nose, site)),
+    sunriseMs: nightOf(timeMs, station.latitude, station.longitude).sunriseMs,
+  };
+}
+
+function* rampLines(
+  station: string,
+  facts: readonly ProfileFacts[],
+  turbines: readonly TurbineType[],
+  site: Site,
+): Generator<Record<string, unknown>> {
+  const timeMs = facts.map((fact) => fact.timeMs);
+  const tracks = noseTracks(station, facts);
+  const sunrisesMs = [...new Set(facts.map((fact) => fact.sunriseMs))].filter((ms) => !Number.isNaN(ms));
+  const definitions = site.ramps.length > 0 ? site.ramps : USUAL_RAMPS;
+  for (const [index, turbine] of turbines.entries()) {
+    const winds = facts.map((fact) => fact.winds[index]!);
+    const output = typeOutput(turbine, winds);
+    const powerKw = output.equivalentKw.map((power) => power * turbine.count * site.farmFactor);
+    const evidence = {
+      disc: turbine,
+      timeMs,
+      hubSpeed: winds.map((wind) => wind.hubSpeed),
+      hubDirection: winds.map((wind) => wind.hubDirection),
+      state: output.state,
+      tracks,
+      sunrisesMs,
+    };
+    for (const ramp of findRamps({ timeMs, powerKw }, ratedPower(turbine) * turbine.count, definitions)) {
+      yield rampLine(station, turbine, ramp, causesOfRamp(ramp, evidence));
+    }
+  }
+}
+
+function noseTracks(stationId: string, facts: readonly ProfileFacts[]): NoseTrack[] {
+  return trackJets(facts.map(({ timeMs, finding }) => ({ stationId, timeMs, finding }))).map((track) => ({
+    beganMs: track.beganMs,
+    endedMs: track.endedMs ?? NaN,
+    timeMs: track.points.map((point) => point.timeMs),
+    noseHeight: track.points.map((point) => point.noseHeight),
+    noseSpeed: track.points.map((point) => point.noseSpeed),
+  }));
+}
+
+/** A ramp as the contract of `ramps` has it. */
+function rampLine(
+  station: string,
+  turbine: TurbineType,
+  ramp: Ramp,
+  causes: readonly RampCause[],
+): Record<string, unknown> {
+  return {
+    station,
+    turbine: turbine.name,
+    definition: ramp.definition,
+    start: isoTime(ramp.startMs),
+    end: isoTime(ramp.endMs),
+    change_kw: toJsonNumber(ramp.changeKw, DECIMALS.power),
+    change_share: toJsonNumber(ramp.changeShare, DECIMALS.share),
+    cause: causes[0]!.cause,
+    words: rampInWords(ramp, causes),
+  };
+}
