@@ -2,7 +2,8 @@
 // unmistakable beginning first, tables of text last. A new format is a file or folder and one line here.
 
 import { bufr } from './bufr/bufr.ts';
+import { coverageJson } from './coverage-json/coverage-json.ts';
 import type { FileFormat } from './format.ts';
 import { netcdf4, netcdfClassic } from './netcdf/formats.ts';
 
-export const FORMATS: readonly FileFormat[] = [netcdfClassic, netcdf4, bufr];
+export const FORMATS: readonly FileFormat[] = [netcdfClassic, netcdf4, bufr, coverageJson];

@@ -43,6 +43,7 @@ export function assumedUnit(role: Role, values: Float32Array): AssumedUnit {
     case 'u':
     case 'v':
     case 'verticalSpeed':
+    case 'speedUncertainty':
       return SI('m/s');
   }
 }

@@ -30,7 +30,8 @@ export function stationsOf(dataset: Dataset, piece: Piece, heightName: string | 
   const longitude = column(dataset, piece, LONGITUDES, 'longitude', 'angle');
   const elevation = column(dataset, piece, ELEVATIONS, 'surface_altitude', 'length', heightName);
   const { id, name } = namesOf(dataset);
-  const identifiers = identifiersOf(dataset, piece);
+  const identifiers = textsByProfile(dataset, piece, stationNames(dataset));
+  const titles = textsByProfile(dataset, piece, stationTitles(dataset));
   const stations: Station[] = [];
   const known = new Map<string, number>();
   const stationIndex = new Uint16Array(piece.profileCount);
@@ -43,7 +44,7 @@ export function stationsOf(dataset: Dataset, piece: Piece, heightName: string | 
       known.set(key, place);
       const found = stationBySite(site, {
         id: own,
-        name: name === '' || identifiers !== null ? own : name,
+        name: titles?.[index] ?? (name === '' || identifiers !== null ? own : name),
         latitude: latitude[index]!,
         longitude: longitude[index]!,
         elevation: elevation[index]!,
@@ -161,9 +162,16 @@ function stationNames(dataset: Dataset): Variable[] {
   );
 }
 
-/** Identifiers by profile where the file holds several stations. */
-function identifiersOf(dataset: Dataset, piece: Piece): string[] | null {
-  const variable = stationNames(dataset).find((candidate) => candidate.dimensions.length === 1);
+function stationTitles(dataset: Dataset): Variable[] {
+  const names = NAMES.split(' ');
+  return [...dataset.variables.values()].filter(
+    (variable) => variable.type === 'text' && names.includes(variable.name.toLowerCase()),
+  );
+}
+
+/** Texts by profile where the file holds several stations; null where none of the variables lies along stations. */
+function textsByProfile(dataset: Dataset, piece: Piece, variables: readonly Variable[]): string[] | null {
+  const variable = variables.find((candidate) => candidate.dimensions.length === 1);
   if (variable === undefined) return null;
   const places = piece.indexAlong(variable.dimensions[0]!, dataset);
   if (places === null) return null;

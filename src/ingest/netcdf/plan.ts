@@ -10,6 +10,8 @@ import { findTime, type TimeSource } from './times.ts';
 
 export interface Plan {
   readonly dataset: Dataset;
+  /** The variable whose dimensions decided. */
+  readonly pivot: Variable;
   readonly layout: Layout;
   /** What was found for each role but the height. */
   readonly roles: ReadonlyMap<Role, Finding>;
@@ -32,6 +34,7 @@ const LEVEL_ROLES = [
   'specificHumidity',
   'mixingRatio',
   'signal',
+  'speedUncertainty',
 ] as const satisfies readonly Role[];
 
 /**
@@ -62,7 +65,7 @@ export function planOf(dataset: Dataset, options: ReadOptions, problems: Problem
     if (!roles.has(role) && role !== 'height') problems.push(unknownUnit(dataset, variable, units));
   }
   const launched = layout.levelDimension !== null && time.variable.dimensions.includes(layout.levelDimension);
-  return { dataset, layout, roles, height, time, launched };
+  return { dataset, pivot, layout, roles, height, time, launched };
 }
 
 /** Variables whose dimensions can decide: winds that are complete first, then speed alone, then the air's state. */
@@ -110,7 +113,8 @@ function heightFor(dataset: Dataset, pivot: Variable, heights: readonly Finding[
   return heights.find(({ variable }) => sizeOf(variable.shape) === 1 && variable.dimensions.length === 0);
 }
 
-function liesAlong(variable: Variable, pivot: Variable, layout: Layout): boolean {
+/** Whether a variable has a value for each level. */
+export function liesAlong(variable: Variable, pivot: Variable, layout: Layout): boolean {
   const { levelDimension, ragged, profileDimensions } = layout;
   if (levelDimension !== null && !variable.dimensions.includes(levelDimension)) return false;
   if (ragged !== null) return variable.dimensions.length === 1;

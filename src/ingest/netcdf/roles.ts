@@ -16,10 +16,11 @@ export type Role =
   | 'specificHumidity'
   | 'mixingRatio'
   | 'signal'
+  | 'speedUncertainty'
   | 'height';
 
 interface Meaning {
-  /** CF standard names, in order of preference. */
+  /** CF standard names, in order of preference; a modifier behind a stroke. */
   readonly standardNames: string;
   /** Names in common use, lower case, in order of preference. */
   readonly names: string;
@@ -90,6 +91,11 @@ const MEANINGS: Readonly<Record<Role, Meaning>> = {
     names: 'snr signal_to_noise_ratio signal_noise_ratio cnr carrier_to_noise_ratio signal signal_intensity intensity',
     quantities: [],
   },
+  speedUncertainty: {
+    standardNames: 'wind_speed|standard_error',
+    names: 'wind_speed_uncertainty speed_uncertainty wspd_uncertainty',
+    quantities: ['speed'],
+  },
   height: {
     standardNames:
       'height height_above_ground_level altitude height_above_mean_sea_level geopotential_height height_above_geopotential_datum height_above_reference_ellipsoid geopotential',
@@ -128,7 +134,7 @@ export function candidates(dataset: Dataset, role: Role, unknown: UnknownUnit[] 
   for (const variable of dataset.variables.values()) {
     if (variable.type === 'text' || isUnfit(variable)) continue;
     const standardName = textOf(variable.attributes, 'standard_name').toLowerCase();
-    const standardRank = standardName === '' ? -1 : byStandard.indexOf(standardName);
+    const standardRank = standardName === '' ? -1 : byStandard.indexOf(standardName.replace(' ', '|'));
     const nameRank = byName.indexOf(shortName(variable));
     // A standard name for something else outweighs a likely name.
     const rank = standardRank >= 0 ? standardRank : standardName === '' && nameRank >= 0 ? 100 + nameRank : -1;

@@ -4,6 +4,7 @@ import type { Problem } from '../../air/index.ts';
 import { parseTimeUnit, timeMsOf, type TimeUnit } from './cf-time.ts';
 import { textOf, type Dataset, type Variable } from './dataset.ts';
 import type { Piece } from './gather.ts';
+import { unitIn } from './roles.ts';
 
 /** The variable that tells time, with its unit; a text variable has ISO 8601 and no unit. */
 export interface TimeSource {
@@ -76,6 +77,12 @@ export function timesOf(dataset: Dataset, piece: Piece, { variable, unit }: Time
       timeMs[index] = end;
       periodS[index] = (end - start) / 1000;
     });
+    return { timeMs, periodS };
+  }
+  const period = dataset.variables.get('averaging_period');
+  if (period !== undefined && period.type !== 'text') {
+    const unit = unitIn(textOf(period.attributes, 'units'));
+    if (unit?.quantity === 'time') piece.perProfile(period, unit)?.forEach((value, index) => (periodS[index] = value));
   }
   return { timeMs, periodS };
 }

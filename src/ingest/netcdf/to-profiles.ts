@@ -8,14 +8,15 @@ import {
   throwIfCancelled,
   type Problem,
 } from '../../air/index.ts';
-import { blockOfColumns, INSTRUMENTS, type ProfileBlock } from '../../profile/index.ts';
+import { blockOfColumns, type ProfileBlock } from '../../profile/index.ts';
 import type { ReadOptions } from '../format.ts';
 import { ASSUMED_PRESSURE_NOTE, levelHumidity } from '../level-humidity.ts';
 import { findScan } from '../scan/find-scan.ts';
 import { profilesFromScan } from '../scan/scan-profiles.ts';
 import { assumedUnit } from './assumed-unit.ts';
 import { textOf, type Dataset } from './dataset.ts';
-import { instrumentOf, stationsOf } from './file-station.ts';
+import { stationsOf } from './file-station.ts';
+import { instrumentsOf, marksOf, revisionsOf } from './flags.ts';
 import { piecesOf, type Piece } from './gather.ts';
 import { groundHeights } from './ground-heights.ts';
 import { planOf, type Plan } from './plan.ts';
@@ -92,7 +93,6 @@ function blockOf(plan: Plan, piece: Piece, options: ReadOptions, problems: Probl
   }
   const { timeMs, periodS } = timesOf(dataset, piece, time);
   const { profileCount } = piece;
-  const instrument = INSTRUMENTS.indexOf(instrumentOf(dataset, launched));
   return blockOfColumns({
     stations: ground.stations,
     sources: [dataset.source],
@@ -100,7 +100,8 @@ function blockOf(plan: Plan, piece: Piece, options: ReadOptions, problems: Probl
     offsets: piece.offsets,
     stationIndex: ground.stationIndex,
     sourceIndex: new Uint16Array(profileCount),
-    instrumentIndex: new Uint8Array(profileCount).fill(instrument),
+    instrumentIndex: instrumentsOf(dataset, piece, launched),
+    revision: revisionsOf(dataset, piece),
     timeMs,
     periodS: launched ? periodS.fill(0) : periodS,
     notes:
@@ -113,6 +114,8 @@ function blockOf(plan: Plan, piece: Piece, options: ReadOptions, problems: Probl
     temperature,
     specificHumidity: humidity.specificHumidity,
     signal: read('signal'),
+    speedUncertainty: read('speedUncertainty'),
+    mark: marksOf(plan, piece, ground.downward),
   });
 }
 
