@@ -2,8 +2,14 @@
 // unmistakable beginning first, tables of text last. A new format is a file or folder and one line here.
 
 import { bufr } from './bufr/bufr.ts';
-import { coverageJson } from './coverage-json/coverage-json.ts';
+import { csvTable } from './csv/format.ts';
 import type { FileFormat } from './format.ts';
 import { netcdf4, netcdfClassic } from './netcdf/formats.ts';
 
-export const FORMATS: readonly FileFormat[] = [netcdfClassic, netcdf4, bufr, coverageJson];
+export const FORMATS: readonly FileFormat[] = [
+  netcdfClassic,
+  netcdf4,
+  bufr,
+  // Whatever looks like a table and is nothing else.
+  csvTable,
+];

@@ -3,7 +3,9 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 
-const root = fileURLToPath(new URL('../../../shared/', import.meta.url));
+// Benches run compiled, from a folder of their own: there the checkout is the working directory.
+const besideCheckout = [fileURLToPath(new URL('../../../shared/', import.meta.url)), `${process.cwd()}/../shared/`];
+const root = besideCheckout.find((path) => existsSync(path)) ?? besideCheckout[0]!;
 
 /** Whether the outside data are at hand. */
 export const sharedIsHere = existsSync(root);
