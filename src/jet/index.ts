@@ -5,3 +5,10 @@ export { NO_JET, NOT_ASSESSABLE, scanNoses, type NoseTable } from './scan.ts';
 export type { Phase, Rate } from './rates.ts';
 export { trackJets, type JetTrack, type TimedFinding, type TrackOptions, type TrackPoint } from './track.ts';
 export { completeUncertainty, type UncertaintyOrigin } from './uncertainty.ts';
+export {
+  fitOscillation,
+  greatestSpeed,
+  oscillatingWind,
+  type FittedOscillation,
+  type Oscillation,
+} from './oscillation.ts';
