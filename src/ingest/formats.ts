@@ -2,6 +2,7 @@
 // unmistakable beginning first, tables of text last. A new format is a file or folder and one line here.
 
 import { bufr } from './bufr/bufr.ts';
+import { coverageJson } from './coverage-json/coverage-json.ts';
 import { csvTable } from './csv/format.ts';
 import type { FileFormat } from './format.ts';
 import { netcdf4, netcdfClassic } from './netcdf/formats.ts';
@@ -10,6 +11,7 @@ export const FORMATS: readonly FileFormat[] = [
   netcdfClassic,
   netcdf4,
   bufr,
+  coverageJson,
   // Whatever looks like a table and is nothing else.
   csvTable,
 ];
