@@ -3,7 +3,8 @@
 
 import type { LightSpan } from '../air/index.ts';
 import { lightSpans } from '../air/index.ts';
-import { criteriaOf, findJets, type Criteria, type JetFinding } from '../jet/index.ts';
+import { criteriaOf, findJets, trackJets, type Criteria, type JetFinding, type JetTrack } from '../jet/index.ts';
+import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
 import { profileAt, type Profile, type ProfileBlock } from '../profile/index.ts';
 import { screen, type FeedScreening } from '../quality/index.ts';
 import { windOnDisc, type DiscWind } from '../rotor/index.ts';
@@ -39,7 +40,10 @@ export interface NightState {
   /** Valid times of the profiles in the window up to `atMs`, ascending. */
   readonly timeMs: readonly number[];
   readonly findings: readonly JetFinding[];
+  /** The stories of the night's jets as far as they are known at `atMs`. */
+  readonly tracks: readonly JetTrack[];
   readonly discs: readonly DiscSeries[];
+  readonly moisture: readonly MoistureNumbers[];
 }
 
 export interface NightQuestion {
@@ -111,6 +115,11 @@ export class Desk {
     }
     const findings = indices.map((index) => this.#finding(screened, index, criteria));
     const profiles = indices.map((index) => profileAt(block, index));
+    const timed = findings.map((finding, k) => ({
+      stationId: feed.station.id,
+      timeMs: block.timeMs[indices[k]!]!,
+      finding,
+    }));
     return {
       atMs,
       feed,
@@ -119,7 +128,9 @@ export class Desk {
       criteria,
       timeMs: indices.map((index) => block.timeMs[index]!),
       findings,
+      tracks: trackJets(timed),
       discs: this.site.turbines.map((turbine) => ({ turbine, winds: discWinds(turbine, profiles, findings) })),
+      moisture: profiles.map((profile, k) => moistureOf(profile, { jetLayer: coreOf(findings[k]!) })),
     };
   }
 
@@ -147,6 +158,10 @@ export class Desk {
     });
     return known[index];
   }
+}
+
+function coreOf(finding: JetFinding): { bottom: number; top: number } | undefined {
+  return finding.jets[0]?.core;
 }
 
 function discWinds(turbine: TurbineType, profiles: readonly Profile[], findings: readonly JetFinding[]): DiscWind[] {
