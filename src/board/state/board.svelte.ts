@@ -1,0 +1,309 @@
+// What the page knows: the open files, the feeds, the moment looked at, and the night as the worker tells it.
+
+import { proxy, type Remote } from 'comlink';
+import { untrack } from 'svelte';
+import { DuskveerError, type Problem } from '../../air/index.ts';
+import type { FeedState, NightState } from '../../desk/index.ts';
+import { PLAIN_SITE, type Site } from '../../site/index.ts';
+import type { BoardWorker, OpenFile, ReadingProgress } from '../worker/protocol.ts';
+import { fetchDemo, listDemo, type DemoList, type DemoNight } from './demo.ts';
+import type { Preferences } from './preferences.svelte.ts';
+
+export interface OpenedFile extends OpenFile {
+  readonly formats: readonly string[];
+  readonly profiles: number;
+  readonly problems: readonly Problem[];
+}
+
+export interface ReadingJob extends ReadingProgress {
+  readonly number: number;
+  readonly files: number;
+}
+
+/** Data newer than this are taken for live: the moment looked at then follows the clock. */
+const LIVE_MS = 3 * 3_600_000;
+const CLOCK_TICK_MS = 20_000;
+const REPLAY_TICK_MS = 160;
+/** Step of a replay where the feed's own interval cannot be told. */
+const PLAIN_STEP_MS = 600_000;
+
+export class Board {
+  readonly preferences: Preferences;
+  readonly worker: Remote<BoardWorker>;
+
+  /** `empty` when nothing is open and the demo is not at hand. */
+  phase = $state<'starting' | 'empty' | 'ready'>('starting');
+  site = $state.raw<Site>(PLAIN_SITE);
+  /** Identifier of the invented night that is open; empty when the files are the reader's own. */
+  demo = $state('');
+  demoList = $state.raw<DemoList>({ opens: '', nights: [] });
+  files = $state.raw<readonly OpenedFile[]>([]);
+  feeds = $state.raw<readonly FeedState[]>([]);
+  feedKey = $state('');
+  /** UTC ms: the moment looked at; nothing later is shown. */
+  atMs = $state(NaN);
+  /** Whether the moment follows the clock. */
+  live = $state(false);
+  replaying = $state(false);
+  night = $state.raw<NightState | null>(null);
+  /** Counts changes of the data, so that pictures know when to be made again. */
+  dataVersion = $state(0);
+  job = $state.raw<ReadingJob | null>(null);
+  problems = $state.raw<readonly Problem[]>([]);
+  /** What was just done and can be undone. */
+  notice = $state.raw<{ readonly words: string; readonly undo: (() => void) | null } | null>(null);
+
+  readonly feed: FeedState | undefined = $derived(this.feeds.find((feed) => feed.key === this.feedKey));
+  /** Interval of the feed's profiles, ms. */
+  readonly stepMs: number = $derived(stepOf(this.feed));
+
+  #siteFile: { readonly text: string; readonly name: string } | null = null;
+  #jobs = 0;
+  #questions = 0;
+
+  constructor(worker: Remote<BoardWorker>, preferences: Preferences) {
+    this.worker = worker;
+    this.preferences = preferences;
+  }
+
+  /** Opens the demo if there is one, else waits for files. */
+  async start(): Promise<void> {
+    await this.#openSite(null);
+    this.demoList = await listDemo();
+    const night = this.demoList.nights.find(({ id }) => id === this.demoList.opens);
+    if (night !== undefined) await this.openDemo(night);
+    if (this.phase === 'starting') this.phase = 'empty';
+  }
+
+  /** Keeps the moment on the clock while data are live. @returns how to stop */
+  followClock(): () => void {
+    const timer = setInterval(() => {
+      if (this.live) this.atMs = Date.now();
+    }, CLOCK_TICK_MS);
+    return () => clearInterval(timer);
+  }
+
+  async openDemo(night: DemoNight): Promise<void> {
+    this.notice = null;
+    try {
+      const demo = await fetchDemo(night);
+      await this.#openSite(demo.site);
+      this.files = [];
+      this.feedKey = '';
+      await this.#read(demo.files);
+      this.demo = night.id;
+      this.lookAt(demo.nowMs);
+    } catch (error) {
+      this.problems = [...this.problems, failed(error)];
+    }
+  }
+
+  /** Opens what a person dropped or chose; the demo gives way to it. */
+  async openFiles(chosen: readonly File[]): Promise<void> {
+    if (chosen.length === 0) return;
+    const before = { files: this.files, site: this.#siteFile, demo: this.demo };
+    const sites: { text: string; name: string }[] = [];
+    const profiles: OpenFile[] = [];
+    for (const file of chosen) {
+      const text = await siteText(file);
+      if (text === null) profiles.push({ name: file.name, blob: file });
+      else sites.push({ text, name: file.name });
+    }
+    this.notice = null;
+    // The demo gives way to files of one's own; more of these join those already open.
+    const leaveDemo = before.demo !== '' && profiles.length > 0;
+    const site = sites.at(-1) ?? (leaveDemo ? null : before.site);
+    const kept = leaveDemo ? [] : before.files;
+    if (site !== before.site || kept !== before.files) {
+      await this.#openSite(site);
+      this.files = [];
+      this.demo = kept === before.files ? before.demo : '';
+      await this.#read([...kept, ...profiles]);
+    } else await this.#read(profiles);
+    if (profiles.length > 0) this.lookAtNewest();
+    this.notice = {
+      words: `Opened ${chosen.map((file) => file.name).join(', ')}.`,
+      undo: () => void this.#goBack(before.files, before.site, before.demo),
+    };
+    await this.refresh();
+  }
+
+  /** Closes one file; the others stay. */
+  async closeFile(name: string): Promise<void> {
+    const before = this.files;
+    const site = this.#siteFile;
+    const wasDemo = this.demo;
+    await this.#goBack(
+      before.filter((file) => file.name !== name),
+      site,
+      wasDemo,
+    );
+    this.notice = { words: `Closed ${name}.`, undo: () => void this.#goBack(before, site, wasDemo) };
+  }
+
+  /** Reads everything anew, after a change of what the reckoning rests on. */
+  async reopen(): Promise<void> {
+    await this.#goBack(this.files, this.#siteFile, this.demo);
+  }
+
+  cancelReading(): void {
+    if (this.job !== null) void this.worker.cancel(this.job.number);
+  }
+
+  chooseFeed(key: string): void {
+    this.feedKey = key;
+    const feed = this.feed;
+    // A moment outside the new feed's record would show an empty night.
+    if (feed !== undefined && !(this.atMs >= feed.firstMs)) this.lookAtNewest();
+    void this.refresh();
+  }
+
+  /** Moves the moment looked at; nothing later than it is shown. */
+  lookAt(atMs: number): void {
+    this.atMs = atMs;
+    this.live = false;
+    void this.refresh();
+  }
+
+  /** By so many profiles, later or earlier. */
+  step(profiles: number): void {
+    const feed = this.feed;
+    if (feed === undefined) return;
+    const wanted = this.atMs + profiles * this.stepMs;
+    this.lookAt(Math.max(feed.firstMs, wanted));
+  }
+
+  /** Lets the night run from the moment looked at, or from its begin when it is over. @returns how to stop */
+  replay(): () => void {
+    const night = untrack(() => this.night);
+    if (night === null) return () => undefined;
+    const { startMs, endMs } = night.window;
+    const lastMs = Math.min(endMs, this.feed?.lastMs ?? endMs);
+    if (this.atMs >= lastMs) this.lookAt(startMs + this.stepMs);
+    this.replaying = true;
+    const timer = setInterval(() => {
+      if (this.atMs + this.stepMs > lastMs) stop();
+      else this.step(1);
+    }, REPLAY_TICK_MS);
+    const stop = (): void => {
+      clearInterval(timer);
+      this.replaying = false;
+    };
+    return stop;
+  }
+
+  /** Asks the worker for the night anew; answers that a newer question has overtaken are dropped. */
+  async refresh(): Promise<void> {
+    const question = ++this.#questions;
+    const { feedKey, atMs } = this;
+    if (feedKey === '' || !Number.isFinite(atMs)) {
+      this.night = null;
+      return;
+    }
+    const night = await this.worker.night(atMs, feedKey, this.preferences.criteria);
+    if (question === this.#questions) this.night = night;
+  }
+
+  async #goBack(
+    files: readonly OpenFile[],
+    site: { readonly text: string; readonly name: string } | null,
+    demo: string,
+  ): Promise<void> {
+    this.notice = null;
+    await this.#openSite(site);
+    this.files = [];
+    this.demo = demo;
+    await this.#read(files);
+    if (this.feed === undefined || !(this.atMs >= this.feed.firstMs)) this.lookAtNewest();
+    await this.refresh();
+  }
+
+  async #openSite(file: { readonly text: string; readonly name: string } | null): Promise<void> {
+    const { hubHeight, rotorDiameter } = this.preferences;
+    const { site, problems } = await this.worker.open({ file, disc: { hubHeight, rotorDiameter } });
+    this.#siteFile = file;
+    this.site = site;
+    this.problems = problems;
+    if (file !== null) this.preferences.suggest(site.units);
+  }
+
+  async #read(files: readonly OpenFile[]): Promise<void> {
+    if (files.length > 0) {
+      const number = ++this.#jobs;
+      const tell = (progress: ReadingProgress): void => {
+        this.job = { ...progress, number, files: files.length };
+      };
+      try {
+        const report = await this.worker.read(number, [...files], proxy(tell));
+        const opened = report.files.map((file, index) => ({ ...file, blob: files[index]!.blob }));
+        this.files = [...this.files.filter((file) => !opened.some((other) => other.name === file.name)), ...opened];
+        this.problems = [...this.problems, ...opened.flatMap((file) => file.problems)];
+        if (report.cancelled) this.problems = [...this.problems, stopped(files.length - report.files.length)];
+      } catch (error) {
+        this.problems = [...this.problems, failed(error)];
+      } finally {
+        this.job = null;
+      }
+    }
+    this.feeds = await this.worker.feeds();
+    this.dataVersion++;
+    this.phase = this.feeds.length > 0 ? 'ready' : 'empty';
+    if (this.feed === undefined) this.feedKey = fullest(this.feeds)?.key ?? '';
+  }
+
+  lookAtNewest(): void {
+    const feed = this.feed;
+    if (feed === undefined) {
+      this.atMs = NaN;
+      return;
+    }
+    const now = Date.now();
+    this.live = now >= feed.lastMs && now - feed.lastMs < LIVE_MS;
+    this.atMs = this.live ? now : feed.lastMs;
+  }
+}
+
+/** The text of a file that is a site file: JSON with a site's keys. Anything else is a matter for the readers. */
+async function siteText(file: File): Promise<string | null> {
+  const LARGEST_SITE = 2 ** 21;
+  if (!file.name.toLowerCase().endsWith('.json') || file.size > LARGEST_SITE) return null;
+  const text = await file.text();
+  return /"(stations|turbines|time_zone)"\s*:/.test(text) ? text : null;
+}
+
+/** The feed that shows most of a night: many profiles, each of a fair number of levels. */
+function fullest(feeds: readonly FeedState[]): FeedState | undefined {
+  const ENOUGH_LEVELS = 60;
+  const shows = (feed: FeedState): number => {
+    const levels = feed.screening.reduce((sum, part) => sum + part.windLevels, 0);
+    return Math.min(levels, ENOUGH_LEVELS * feed.profiles);
+  };
+  return feeds.reduce<FeedState | undefined>(
+    (best, feed) => (best === undefined || shows(feed) > shows(best) ? feed : best),
+    undefined,
+  );
+}
+
+function stepOf(feed: FeedState | undefined): number {
+  if (feed === undefined || feed.profiles < 2) return PLAIN_STEP_MS;
+  return feed.intervalMs;
+}
+
+function stopped(unread: number): Problem {
+  return {
+    code: 'board/reading-stopped',
+    what: `Reading was stopped; ${unread} of the files were not read to their end.`,
+    mend: 'Drop them again to read them; what had been read is shown.',
+    where: {},
+  };
+}
+
+function failed(error: unknown): Problem {
+  if (error instanceof DuskveerError) return error.problem;
+  return {
+    code: 'board/worker-failed',
+    what: `Reading failed: ${error instanceof Error ? error.message : String(error)}`,
+    mend: 'Reload the page and open the file again; if it fails again, report the file.',
+    where: {},
+  };
+}

@@ -1,0 +1,78 @@
+// The sentence at the head of the page: what a good colleague would say first, in the reader's units.
+
+import { toHeightUnit } from '../../air/index.ts';
+import type { NightState } from '../../desk/index.ts';
+import type { JetTrack } from '../../jet/index.ts';
+import type { DisplayUnits } from '../../site/index.ts';
+import { STALE_INTERVALS } from './answers.ts';
+import { compassWords, heightText, inHundred, plain, speedText } from './numbers.ts';
+import { durationWords, type TimeWords } from './time.ts';
+
+/** A piece of a sentence; `strong` carries the figures, `call` what needs a person. */
+export interface Piece {
+  readonly text: string;
+  readonly weight?: 'strong' | 'call';
+}
+
+/** A nose that moves less than this, m an hour, stays where it is. */
+const STEADY_HEIGHT = 15;
+
+export function story(night: NightState, stepMs: number, units: DisplayUnits, times: TimeWords): Piece[] {
+  const last = night.timeMs.length - 1;
+  if (last < 0) {
+    return [{ text: `No profile of ${night.feed.station.name} in this night up to ${times.clock(night.atMs)}.` }];
+  }
+  const ageMs = night.atMs - night.timeMs[last]!;
+  const stale = ageMs > STALE_INTERVALS * stepMs;
+  const pieces: Piece[] = [];
+  if (stale) pieces.push({ text: `The last profile is ${durationWords(ageMs)} old. `, weight: 'call' });
+  const track = currentTrack(night);
+  if (track !== undefined) pieces.push(...trackPieces(track, units, times, stale));
+  else pieces.push(...noTrackPieces(night, times));
+  return pieces;
+}
+
+/** The strongest of the jets that last as far as data go. */
+function currentTrack(night: NightState): JetTrack | undefined {
+  return night.tracks
+    .filter(({ endedMs }) => endedMs === null)
+    .sort((a, b) => b.points.at(-1)!.noseSpeed - a.points.at(-1)!.noseSpeed)[0];
+}
+
+function trackPieces(track: JetTrack, units: DisplayUnits, times: TimeWords, stale: boolean): Piece[] {
+  const { noseHeight, noseSpeed, noseDirection, confidence, timeMs } = track.points.at(-1)!;
+  const from = compassWords(noseDirection);
+  return [
+    {
+      text: `A low-level jet since ${times.clock(track.beganMs)}${stale ? `, last seen at ${times.clock(timeMs)}` : ''}: nose at `,
+    },
+    { text: `${heightText(noseHeight, units)} ${units.height}`, weight: 'strong' },
+    { text: ', ' },
+    { text: `${speedText(noseSpeed, units)} ${units.speed}`, weight: 'strong' },
+    {
+      text: `${from === '' ? '' : ` from the ${from}`}, ${track.phase}${heightWords(track, units)}; ${inHundred(confidence)} sure.`,
+    },
+  ];
+}
+
+function heightWords({ rates }: JetTrack, units: DisplayUnits): string {
+  const { perHour, uncertainty } = rates.height;
+  if (!(Math.abs(perHour) > Math.max(STEADY_HEIGHT, uncertainty))) return '';
+  const size = plain(Math.abs(toHeightUnit(perHour, units.height)), 0);
+  return `, ${perHour > 0 ? 'rising' : 'sinking'} ${size} ${units.height} an hour`;
+}
+
+function noTrackPieces(night: NightState, times: TimeWords): Piece[] {
+  const finding = night.findings.at(-1)!;
+  const ended = night.tracks.filter(({ endedMs }) => endedMs !== null).sort((a, b) => b.endedMs! - a.endedMs!)[0];
+  const before = ended === undefined ? '' : ` The last one ended at ${times.clock(ended.endedMs!)}.`;
+  if (finding.status === 'not-assessable') {
+    return [{ text: `Whether there is a jet cannot be said. ${finding.why}${before}` }];
+  }
+  if (finding.status === 'jet') {
+    return [
+      { text: `No lasting jet; a nose shows at ${times.clock(night.timeMs.at(-1)!)} but has not held.${before}` },
+    ];
+  }
+  return [{ text: `No low-level jet. ${finding.why}${before}` }];
+}

@@ -1,0 +1,201 @@
+// What the worker does: reads files, keeps the desk, prepares and paints sections. No worker globals here, so that the
+// same code runs under test on one thread.
+
+import { Cancelled, type Problem } from '../../air/index.ts';
+import { Desk, type FeedState, type NightState } from '../../desk/index.ts';
+import { readProfiles } from '../../ingest/index.ts';
+import {
+  buildSectionGrid,
+  colourScale,
+  FIELDS,
+  sectionCsv,
+  SectionPainter,
+  type SectionView,
+} from '../../plot/index.ts';
+import { pickProfiles, type ProfileBlock } from '../../profile/index.ts';
+import { PLAIN_SITE, readSite, type DisplayUnits, type Site, type TurbineType } from '../../site/index.ts';
+import { blobSource } from './blob-source.ts';
+import { sectionTable } from './section-table.ts';
+import type {
+  BoardWorker,
+  FileReport,
+  OpenFile,
+  OpenSite,
+  Painted,
+  PaintRequest,
+  ReadingProgress,
+  ReadingReport,
+  SectionInfo,
+  SectionQuestion,
+  SectionRequest,
+  SectionTable,
+  SiteReport,
+} from './protocol.ts';
+
+/** Progress is told at most this often, in bytes, or reading would be slowed by telling of it. */
+const PROGRESS_STEP = 2 ** 18;
+
+interface PreparedSection {
+  readonly question: SectionQuestion;
+  readonly block: ProfileBlock;
+  readonly painter: SectionPainter;
+}
+
+export class DeskService implements BoardWorker {
+  #desk = new Desk(PLAIN_SITE);
+  #section: PreparedSection | null = null;
+  readonly #jobs = new Map<number, AbortController>();
+
+  open({ file, disc }: OpenSite): SiteReport {
+    const read = file === null ? { site: null, problems: [] } : readSite(file.text, file.name);
+    const site = withDisc(read.site ?? PLAIN_SITE, disc);
+    this.#desk = new Desk(site);
+    this.#section = null;
+    return { site, problems: read.problems };
+  }
+
+  async read(
+    job: number,
+    files: readonly OpenFile[],
+    onProgress: (progress: ReadingProgress) => void,
+  ): Promise<ReadingReport> {
+    const control = new AbortController();
+    this.#jobs.set(job, control);
+    const desk = this.#desk;
+    const reports: FileReport[] = [];
+    const accepted = { added: 0, repeated: 0, replaced: 0 };
+    const bytesTotal = files.reduce((sum, file) => sum + file.blob.size, 0);
+    let bytesBefore = 0;
+    let told = -Infinity;
+    const tell = (current: string, bytesRead: number): void => {
+      if (bytesRead - told < PROGRESS_STEP && bytesRead !== bytesBefore) return;
+      told = bytesRead;
+      onProgress({ current, done: reports.length, bytesRead, bytesTotal, profiles: accepted.added });
+    };
+    try {
+      for (const file of files) {
+        tell(file.name, bytesBefore);
+        const formats = new Set<string>();
+        const problems: Problem[] = [];
+        let profiles = 0;
+        const readings = readProfiles(blobSource(file), {
+          site: desk.site,
+          signal: control.signal,
+          onProgress: ({ bytesRead }) => tell(file.name, bytesBefore + bytesRead),
+        });
+        for await (const reading of readings) {
+          if (reading.format !== '') formats.add(reading.format);
+          problems.push(...reading.problems);
+          profiles += reading.block.profileCount;
+          const { added, repeated, replaced } = desk.accept(reading.block);
+          accepted.added += added;
+          accepted.repeated += repeated;
+          accepted.replaced += replaced;
+        }
+        bytesBefore += file.blob.size;
+        reports.push({ name: file.name, formats: [...formats], profiles, problems });
+      }
+      return { files: reports, accepted, cancelled: false };
+    } catch (error) {
+      if (!(error instanceof Cancelled)) throw error;
+      return { files: reports, accepted, cancelled: true };
+    } finally {
+      this.#jobs.delete(job);
+    }
+  }
+
+  cancel(job: number): void {
+    this.#jobs.get(job)?.abort();
+  }
+
+  feeds(): FeedState[] {
+    return this.#desk.feeds();
+  }
+
+  night(atMs: number, feed: string, criteria: string): NightState | null {
+    return this.#desk.night(atMs, criteria === '' ? { feed } : { feed, criteria });
+  }
+
+  section(question: SectionQuestion): SectionInfo | null {
+    const painter = this.#prepare(question);
+    if (painter === null) return null;
+    const { startMs, endMs, edges, values, columnCount, rowCount } = painter.grid;
+    return {
+      field: question.field,
+      startMs: columnCount > 0 ? startMs[0]! : NaN,
+      endMs: columnCount > 0 ? endMs[columnCount - 1]! : NaN,
+      top: rowCount > 0 ? edges[rowCount]! : NaN,
+      filled: values.some((value) => !Number.isNaN(value)),
+    };
+  }
+
+  paint(request: PaintRequest): Painted | null {
+    const painter = this.#prepare(request);
+    const view = cutAt(request.view, request.untilMs);
+    if (painter === null || view === null) return null;
+    const scale = colourScale(FIELDS[request.field].scale, request.theme);
+    return { view, pixels: painter.paint(view, { scale, range: request.range }) };
+  }
+
+  profiles(feed: string, startMs: number, endMs: number): ProfileBlock | null {
+    const block = this.#desk.block(feed);
+    if (block === null) return null;
+    const picks = [];
+    for (let index = 0; index < block.profileCount; index++) {
+      if (block.timeMs[index]! >= startMs && block.timeMs[index]! <= endMs) picks.push({ block, index });
+    }
+    return pickProfiles(picks);
+  }
+
+  table({ view, untilMs, ...question }: SectionRequest): SectionTable | null {
+    const painter = this.#prepare(question);
+    return painter === null ? null : sectionTable(painter.grid, view, untilMs);
+  }
+
+  csv({ view, untilMs, ...question }: SectionRequest, units: DisplayUnits): string {
+    const painter = this.#prepare(question);
+    if (painter === null) return '';
+    return [...sectionCsv(painter.grid, units, { ...view, endMs: Math.min(view.endMs, untilMs) })].join('');
+  }
+
+  #prepare({ feed, field, ceiling }: SectionQuestion): SectionPainter | null {
+    const block = this.#desk.block(feed);
+    if (block === null) return null;
+    const held = this.#section;
+    if (
+      held?.block !== block ||
+      held.question.feed !== feed ||
+      held.question.field !== field ||
+      held.question.ceiling !== ceiling
+    ) {
+      const painter = new SectionPainter(buildSectionGrid([block], { field, ceiling }));
+      this.#section = { question: { feed, field, ceiling }, block, painter };
+    }
+    return this.#section!.painter;
+  }
+}
+
+/** The part of a view up to a moment, at the same scale, whole pixels; null where nothing of it is left. */
+function cutAt(view: SectionView, untilMs: number): SectionView | null {
+  if (untilMs >= view.endMs) return view;
+  const msPerPixel = (view.endMs - view.startMs) / view.width;
+  const width = Math.floor((untilMs - view.startMs) / msPerPixel);
+  return width > 0 ? { ...view, width, endMs: view.startMs + width * msPerPixel } : null;
+}
+
+/** A site without turbines gets the reader's own disc, so that a lone file still shows rotor numbers. */
+function withDisc(site: Site, disc: OpenSite['disc']): Site {
+  if (site.turbines.length > 0) return site;
+  return { ...site, turbines: [{ ...PLAIN_TURBINE, ...disc }] };
+}
+
+const PLAIN_TURBINE: Omit<TurbineType, keyof OpenSite['disc']> = {
+  name: 'Disc',
+  count: 1,
+  powerCurve: null,
+  cutIn: NaN,
+  rated: NaN,
+  cutOut: NaN,
+  restart: NaN,
+  groundElevation: NaN,
+};
