@@ -2,7 +2,7 @@
 
 import { shearExponent } from '../air/index.ts';
 import { windColumn, type WindColumn } from '../profile/index.ts';
-import { bottomTip, discArea, segmentArea, topTip, type Disc } from './disc.ts';
+import { bottomTip, shareBelow, topTip, type Disc } from './disc.ts';
 
 export interface Continued {
   /** The measured levels with the continued ones around them; the given column itself where nothing was continued. */
@@ -27,7 +27,7 @@ export function continueWind(column: WindColumn, disc: Disc): Continued {
   const nothing = (why: string): Continued => ({ column, share: 0, why });
   if (column.count === 0) return nothing('');
   const [lowest, highest] = [column.heightAgl[0]!, column.heightAgl[column.count - 1]!];
-  const measured = segmentArea(disc, lowest, highest) / discArea(disc);
+  const measured = shareBelow(disc, highest) - shareBelow(disc, lowest);
   if (measured >= 1) return nothing('');
   if (measured < LEAST_COVERAGE) return nothing('too little of the rotor is measured to continue the wind');
   const inside: number[] = [];

@@ -36,6 +36,12 @@ export function segmentArea(disc: Disc, bottom: number, top: number): number {
   return areaBelow(high, radius) - areaBelow(low, radius);
 }
 
+/** Share of the disc's area below a height, 0 to 1; NaN in, NaN out. */
+export function shareBelow(disc: Disc, height: number): number {
+  const sine = clamp((2 * (height - disc.hubHeight)) / disc.rotorDiameter, 1);
+  return 0.5 + (sine * Math.sqrt(1 - sine * sine) + Math.asin(sine)) / Math.PI;
+}
+
 function areaBelow(y: number, radius: number): number {
   return y * Math.sqrt(radius * radius - y * y) + radius * radius * Math.asin(y / radius);
 }

@@ -138,7 +138,8 @@ export class FleetScan {
     if (same) return;
     this.#plannedHeights = heightAgl.slice(0, count);
     this.#plannedCount = count;
-    this.#plans = this.#discs.map((disc) => planDisc(disc, heightAgl, count));
+    const logHeight = this.#plannedHeights.map(Math.log);
+    this.#plans = this.#discs.map((disc) => planDisc(disc, heightAgl, logHeight, count));
     this.#firstNeeded = count;
     this.#endNeeded = 0;
     for (const plan of this.#plans) {

@@ -1,7 +1,7 @@
 // What a disc asks of a set of heights, worked out once: the share of the disc that each height owns, where hub and tips
 // lie between the heights, and the weights of the shear fit. Profiles of the same heights then cost multiplications only.
 
-import { bottomTip, discArea, segmentArea, topTip, type Disc } from './disc.ts';
+import { bottomTip, shareBelow, topTip, type Disc } from './disc.ts';
 
 /** A height between two levels: value = (1 - weight) below + weight above. `below` is -1 outside the levels. */
 export interface Between {
@@ -41,16 +41,22 @@ const ALLOWANCE = 1e-9;
  * most a third of the radius above the lower tip to at most a third below the upper one, and three slices with area. The
  * standard also asks for levels inside the disc and at the hub (from memory); here those outside count too.
  * @param heightAgl m, ascending
+ * @param logHeight their natural logarithms
  * @param count how many of them are used
  */
-export function planDisc(disc: Disc, heightAgl: ArrayLike<number>, count: number): DiscPlan {
+export function planDisc(
+  disc: Disc,
+  heightAgl: ArrayLike<number>,
+  logHeight: ArrayLike<number>,
+  count: number,
+): DiscPlan {
   const lowest = count > 0 ? heightAgl[0]! : NaN;
   const highest = count > 0 ? heightAgl[count - 1]! : NaN;
-  const coverage = count > 0 ? segmentArea(disc, lowest, highest) / discArea(disc) : 0;
+  const coverage = count > 0 ? shareBelow(disc, highest) - shareBelow(disc, lowest) : 0;
   const { first, share } = slices(disc, heightAgl, count);
   const coveredLow = Math.max(lowest, bottomTip(disc));
   const coveredHigh = Math.min(highest, topTip(disc));
-  const { fitFirst, fitWeight } = shearFit(disc, heightAgl, count);
+  const { fitFirst, fitWeight } = shearFit(disc, heightAgl, logHeight, count);
   return {
     disc,
     why: whyNot(disc, lowest, highest, coverage, count, share),
@@ -82,24 +88,26 @@ function whyNot(
   if (!(lowest <= disc.hubHeight - reach && highest >= disc.hubHeight + reach)) {
     return `rotor only ${Math.floor(100 * coverage)} % covered`;
   }
-  const withArea = share.reduce((total, value) => (value > 0 ? total + 1 : total), 0);
+  let withArea = 0;
+  for (let k = 0; k < share.length; k++) if (share[k]! > 0) withArea++;
   if (withArea < 3) return `only ${withArea} of the levels reach into the rotor, three are needed`;
   return '';
 }
 
 function slices(disc: Disc, heightAgl: ArrayLike<number>, count: number): { first: number; share: Float64Array } {
-  const shares: number[] = [];
+  const [lowTip, highTip] = [bottomTip(disc), topTip(disc)];
   let first = 0;
-  for (let k = 0; k < count; k++) {
-    const low = k === 0 ? -Infinity : (heightAgl[k - 1]! + heightAgl[k]!) / 2;
-    const high = k === count - 1 ? Infinity : (heightAgl[k]! + heightAgl[k + 1]!) / 2;
-    const area = segmentArea(disc, low, high);
-    if (shares.length === 0 && area <= 0) continue;
-    if (shares.length === 0) first = k;
-    if (low >= topTip(disc)) break;
-    shares.push(area / discArea(disc));
+  while (first < count - 1 && (heightAgl[first]! + heightAgl[first + 1]!) / 2 <= lowTip) first++;
+  let end = first;
+  while (end < count && (end === first || (heightAgl[end - 1]! + heightAgl[end]!) / 2 < highTip)) end++;
+  const share = new Float64Array(end - first);
+  let below = 0;
+  for (let k = first; k < end; k++) {
+    const above = k === end - 1 ? 1 : shareBelow(disc, (heightAgl[k]! + heightAgl[k + 1]!) / 2);
+    share[k - first] = above - below;
+    below = above;
   }
-  return { first, share: Float64Array.from(shares) };
+  return { first, share };
 }
 
 /** Where a height lies between ascending levels. */
@@ -118,6 +126,7 @@ function between(height: number, heightAgl: ArrayLike<number>, count: number): B
 function shearFit(
   disc: Disc,
   heightAgl: ArrayLike<number>,
+  logHeight: ArrayLike<number>,
   count: number,
 ): { fitFirst: number; fitWeight: Float64Array } {
   const low = bottomTip(disc);
@@ -126,21 +135,18 @@ function shearFit(
   while (fitFirst < count && !(heightAgl[fitFirst]! >= low && heightAgl[fitFirst]! > 0)) fitFirst++;
   let end = fitFirst;
   while (end < count && heightAgl[end]! <= high) end++;
-  return { fitFirst, fitWeight: powerLawWeights(heightAgl, fitFirst, end) };
+  return { fitFirst, fitWeight: powerLawWeights(logHeight, fitFirst, end) };
 }
 
 /** Weights w so that the exponent of the least-squares power law over levels first..end is the sum of w ln V. */
-function powerLawWeights(heightAgl: ArrayLike<number>, first: number, end: number): Float64Array {
-  const weights = new Float64Array(Math.max(0, end - first));
+function powerLawWeights(logHeight: ArrayLike<number>, first: number, end: number): Float64Array {
+  const count = end - first;
+  if (count < 2 || !(logHeight[end - 1]! > logHeight[first]!)) return new Float64Array(0);
   let mean = 0;
-  for (let k = first; k < end; k++) mean += Math.log(heightAgl[k]!) / weights.length;
+  for (let k = first; k < end; k++) mean += logHeight[k]! / count;
   let squares = 0;
-  for (let k = first; k < end; k++) {
-    const departure = Math.log(heightAgl[k]!) - mean;
-    weights[k - first] = departure;
-    squares += departure * departure;
-  }
-  if (weights.length < 2 || !(heightAgl[end - 1]! > heightAgl[first]!)) return new Float64Array(0);
-  for (let k = 0; k < weights.length; k++) weights[k]! /= squares;
+  for (let k = first; k < end; k++) squares += (logHeight[k]! - mean) ** 2;
+  const weights = new Float64Array(count);
+  for (let k = 0; k < count; k++) weights[k] = (logHeight[first + k]! - mean) / squares;
   return weights;
 }

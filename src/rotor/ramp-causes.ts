@@ -1,6 +1,7 @@
 // Why a ramp happened, from evidence that the caller hands over: turbine states, the jet's tracks, sunrise, the wind at hub.
 
 import { veerBetween } from '../air/index.ts';
+import type { JetTrack, TrackPoint } from '../jet/index.ts';
 import { bottomTip, topTip, type Disc } from './disc.ts';
 import type { TurbineState } from './fleet-power.ts';
 import type { Ramp } from './ramps.ts';
@@ -24,16 +25,10 @@ export interface RampCause {
   readonly words: string;
 }
 
-/** The nose of one jet through time. */
-export interface NoseTrack {
-  readonly beganMs: number;
-  /** NaN while it lasts. */
-  readonly endedMs: number;
-  /** Series run in parallel, ascending in time. */
-  readonly timeMs: ArrayLike<number>;
-  readonly noseHeight: ArrayLike<number>;
-  readonly noseSpeed: ArrayLike<number>;
-}
+/** The nose of one jet through time, as the tracks of the jet room tell it. */
+export type NoseTrack = Pick<JetTrack, 'beganMs' | 'endedMs'> & {
+  readonly points: readonly Pick<TrackPoint, 'timeMs' | 'noseHeight' | 'noseSpeed'>[];
+};
 
 /** Series run in parallel with `timeMs`. */
 export interface RampEvidence {
@@ -105,11 +100,10 @@ function onset(ramp: Ramp, track: NoseTrack): RampCause[] {
 
 /** The nose moving through a tip or through the hub between shortly before the ramp and its end. */
 function crossing(ramp: Ramp, track: NoseTrack, disc: Disc): RampCause[] {
-  const from = indexBefore(track.timeMs, ramp.startMs - NOSE_BEFORE);
-  const to = indexBefore(track.timeMs, ramp.endMs);
-  if (to < 0) return [];
-  const began = track.noseHeight[Math.max(0, from)]!;
-  const ended = track.noseHeight[to]!;
+  const last = pointBefore(track, ramp.endMs);
+  if (last === undefined) return [];
+  const began = (pointBefore(track, ramp.startMs - NOSE_BEFORE) ?? track.points[0]!).noseHeight;
+  const ended = last.noseHeight;
   const marks = [topTip(disc), disc.hubHeight, bottomTip(disc)];
   const names = ["the disc's upper tip", 'hub height', "the disc's lower tip"];
   const crossed = marks.flatMap((mark, k) => ((began - mark) * (ended - mark) < 0 ? [names[k]!] : []));
@@ -128,12 +122,12 @@ function crossing(ramp: Ramp, track: NoseTrack, disc: Disc): RampCause[] {
 
 function decay(ramp: Ramp, track: NoseTrack, sunrisesMs: readonly number[]): RampCause[] {
   if (ramp.sense !== 'down' || track.beganMs > ramp.startMs) return [];
-  const from = indexBefore(track.timeMs, ramp.startMs);
-  const to = indexBefore(track.timeMs, ramp.endMs);
-  const lost = from < 0 ? 0 : track.noseSpeed[from]! - track.noseSpeed[to]!;
-  const ended = track.endedMs >= ramp.startMs - NOSE_BEFORE && track.endedMs <= ramp.endMs + NOSE_BEFORE;
+  const before = pointBefore(track, ramp.startMs);
+  const lost = before === undefined ? 0 : before.noseSpeed - pointBefore(track, ramp.endMs)!.noseSpeed;
+  const endedMs = track.endedMs ?? Infinity;
+  const ended = endedMs >= ramp.startMs - NOSE_BEFORE && endedMs <= ramp.endMs + NOSE_BEFORE;
   if (!ended && !(lost >= DECAY)) return [];
-  const how = ended ? `the jet ended at ${clock(track.endedMs)}` : `the jet's nose lost ${lost.toFixed(1)} m/s`;
+  const how = ended ? `the jet ended at ${clock(endedMs)}` : `the jet's nose lost ${lost.toFixed(1)} m/s`;
   const sunrise = sunrisesMs.find((at) => at <= ramp.endMs && at >= ramp.startMs - SUNRISE_BEFORE);
   if (sunrise === undefined) return [{ cause: 'jet-decay', weight: 0.7, words: how }];
   return [{ cause: 'jet-decay', weight: 0.85, words: `${how}, after sunrise at ${clock(sunrise)}` }];
@@ -154,6 +148,10 @@ function change(ramp: Ramp, { timeMs, hubSpeed }: RampEvidence): RampCause[] {
   if (!(rises ? gained > 0 : gained < 0)) return [];
   const words = `the wind at hub height ${rises ? 'rose' : 'fell'} by ${Math.abs(gained).toFixed(1)} m/s`;
   return [{ cause: rises ? 'wind-rises' : 'wind-falls', weight: 0.3, words }];
+}
+
+function pointBefore(track: NoseTrack, atMs: number): NoseTrack['points'][number] | undefined {
+  return track.points.findLast((point) => point.timeMs <= atMs);
 }
 
 /** Last sample at or before a time; -1 for none. */

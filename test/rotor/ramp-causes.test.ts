@@ -22,12 +22,14 @@ const still: RampEvidence = {
   tracks: [],
   sunrisesMs: [],
 };
-const track = (noseHeight: (k: number) => number, noseSpeed: (k: number) => number, more: Partial<NoseTrack> = {}) => ({
+const track = (
+  noseHeight: (k: number) => number,
+  noseSpeed: (k: number) => number,
+  more: Partial<NoseTrack> = {},
+): NoseTrack => ({
   beganMs: START - 300 * MINUTE,
-  endedMs: NaN,
-  timeMs: times,
-  noseHeight: times.map((_, k) => noseHeight(k)),
-  noseSpeed: times.map((_, k) => noseSpeed(k)),
+  endedMs: null,
+  points: times.map((timeMs, k) => ({ timeMs, noseHeight: noseHeight(k), noseSpeed: noseSpeed(k) })),
   ...more,
 });
 const firmest = (sense: 'up' | 'down', evidence: Partial<RampEvidence>) =>
