@@ -15,6 +15,7 @@ export {
   vapourPressureOf,
   virtualTemperature,
 } from './humidity.ts';
+export { bearingTo, distanceBetween, type LatLon } from './geodesy.ts';
 export { hypsometricHeights } from './hypsometric.ts';
 export { fromJsonNumber, toJsonNumber, toJsonNumbers } from './json.ts';
 export { moistAirFactor, saturationOverIce, saturationOverWater } from './vapour.ts';

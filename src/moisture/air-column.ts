@@ -47,21 +47,27 @@ export function airColumn(profile: Profile, surfacePressure = NaN): AirColumn {
     take(column).map((value, position) => ((profile.mark[levels[position]!]! & REJECTING_AIR) === 0 ? value : NaN));
   const temperature = takeAir(profile.temperature);
   const specificHumidity = takeAir(profile.specificHumidity);
-  const { pressure, pressureFrom } = fillPressure(
-    { heightAgl, pressure: take(profile.pressure), temperature, specificHumidity },
+  return completeAir(
+    {
+      heightAgl,
+      pressure: take(profile.pressure),
+      temperature,
+      specificHumidity,
+      u: speed.map((value, k) => eastward(value, direction[k]!)),
+      v: speed.map((value, k) => northward(value, direction[k]!)),
+    },
     { surfacePressure, elevation: profile.station.elevation },
   );
-  return {
-    count: levels.length,
-    heightAgl,
-    pressure,
-    temperature,
-    specificHumidity,
-    u: speed.map((value, k) => eastward(value, direction[k]!)),
-    v: speed.map((value, k) => northward(value, direction[k]!)),
-    density: temperature.map((value, k) => airDensity(value, pressure[k]!, specificHumidity[k]!)),
-    pressureFrom,
-  };
+}
+
+/** Adds pressure where it is missing, and density. */
+export function completeAir(
+  air: Omit<AirColumn, 'count' | 'density' | 'pressureFrom'>,
+  ground: { readonly surfacePressure: number; readonly elevation: number },
+): AirColumn {
+  const { pressure, pressureFrom } = fillPressure(air, ground);
+  const density = air.temperature.map((value, k) => airDensity(value, pressure[k]!, air.specificHumidity[k]!));
+  return { ...air, count: air.heightAgl.length, pressure, density, pressureFrom };
 }
 
 interface Thermal {

@@ -1,7 +1,8 @@
 // What vapour one profile carries, with the reason where it cannot be said.
 
 import type { Profile } from '../profile/index.ts';
-import { airColumn, type AirColumn } from './air-column.ts';
+import type { AirColumn } from './air-column.ts';
+import { humidAir, type HumidityOptions, type HumidityUse } from './humid-air.ts';
 import { moistLayerTop, potentialInstability, thetaEProfile, type PotentialInstability } from './instability.ts';
 import {
   fluxOf,
@@ -12,14 +13,12 @@ import {
   type Transport,
 } from './transport.ts';
 
-export interface MoistureOptions {
+export interface MoistureOptions extends HumidityOptions {
   /** Pa; limits of the layer of `transport` and `precipitableWater`, cut to the data; absent: all of the data. */
   readonly bottomPressure?: number | undefined;
   readonly topPressure?: number | undefined;
   /** Bounds of the jet's layer, m above ground. */
   readonly jetLayer?: { readonly bottom: number; readonly top: number } | undefined;
-  /** Pa at the ground, for profiles without pressure of their own. */
-  readonly surfacePressure?: number | undefined;
 }
 
 /** Numbers are NaN where they could not be had. */
@@ -29,8 +28,11 @@ export interface MoistureNumbers {
   readonly why: string;
   /** Station whose humidity was used; empty where there was none. */
   readonly humidityFrom: string;
-  /** Its age against the wind, s. */
+  /** Its age against the wind, s, and the distance to its station, m; 0 for the profile's own. */
   readonly humidityAgeS: number;
+  readonly humidityDistance: number;
+  /** Standard uncertainty of the humidity, and so of every number that is proportional to it, as a share. */
+  readonly humidityUncertainty: number;
   /** kg/m2 of the layer */
   readonly precipitableWater: number;
   /** Pressure form over the layer, kg/(m s). */
@@ -53,20 +55,14 @@ export interface MoistureNumbers {
 /** m above ground */
 const THREE_KILOMETRES = 3000;
 
-/** Moisture numbers of a profile that carries its own humidity. */
+/**
+ * Moisture numbers of a profile: with its own humidity where it has some at two levels or more, else with the least
+ * uncertain of `options.humidity`. Past the stated age the numbers are not assessable.
+ * @example moistureOf(profile, { jetLayer: jet.core, humidity: soundings }).transport.size
+ */
 export function moistureOf(profile: Profile, options: MoistureOptions = {}): MoistureNumbers {
-  const air = airColumn(profile, options.surfacePressure);
-  return moistureOfAir(air, { id: profile.station.id, ageS: 0 }, options);
-}
-
-/** The same of an air column whose humidity came from `from`. */
-export function moistureOfAir(
-  air: AirColumn,
-  from: { readonly id: string; readonly ageS: number },
-  options: MoistureOptions,
-): MoistureNumbers {
-  const humid = air.specificHumidity.some((value) => value >= 0);
-  const why = whyNot(air, humid);
+  const { air, use, why: dry } = humidAir(profile, options);
+  const why = dry === '' ? whyNot(air) : dry;
   const limits = { bottom: options.bottomPressure, top: options.topPressure };
   const transport = transportByPressure(air, limits);
   const below3Km = transportByHeight(air, { top: THREE_KILOMETRES });
@@ -76,8 +72,10 @@ export function moistureOfAir(
   return {
     status: notAssessable ? 'not-assessable' : 'ok',
     why: why !== '' || !notAssessable ? why : 'fewer than two levels of the layer have humidity, wind and pressure',
-    humidityFrom: humid ? from.id : '',
-    humidityAgeS: humid ? from.ageS : NaN,
+    humidityFrom: use.id,
+    humidityAgeS: use.ageS,
+    humidityDistance: use.distance,
+    humidityUncertainty: use.uncertainty,
     precipitableWater: precipitableWater(air, limits),
     transport,
     below3Km,
@@ -86,19 +84,24 @@ export function moistureOfAir(
     moistTop: moistLayerTop(air.heightAgl, air.specificHumidity),
     thetaE: known(air.heightAgl, thetaE),
     instability: potentialInstability(air.heightAgl, thetaE),
-    notes: notes(air, below3Km.reaches),
+    notes: notes(air, below3Km.reaches, use),
   };
 }
 
-function whyNot(air: AirColumn, humid: boolean): string {
-  if (!humid) return 'no humidity';
+function whyNot(air: AirColumn): string {
   if (!air.u.some((value) => Number.isFinite(value))) return 'no wind';
   if (!air.pressure.some((value) => value > 0)) return 'neither pressure nor temperature to work it out from';
   return '';
 }
 
-function notes(air: AirColumn, reaches: number): string[] {
+function notes(air: AirColumn, reaches: number, use: HumidityUse): string[] {
   const words: string[] = [];
+  if (use.ageS > 0 || use.distance > 0) {
+    const far = Number.isNaN(use.distance) ? 'at an unknown distance' : `${Math.round(use.distance / 1000)} km away`;
+    words.push(
+      `humidity of ${use.id}, ${Math.round(use.ageS / 60)} min old, ${far}: ±${Math.round(100 * use.uncertainty)} %`,
+    );
+  }
   if (air.pressureFrom !== '') words.push(air.pressureFrom);
   if (reaches < THREE_KILOMETRES) words.push(`data end at ${Math.round(reaches)} m, below 3 km`);
   return words;

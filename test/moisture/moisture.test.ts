@@ -84,7 +84,7 @@ describe('moistureOf', () => {
     ['neither pressure nor temperature', { ...sounding, pressure: undefined, temperature: undefined }],
     ['no humidity', { heightAgl: [] }],
     [
-      'fewer than two levels',
+      'humidity at a single level only',
       { heightAgl: [10], speed: [5], direction: [5], pressure: [1e5], specificHumidity: [0.01] },
     ],
   ])('says why it cannot: %s', (why, levels) => {
