@@ -11,7 +11,6 @@ import {
   ratedPower,
   typeOutput,
   type DiscWind,
-  type NoseTrack,
   type Ramp,
   type RampCause,
 } from '../rotor/index.ts';
@@ -98,7 +97,7 @@ function* rampLines(
   site: Site,
 ): Generator<Record<string, unknown>> {
   const timeMs = facts.map((fact) => fact.timeMs);
-  const tracks = noseTracks(station, facts);
+  const tracks = trackJets(facts.map((fact) => ({ stationId: station, timeMs: fact.timeMs, finding: fact.finding })));
   const sunrisesMs = [...new Set(facts.map((fact) => fact.sunriseMs))].filter((ms) => !Number.isNaN(ms));
   const definitions = site.ramps.length > 0 ? site.ramps : USUAL_RAMPS;
   for (const [index, turbine] of turbines.entries()) {
@@ -118,16 +117,6 @@ function* rampLines(
       yield rampLine(station, turbine, ramp, causesOfRamp(ramp, evidence));
     }
   }
-}
-
-function noseTracks(stationId: string, facts: readonly ProfileFacts[]): NoseTrack[] {
-  return trackJets(facts.map(({ timeMs, finding }) => ({ stationId, timeMs, finding }))).map((track) => ({
-    beganMs: track.beganMs,
-    endedMs: track.endedMs ?? NaN,
-    timeMs: track.points.map((point) => point.timeMs),
-    noseHeight: track.points.map((point) => point.noseHeight),
-    noseSpeed: track.points.map((point) => point.noseSpeed),
-  }));
 }
 
 /** A ramp as the contract of `ramps` has it. */
