@@ -104,6 +104,11 @@ const SITE = {
       },
     },
   ],
+  limits: [
+    { name: 'Blade lifts', kind: 'lifting', height_m: 105, speed_mps: 10 },
+    { name: 'Climbing', kind: 'climbing', height_m: 105, speed_mps: 15 },
+  ],
+  ramps: [{ name: '30 % within an hour', share: 0.3, within_minutes: 60 }],
   units: { speed: 'm/s', height: 'm' },
 };
 

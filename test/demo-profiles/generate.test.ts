@@ -3,6 +3,8 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { describe, expect, it } from 'vitest';
 import { demoFiles } from '../../demo-profiles/generate.ts';
+import { bytesSource, readProfiles } from '../../src/ingest/index.ts';
+import { readSite, siteStation } from '../../src/site/index.ts';
 
 const folder = fileURLToPath(new URL('../../demo-profiles/', import.meta.url));
 const WRITTEN_BY_HAND = /^(README\.md|generate\.ts|write\.mjs|making(\/.*)?)$/;
@@ -27,16 +29,29 @@ describe('the demo', () => {
     expect(bytes).toBeLessThan(2e6);
   });
 
-  it('names only files that exist', () => {
-    interface Manifest {
-      readonly opens: string;
-      readonly nights: { id: string; site: string; files: string[]; now: string }[];
-    }
-    const manifest = JSON.parse(new TextDecoder().decode(made.get('manifest.json'))) as Manifest;
+  interface Manifest {
+    readonly opens: string;
+    readonly nights: { id: string; site: string; files: string[]; now: string }[];
+  }
+  const text = (path: string): string => new TextDecoder().decode(made.get(path));
+  const manifest = JSON.parse(text('manifest.json')) as Manifest;
+
+  it('opens at a night that is there', () => {
     expect(manifest.nights.map((night) => night.id)).toContain(manifest.opens);
-    for (const night of manifest.nights) {
-      for (const path of [night.site, ...night.files]) expect(made.has(path), path).toBe(true);
-      expect(Date.parse(night.now)).not.toBeNaN();
+  });
+
+  it.each(manifest.nights)('$id: the site file and every file of profiles read without a problem', async (night) => {
+    const { site, problems } = readSite(text(night.site), night.site);
+    expect(problems).toEqual([]);
+    for (const path of night.files) {
+      let profiles = 0;
+      for await (const reading of readProfiles(bytesSource(path, made.get(path)!), { site: site! })) {
+        expect(reading.problems, path).toEqual([]);
+        profiles += reading.block.profileCount;
+        for (const station of reading.block.stations) expect(siteStation(site!, station.id), path).toBeDefined();
+      }
+      expect(profiles, path).toBeGreaterThan(0);
     }
+    expect(Date.parse(night.now)).not.toBeNaN();
   });
 });
