@@ -29,6 +29,8 @@ const DEFAULT_FILLS: Readonly<Partial<Record<StorageType, number>>> = {
 const UNDECLARED = new Set([-9999, -9999.9, -99_999, -999, -999.9, -999.99, -8888].flatMap((x) => [x, Math.fround(x)]));
 /** Beyond this every number is a fill: 1e20, 1e30 and the like are in use. */
 const HUGE_NUMBER = 1e19;
+/** Below this a number may be one of the undeclared. */
+const LEAST_PLAIN = -900;
 
 /** Reads how the variable's numbers are coded from its attributes. */
 export function codingOf(variable: Variable): Coding {
@@ -85,23 +87,37 @@ export function decodeInto(
   unit: Pick<ParsedUnit, 'scale' | 'offset'>,
   undeclared: Set<number> | null,
 ): void {
-  const { lowest, highest, scale, offset } = coding;
-  const [first = NaN, second = NaN, ...others] = coding.fills;
-  for (let k = 0; k < raw.length; k++) {
-    const stored = raw[k]!;
-    // NaN fails the range, as does what lies outside it.
-    if (!(stored >= lowest && stored <= highest) || stored === first || stored === second || others.includes(stored)) {
-      out[k] = NaN;
-      continue;
+  const low = Math.max(coding.lowest, LEAST_PLAIN);
+  const high = Math.min(coding.highest, HUGE_NUMBER);
+  const isPlain =
+    coding.scale === 1 && coding.offset === 0 && !coding.fills.some((fill) => fill >= low && fill <= high);
+  if (isPlain && raw instanceof Float32Array && out instanceof Float32Array) {
+    // Nearly all values of nearly all files come this way, so it is kept free of everything that they do not need.
+    for (let k = 0; k < raw.length; k++) {
+      const stored = raw[k]!;
+      out[k] =
+        stored >= low && stored <= high ? stored * unit.scale + unit.offset : meant(stored, coding, unit, undeclared);
     }
-    const value = stored * scale + offset;
-    if (value > HUGE_NUMBER || value < -900) {
-      if (Math.abs(value) > HUGE_NUMBER || (undeclared !== null && UNDECLARED.has(value))) {
-        undeclared?.add(value);
-        out[k] = NaN;
-        continue;
-      }
-    }
-    out[k] = value * unit.scale + unit.offset;
+    return;
   }
+  for (let k = 0; k < raw.length; k++) out[k] = meant(raw[k]!, coding, unit, undeclared);
+}
+
+/** One value, NaN when missing. */
+function meant(
+  stored: number,
+  { fills, lowest, highest, scale, offset }: Coding,
+  unit: Pick<ParsedUnit, 'scale' | 'offset'>,
+  undeclared: Set<number> | null,
+): number {
+  // NaN fails the range, as does what lies outside it.
+  if (!(stored >= lowest && stored <= highest) || fills.includes(stored)) return NaN;
+  const value = stored * scale + offset;
+  if (value > HUGE_NUMBER || value < LEAST_PLAIN) {
+    if (Math.abs(value) > HUGE_NUMBER || (undeclared !== null && UNDECLARED.has(value))) {
+      undeclared?.add(value);
+      return NaN;
+    }
+  }
+  return value * unit.scale + unit.offset;
 }
