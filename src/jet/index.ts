@@ -12,3 +12,6 @@ export {
   type FittedOscillation,
   type Oscillation,
 } from './oscillation.ts';
+export { jetLayer, noseAgainst, type Disc, type JetFlank, type JetLayer, type NosePlace } from './jet-layer.ts';
+export { thermalTurn, type ThermalTurn } from './thermal-turn.ts';
+export { turningAt, type Turning, type TurningOptions, type TurningVerdict } from './turning.ts';
