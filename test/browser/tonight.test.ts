@@ -102,13 +102,13 @@ describe('Tonight', () => {
   it('changes field and units, remembers them, and tells the same numbers in the table', async () => {
     const { page, complaints, close } = await openPage(browser);
     await demoShown(page);
-    await page.getByLabel('Show').selectOption({ label: 'wind direction' });
+    await page.getByLabel('Show', { exact: true }).selectOption({ label: 'wind direction' });
     await page.getByText('Display', { exact: true }).click();
-    await page.getByLabel('Speed in').selectOption({ label: 'kt' });
+    await page.getByLabel('Speed in', { exact: true }).selectOption({ label: 'kt' });
     await expect.poll(() => page.locator('h1').innerText()).toMatch(/\d+ kt from the/);
     await page.reload();
     await page.getByRole('heading', { level: 1 }).filter({ hasText: 'nose' }).waitFor();
-    expect(await page.getByLabel('Show').locator('option:checked').innerText()).toBe('wind direction');
+    expect(await page.getByLabel('Show', { exact: true }).locator('option:checked').innerText()).toBe('wind direction');
     expect(await page.locator('h1').innerText()).toMatch(/\d+ kt from the/);
 
     await page.getByRole('button', { name: 'Table' }).click();
@@ -122,7 +122,7 @@ describe('Tonight', () => {
     await close();
   });
 
-  it('shows in the picture the colours that the table’s numbers have', async () => {
+  it('reads under the cursor what the file holds, and the table says the same', async () => {
     const { page, close } = await openPage(browser, { viewport: { width: 1600, height: 900 } });
     await demoShown(page);
     await drop(page, ownNight());
@@ -131,10 +131,18 @@ describe('Tonight', () => {
     // The cursor reads the measured value nearest to it; the nose of the file is 16.0 m/s at 280 m throughout.
     const section = page.getByRole('application');
     const box = (await section.locator('.u-over').boundingBox())!;
-    const height = await page.evaluate(() => 1000);
-    await page.mouse.move(box.x + box.width * 0.5, box.y + box.height * (1 - 280 / height));
+    // The picture reaches up to 1000 m, the top of the file's levels.
+    await page.mouse.move(box.x + box.width * 0.5, box.y + box.height * (1 - 280 / 1000));
     await expect.poll(() => page.locator('.readout').innerText()).toMatch(/280 m at \d\d:\d\d/);
     expect(await page.locator('.readout').innerText()).toContain('16.0 m/s from 200°');
+    await page.getByRole('button', { name: 'Table' }).click();
+    const table = page.getByRole('region', { name: 'Table of wind speed' });
+    await table.waitFor();
+    const layers = await table.locator('thead th').allInnerTexts();
+    // Levels are 40 m apart, so the one at 280 m owns the layer from 260 to 300 m.
+    const column = layers.indexOf('260–300');
+    const cells = await table.locator('tbody tr').first().locator('th, td').allInnerTexts();
+    expect(cells[column]).toBe('16.0');
     await close();
   });
 
@@ -149,9 +157,13 @@ describe('Tonight', () => {
     await page.keyboard.press(',');
     await expect.poll(() => page.locator('header .clock strong').innerText()).not.toBe(clock);
     await page.keyboard.press('+');
-    await expect.poll(() => page.getByLabel('Span').locator('option:checked').innerText()).toBe('as zoomed');
+    await expect
+      .poll(() => page.getByLabel('Span', { exact: true }).locator('option:checked').innerText())
+      .toBe('as zoomed');
     await page.keyboard.press('0');
-    await expect.poll(() => page.getByLabel('Span').locator('option:checked').innerText()).toBe('the night');
+    await expect
+      .poll(() => page.getByLabel('Span', { exact: true }).locator('option:checked').innerText())
+      .toBe('the night');
     expect(complaints).toEqual([]);
     await close();
   });
@@ -178,8 +190,8 @@ describe('Tonight', () => {
   it('has no serious fault for those who cannot see or point, on either page, dark and light', async () => {
     for (const path of ['', '#/feeds']) {
       const { page, close } = await openPage(browser, { path });
-      await page.getByText('Official warnings').waitFor();
-      await page.getByText('Larkmoor Ridge lidar').first().waitFor();
+      if (path === '') await demoShown(page);
+      else await page.getByRole('heading', { name: 'Larkmoor Ridge lidar, lidar' }).waitFor();
       for (const theme of ['dark', 'light']) {
         if (path === '') {
           await page.getByText('Display', { exact: true }).click();

@@ -20,6 +20,15 @@ export interface ReadingJob extends ReadingProgress {
   readonly files: number;
 }
 
+/** What was open and looked at, to come back to. */
+interface Kept {
+  readonly files: readonly OpenFile[];
+  readonly site: { readonly text: string; readonly name: string } | null;
+  readonly demo: string;
+  readonly feedKey: string;
+  readonly atMs: number;
+}
+
 /** Data newer than this are taken for live: the moment looked at then follows the clock. */
 const LIVE_MS = 3 * 3_600_000;
 const CLOCK_TICK_MS = 20_000;
@@ -101,7 +110,7 @@ export class Board {
   /** Opens what a person dropped or chose; the demo gives way to it. */
   async openFiles(chosen: readonly File[]): Promise<void> {
     if (chosen.length === 0) return;
-    const before = { files: this.files, site: this.#siteFile, demo: this.demo };
+    const before = this.#kept();
     const sites: { text: string; name: string }[] = [];
     const profiles: OpenFile[] = [];
     for (const file of chosen) {
@@ -123,27 +132,21 @@ export class Board {
     if (profiles.length > 0) this.lookAtNewest();
     this.notice = {
       words: `Opened ${chosen.map((file) => file.name).join(', ')}.`,
-      undo: () => void this.#goBack(before.files, before.site, before.demo),
+      undo: () => void this.#goBack(before),
     };
     await this.refresh();
   }
 
   /** Closes one file; the others stay. */
   async closeFile(name: string): Promise<void> {
-    const before = this.files;
-    const site = this.#siteFile;
-    const wasDemo = this.demo;
-    await this.#goBack(
-      before.filter((file) => file.name !== name),
-      site,
-      wasDemo,
-    );
-    this.notice = { words: `Closed ${name}.`, undo: () => void this.#goBack(before, site, wasDemo) };
+    const before = this.#kept();
+    await this.#goBack({ ...before, files: before.files.filter((file) => file.name !== name) });
+    this.notice = { words: `Closed ${name}.`, undo: () => void this.#goBack(before) };
   }
 
   /** Reads everything anew, after a change of what the reckoning rests on. */
   async reopen(): Promise<void> {
-    await this.#goBack(this.files, this.#siteFile, this.demo);
+    await this.#goBack(this.#kept());
   }
 
   cancelReading(): void {
@@ -204,17 +207,21 @@ export class Board {
     if (question === this.#questions) this.night = night;
   }
 
-  async #goBack(
-    files: readonly OpenFile[],
-    site: { readonly text: string; readonly name: string } | null,
-    demo: string,
-  ): Promise<void> {
+  #kept(): Kept {
+    const { files, demo, feedKey, atMs } = this;
+    return { files, site: this.#siteFile, demo, feedKey, atMs };
+  }
+
+  /** Reads what was open again and looks where the reader looked. */
+  async #goBack({ files, site, demo, feedKey, atMs }: Kept): Promise<void> {
     this.notice = null;
     await this.#openSite(site);
     this.files = [];
     this.demo = demo;
+    this.feedKey = feedKey;
     await this.#read(files);
-    if (this.feed === undefined || !(this.atMs >= this.feed.firstMs)) this.lookAtNewest();
+    if (this.feedKey === feedKey && Number.isFinite(atMs)) this.atMs = atMs;
+    else this.lookAtNewest();
     await this.refresh();
   }
 

@@ -2,7 +2,7 @@
 
 import { toHeightUnit } from '../../air/index.ts';
 import type { NightState } from '../../desk/index.ts';
-import type { JetTrack } from '../../jet/index.ts';
+import type { JetTrack, TrackPoint } from '../../jet/index.ts';
 import type { DisplayUnits } from '../../site/index.ts';
 import { STALE_INTERVALS } from './answers.ts';
 import { compassWords, heightText, inHundred, plain, speedText } from './numbers.ts';
@@ -16,6 +16,8 @@ export interface Piece {
 
 /** A nose that moves less than this, m an hour, stays where it is. */
 const STEADY_HEIGHT = 15;
+/** A nose on the levels and one on the smoothed profile are the same when they are nearer than this, m. */
+const LEAST_NEARNESS = 100;
 
 export function story(night: NightState, stepMs: number, units: DisplayUnits, times: TimeWords): Piece[] {
   const last = night.timeMs.length - 1;
@@ -27,7 +29,7 @@ export function story(night: NightState, stepMs: number, units: DisplayUnits, ti
   const pieces: Piece[] = [];
   if (stale) pieces.push({ text: `The last profile is ${durationWords(ageMs)} old. `, weight: 'call' });
   const track = currentTrack(night);
-  if (track !== undefined) pieces.push(...trackPieces(track, units, times, stale));
+  if (track !== undefined) pieces.push(...trackPieces(track, noseNow(night, track), units, times, stale));
   else pieces.push(...noTrackPieces(night, times));
   return pieces;
 }
@@ -39,8 +41,20 @@ function currentTrack(night: NightState): JetTrack | undefined {
     .sort((a, b) => b.points.at(-1)!.noseSpeed - a.points.at(-1)!.noseSpeed)[0];
 }
 
-function trackPieces(track: JetTrack, units: DisplayUnits, times: TimeWords, stale: boolean): Piece[] {
-  const { noseHeight, noseSpeed, noseDirection, confidence, timeMs } = track.points.at(-1)!;
+type Nose = Pick<TrackPoint, 'noseHeight' | 'noseSpeed' | 'noseDirection'>;
+
+/** The nose that the answers below the picture show, where it is the track's; else the track's own last point. */
+function noseNow(night: NightState, track: JetTrack): Nose {
+  const point = track.points.at(-1)!;
+  const jet = night.findings.at(-1)?.jets[0];
+  const same = point.timeMs === night.timeMs.at(-1) && jet !== undefined;
+  const near = same && Math.abs(jet.noseHeight - point.noseHeight) < Math.max(LEAST_NEARNESS, 3 * point.heightSpread);
+  return near ? jet : point;
+}
+
+function trackPieces(track: JetTrack, nose: Nose, units: DisplayUnits, times: TimeWords, stale: boolean): Piece[] {
+  const { confidence, timeMs } = track.points.at(-1)!;
+  const { noseHeight, noseSpeed, noseDirection } = nose;
   const from = compassWords(noseDirection);
   return [
     {
