@@ -3,8 +3,8 @@
 // The limits are common practice, without source: wide enough that no real jet, tornado-free gust front or polar night is
 // lost, narrow enough to catch unit slips, decoding slips and lone wild gates.
 
-import type { ProfileBlock } from '../profile/index.ts';
 import { MARK } from '../profile/index.ts';
+import type { Screened } from './series.ts';
 
 /** Highest credible speed, m/s, at a height above ground: 60 at the ground, growing to 150 at 10 km and above. */
 export function highestSpeed(heightAgl: number): number {
@@ -21,7 +21,7 @@ const HIGHEST_HUMIDITY = 0.045;
  * Adds `impossible` where wind, vertical speed or pressure is beyond its limit, and `air-impossible` where only temperature
  * or humidity is. Missing values pass.
  */
-export function grossLimits(block: ProfileBlock, marks: Uint32Array): void {
+export function grossLimits({ block }: Screened, marks: Uint32Array): void {
   const { heightAgl, speed, direction, verticalSpeed, pressure, temperature, specificHumidity } = block;
   for (let k = 0; k < marks.length; k++) {
     if (

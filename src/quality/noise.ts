@@ -1,0 +1,41 @@
+// How noisy a series is, from the differences of neighbours: most pairs are sound, however wild a few gates are.
+
+import { REACH, type Nodes } from './nodes.ts';
+import { quantile } from './series.ts';
+
+/** Height of a layer that gets a noise figure of its own, m. */
+const LAYER = 500;
+/** Layers with fewer pairs share one figure. */
+const FEWEST_PAIRS = 40;
+/** The quantile that is taken: low, so that a third of bad pairs does no harm. */
+const QUANTILE = 0.35;
+/** That quantile of the length of the difference of two vectors whose components have standard deviation 1 (Rayleigh). */
+const OF_UNIT = 2 * Math.sqrt(-Math.log(1 - QUANTILE));
+/** Bounds of the standard deviation of a component, m/s: no instrument is better, none worth reading worse. */
+const LEAST = 0.35;
+const MOST = 2;
+
+/** Standard deviation of a wind component, m/s, as a function of height above ground, m. */
+export function noiseOf(nodes: Nodes): (height: number) => number {
+  const { count, like, u, v, height } = nodes;
+  const layers: number[][] = [];
+  const all: number[] = [];
+  const span = 2 * REACH + 1;
+  for (let n = 0; n < count; n++) {
+    const next = like[n * span + REACH + 1]!;
+    if (next < 0) continue;
+    const difference = Math.hypot(u[next]! - u[n]!, v[next]! - v[n]!);
+    all.push(difference);
+    const layer = Math.max(0, Math.floor(height[n]! / LAYER));
+    (layers[layer] ??= []).push(difference);
+  }
+  const deviation = (differences: number[]): number => {
+    const figure = quantile(differences, QUANTILE) / OF_UNIT;
+    return Number.isNaN(figure) ? 1 : Math.min(MOST, Math.max(LEAST, figure));
+  };
+  const whole = deviation(all);
+  const figures = Array.from(layers, (pairs) =>
+    pairs !== undefined && pairs.length >= FEWEST_PAIRS ? deviation(pairs) : whole,
+  );
+  return (at) => figures[Math.max(0, Math.floor(at / LAYER))] ?? whole;
+}

@@ -1,0 +1,191 @@
+// Continuity in time and height: does a value fit the profiles before and after? After the idea of Weber & Wuertz (1991,
+// NOAA Tech. Memo. ERL WPL-206): points that agree with their neighbours join into regions, the largest region is right,
+// the rest is held against it. Ours grows the region by prediction from its edge, so that a patch of bad gates inside a
+// layer, as migrating birds leave it, does not creep in by its mildest members.
+
+import { MARK } from '../profile/index.ts';
+import { noiseOf } from './noise.ts';
+import { nodesOf, REACH, type Nodes } from './nodes.ts';
+import { predict, type Prediction } from './predict.ts';
+import type { Screened } from './series.ts';
+
+/** Two gates of like height agree within so many standard deviations of a component ... */
+const AGREEING = 2.6;
+/** ... and this much for each second between them, m/s2: 1 m/s in half an hour. */
+const CHANGE = 1 / 1800;
+/** A seed agrees with this share of the gates of like height around it, of which there are so many at least. */
+const SEED_SHARE = 0.8;
+const FEWEST_NEIGHBOURS = 3;
+/** Seeds one above the other join across this shear at most, 1/s: the strongest of a stable surface layer. */
+const STRONGEST_SHEAR = 0.12;
+/** A gate fits its prediction within so many standard deviations, and this at least, m/s. */
+const FITTING = 3.2;
+const LEAST_FIT = 2;
+/** What still fits while the region grows, in steps: the best fitting first. */
+const LIMITS = [0.5, 0.7, 0.9];
+/** A region that fills this share of its profiles is weather, a front, not a patch. */
+const WEATHER_SHARE = 0.6;
+/** So many profiles near in time are needed to tell which of them is wrong. */
+export const FEWEST_PROFILES = 3;
+/** Fewer seeds are no region: each is judged for itself. */
+const SMALLEST_REGION = 8;
+const MOST_ROUNDS = 40;
+const SPAN = 2 * REACH + 1;
+
+/** Adds `time-jump` to levels that contradict the largest consistent region of their series. */
+export function timeContinuity({ block, series }: Screened, marks: Uint32Array): void {
+  for (const one of series) {
+    if (one.profiles.length < FEWEST_PROFILES) continue;
+    const nodes = nodesOf(block, marks, one);
+    const fits = new Continuity(nodes).judge();
+    for (let n = 0; n < nodes.count; n++) if (fits[n] === 0) marks[nodes.level[n]!]! |= MARK['time-jump'];
+  }
+}
+
+class Continuity {
+  readonly #nodes: Nodes;
+  /** Standard deviation of a component at each node, m/s. */
+  readonly #noise: Float64Array;
+  /** 1: trusted. */
+  readonly #member: Uint8Array;
+  /** Last known misses of each node, and whether its surroundings have changed since. */
+  readonly #missed: Float64Array;
+  readonly #isOld: Uint8Array;
+  readonly #prediction: Prediction = { u: NaN, v: NaN, distance: NaN };
+
+  constructor(nodes: Nodes) {
+    this.#nodes = nodes;
+    const noise = noiseOf(nodes);
+    this.#noise = Float64Array.from(nodes.height.subarray(0, nodes.count), noise);
+    this.#member = new Uint8Array(nodes.count);
+    this.#missed = new Float64Array(nodes.count);
+    this.#isOld = new Uint8Array(nodes.count).fill(1);
+  }
+
+  /** 1 for a node that fits or that nothing speaks against, 0 for one that contradicts. */
+  judge(): Uint8Array {
+    const { count } = this.#nodes;
+    const fits = new Uint8Array(count).fill(1);
+    const open = Uint32Array.from({ length: count }, (_, n) => n);
+    this.#regions().forEach((members, rank) => {
+      const rest = members.filter((n) => this.#member[n] === 0);
+      if (rest.length === 0) return;
+      if (rank > 0 && this.#contradicts(rest)) {
+        for (const n of rest) fits[n] = 0;
+        return;
+      }
+      for (const n of rest) this.#trust(n);
+      this.#grow(open, fits);
+    });
+    for (let n = 0; n < count; n++) if (this.#member[n] === 0 && this.#misses(n) > 1) fits[n] = 0;
+    return fits;
+  }
+
+  /** Seeds joined into regions, the largest first. */
+  #regions(): number[][] {
+    const { count, start, profile, height, like, u, v } = this.#nodes;
+    const seed = new Uint8Array(count);
+    for (let n = 0; n < count; n++) seed[n] = this.#isSeed(n) ? 1 : 0;
+    const regions: number[][] = [];
+    const taken = new Uint8Array(count);
+    for (let first = 0; first < count; first++) {
+      if (seed[first] === 0 || taken[first] === 1) continue;
+      const members = [first];
+      taken[first] = 1;
+      const join = (m: number, allowed: number, n: number): void => {
+        if (m < 0 || seed[m] === 0 || taken[m] === 1 || Math.hypot(u[n]! - u[m]!, v[n]! - v[m]!) > allowed) return;
+        taken[m] = 1;
+        members.push(m);
+      };
+      for (const n of members) {
+        for (let d = -REACH; d <= REACH; d++) {
+          const m = like[n * SPAN + REACH + d]!;
+          if (d !== 0 && m >= 0) join(m, this.#allowed(n, m), n);
+        }
+        const i = profile[n]!;
+        for (const m of [n - 1, n + 1]) {
+          if (m < start[i]! || m >= start[i + 1]!) continue;
+          join(m, AGREEING * this.#noise[n]! + STRONGEST_SHEAR * Math.abs(height[m]! - height[n]!), n);
+        }
+      }
+      regions.push(members);
+    }
+    return regions.filter((members) => members.length >= SMALLEST_REGION).sort((a, b) => b.length - a.length);
+  }
+
+  /** Whether a node goes on like the gates of its height before and after. */
+  #isSeed(n: number): boolean {
+    const { like, u, v } = this.#nodes;
+    let neighbours = 0;
+    let agreeing = 0;
+    for (let d = -REACH; d <= REACH; d++) {
+      const m = like[n * SPAN + REACH + d]!;
+      if (d === 0 || m < 0) continue;
+      neighbours++;
+      if (Math.hypot(u[n]! - u[m]!, v[n]! - v[m]!) <= this.#allowed(n, m)) agreeing++;
+    }
+    return neighbours >= FEWEST_NEIGHBOURS && agreeing >= SEED_SHARE * neighbours;
+  }
+
+  /** What two gates of like height may differ by, m/s. */
+  #allowed(n: number, m: number): number {
+    const { timeMs, profile } = this.#nodes;
+    const seconds = Math.abs(timeMs[profile[n]!]! - timeMs[profile[m]!]!) / 1000;
+    return AGREEING * this.#noise[n]! + CHANGE * seconds;
+  }
+
+  /** Whether a smaller region stands against the accepted ones around it without being weather of its own. */
+  #contradicts(members: readonly number[]): boolean {
+    let judged = 0;
+    let missing = 0;
+    const filled = new Map<number, number>();
+    const { profile, start } = this.#nodes;
+    for (const n of members) {
+      filled.set(profile[n]!, (filled.get(profile[n]!) ?? 0) + 1);
+      const misses = this.#misses(n);
+      if (Number.isNaN(misses)) continue;
+      judged++;
+      if (misses > 1) missing++;
+    }
+    if (missing <= judged / 2) return false;
+    let share = 0;
+    for (const [i, gates] of filled) share += gates / (start[i + 1]! - start[i]!);
+    return share / filled.size < WEATHER_SHARE;
+  }
+
+  /** Takes in what the region predicts, round by round from its edge, until nothing more fits. */
+  #grow(nodes: Uint32Array, fits: Uint8Array): void {
+    let open = nodes.filter((n) => this.#member[n] === 0 && fits[n] === 1);
+    for (const limit of LIMITS) {
+      for (let round = 0; round < MOST_ROUNDS; round++) {
+        const joining = open.filter((n) => this.#misses(n) <= limit);
+        if (joining.length === 0) break;
+        for (const n of joining) this.#trust(n);
+        open = open.filter((n) => this.#member[n] === 0);
+      }
+    }
+  }
+
+  #trust(n: number): void {
+    this.#member[n] = 1;
+    // The predictions around it are out of date.
+    const { like, profile, start } = this.#nodes;
+    for (let d = -REACH; d <= REACH; d++) {
+      const centre = like[n * SPAN + REACH + d]!;
+      if (centre < 0) continue;
+      const i = profile[centre]!;
+      const end = Math.min(start[i + 1]!, centre + REACH + 1);
+      for (let m = Math.max(start[i]!, centre - REACH); m < end; m++) this.#isOld[m] = 1;
+    }
+  }
+
+  /** Distance of a node from its prediction as a multiple of what still fits; NaN where the region is too far away. */
+  #misses(n: number): number {
+    if (this.#isOld[n] === 1) {
+      predict(this.#nodes, this.#member, n, this.#prediction);
+      this.#missed[n] = this.#prediction.distance / Math.max(LEAST_FIT, FITTING * this.#noise[n]!);
+      this.#isOld[n] = 0;
+    }
+    return this.#missed[n]!;
+  }
+}
