@@ -5,7 +5,7 @@ import type { LightSpan } from '../air/index.ts';
 import { lightSpans } from '../air/index.ts';
 import { criteriaOf, findJets, trackJets, type Criteria, type JetFinding, type JetTrack } from '../jet/index.ts';
 import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
-import { profileAt, type Profile, type ProfileBlock } from '../profile/index.ts';
+import { profileAt, profileRange, type Profile, type ProfileBlock } from '../profile/index.ts';
 import { screen, type FeedScreening } from '../quality/index.ts';
 import { windOnDisc, type DiscWind } from '../rotor/index.ts';
 import { siteStation, type Site, type TurbineType } from '../site/index.ts';
@@ -62,10 +62,15 @@ interface Screened {
   readonly findings: Map<string, (JetFinding | undefined)[]>;
 }
 
+/** Screens look at neighbours: so much of the time before a night is given to them, ms. */
+const LEAD_MS = 3 * 3_600_000;
+
 export class Desk {
   readonly site: Site;
   readonly #store: FeedStore;
   readonly #screened = new Map<string, Screened>();
+  /** The night last asked for, by feed. */
+  readonly #nights = new Map<string, { raw: ProfileBlock; from: number; to: number; screened: Screened }>();
 
   constructor(site: Site) {
     this.site = site;
@@ -102,17 +107,14 @@ export class Desk {
 
   /** The night of a feed as known at a moment: nothing later than `atMs` is looked at. Null where there is no such feed. */
   night(atMs: number, question: NightQuestion): NightState | null {
-    const screened = this.#screenedFeed(question.feed);
+    const raw = this.#store.block(question.feed);
     const feed = this.#store.names().find((name) => name.key === question.feed);
-    if (screened === null || feed === undefined) return null;
-    const { block } = screened;
-    const window = nightWindow(atMs, feed.station, block.timeMs);
+    if (raw === null || feed === undefined) return null;
+    const window = nightWindow(atMs, feed.station, raw.timeMs);
     const criteria = criteriaOf(question.criteria ?? this.site.criteria);
-    const indices: number[] = [];
-    for (let index = 0; index < block.profileCount; index++) {
-      const timeMs = block.timeMs[index]!;
-      if (timeMs >= window.startMs && timeMs <= atMs) indices.push(index);
-    }
+    const screened = this.#screenedNight(question.feed, raw, window.startMs, atMs);
+    const { block } = screened;
+    const indices = [...block.timeMs.keys()].filter((index) => block.timeMs[index]! >= window.startMs);
     const findings = indices.map((index) => this.#finding(screened, index, criteria));
     const profiles = indices.map((index) => profileAt(block, index));
     const timed = findings.map((finding, k) => ({
@@ -146,6 +148,19 @@ export class Desk {
     return screened;
   }
 
+  /** A night as the screens see it at a moment: the profiles from shortly before it up to then, and none later. */
+  #screenedNight(key: string, raw: ProfileBlock, startMs: number, atMs: number): Screened {
+    const from = countUntil(raw.timeMs, startMs - LEAD_MS);
+    const to = Math.max(from, countUntil(raw.timeMs, atMs));
+    const known = this.#nights.get(key);
+    if (known?.raw === raw && known.from === from && known.to === to) return known.screened;
+    const part = profileRange(raw, from, to);
+    const { block, feeds } = screen(part, { site: this.site });
+    const screened = { raw: part, block, screening: feeds, findings: new Map() };
+    this.#nights.set(key, { raw, from, to, screened });
+    return screened;
+  }
+
   #finding({ block, findings }: Screened, index: number, criteria: Criteria): JetFinding {
     let known = findings.get(criteria.name);
     if (known === undefined) {
@@ -158,6 +173,17 @@ export class Desk {
     });
     return known[index];
   }
+}
+
+/** How many of the ascending times are at or before a moment. */
+function countUntil(timeMs: Float64Array, moment: number): number {
+  let [low, high] = [0, timeMs.length];
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (timeMs[middle]! <= moment) low = middle + 1;
+    else high = middle;
+  }
+  return low;
 }
 
 function coreOf(finding: JetFinding): { bottom: number; top: number } | undefined {

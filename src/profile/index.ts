@@ -23,6 +23,7 @@ export {
 } from './marks.ts';
 export { concatBlocks } from './concat.ts';
 export { pickProfiles, type Pick } from './pick.ts';
+export { profileRange } from './range.ts';
 export { withHeights, type HeightInput } from './heights.ts';
 export { INSTRUMENTS, sameStation, unplacedStation, type Instrument, type Station } from './station.ts';
 export { gatherWind, gatherWindAt, windColumn, type WindColumn } from './usable.ts';

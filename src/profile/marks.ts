@@ -34,6 +34,7 @@ const MEANINGS = [
   ['air-impossible', 'reject-air', 'temperature or humidity lies outside what the atmosphere can do'],
   ['air-source-rejects', 'reject-air', 'the source itself marks temperature or humidity as bad'],
   ['height-worked-out', 'note', 'the height was worked out from the pressure'],
+  ['contested', 'doubt', 'the value agrees with some gates around it and contradicts the larger part'],
 ] as const;
 
 export type MarkName = (typeof MEANINGS)[number][0];

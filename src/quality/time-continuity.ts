@@ -5,7 +5,7 @@
 
 import { MARK } from '../profile/index.ts';
 import { noiseOf } from './noise.ts';
-import { nodesOf, REACH, type Nodes } from './nodes.ts';
+import { LONGEST_GAP_MS, nodesOf, REACH, type Nodes } from './nodes.ts';
 import { predict, type Prediction } from './predict.ts';
 import type { Screened } from './series.ts';
 
@@ -31,14 +31,26 @@ export const FEWEST_PROFILES = 3;
 const SMALLEST_REGION = 8;
 const MOST_ROUNDS = 40;
 const SPAN = 2 * REACH + 1;
+/** A layer of the newest profiles has company in so many gates, each within this shear of the next, 1/s. */
+const LAYER_GATES = 4;
+const LAYER_SHEAR = 0.04;
 
-/** Adds `time-jump` to levels that contradict the largest consistent region of their series. */
+/** What is held of a node; `fits` also where nothing speaks against it. */
+const VERDICT = { contradicts: 0, fits: 1, contested: 2 } as const;
+
+/**
+ * Adds `time-jump` to levels that contradict the largest consistent region of their series and have no company of their own;
+ * with company, a smaller region or a layer of the newest profiles, they are `contested`: what is new is not yet wrong.
+ */
 export function timeContinuity({ block, series }: Screened, marks: Uint32Array): void {
   for (const one of series) {
     if (one.profiles.length < FEWEST_PROFILES) continue;
     const nodes = nodesOf(block, marks, one);
-    const fits = new Continuity(nodes).judge();
-    for (let n = 0; n < nodes.count; n++) if (fits[n] === 0) marks[nodes.level[n]!]! |= MARK['time-jump'];
+    const verdicts = new Continuity(nodes).judge();
+    for (let n = 0; n < nodes.count; n++) {
+      if (verdicts[n] === VERDICT.contradicts) marks[nodes.level[n]!]! |= MARK['time-jump'];
+      else if (verdicts[n] === VERDICT.contested) marks[nodes.level[n]!]! |= MARK.contested;
+    }
   }
 }
 
@@ -62,23 +74,55 @@ class Continuity {
     this.#isOld = new Uint8Array(nodes.count).fill(1);
   }
 
-  /** 1 for a node that fits or that nothing speaks against, 0 for one that contradicts. */
+  /** What is to be held of each node, as in VERDICT. */
   judge(): Uint8Array {
     const { count } = this.#nodes;
-    const fits = new Uint8Array(count).fill(1);
+    const verdicts = new Uint8Array(count).fill(VERDICT.fits);
     const open = Uint32Array.from({ length: count }, (_, n) => n);
     this.#regions().forEach((members, rank) => {
       const rest = members.filter((n) => this.#member[n] === 0);
       if (rest.length === 0) return;
       if (rank > 0 && this.#contradicts(rest)) {
-        for (const n of rest) fits[n] = 0;
+        for (const n of rest) verdicts[n] = VERDICT.contested;
         return;
       }
       for (const n of rest) this.#trust(n);
-      this.#grow(open, fits);
+      this.#grow(open, verdicts);
     });
-    for (let n = 0; n < count; n++) if (this.#member[n] === 0 && this.#misses(n) > 1) fits[n] = 0;
-    return fits;
+    for (let n = 0; n < count; n++) {
+      if (verdicts[n] === VERDICT.fits && this.#member[n] === 0 && this.#misses(n) > 1) {
+        verdicts[n] = VERDICT.contradicts;
+      }
+    }
+    this.#spareTheNewest(verdicts);
+    return verdicts;
+  }
+
+  /** Layers of the last profiles before a gap or the end that agree within themselves are contested, not wrong. */
+  #spareTheNewest(verdicts: Uint8Array): void {
+    const { start, timeMs } = this.#nodes;
+    const last = timeMs.length - 1;
+    for (let i = 0; i <= last; i++) {
+      const isEnd = i === last || timeMs[i + 1]! - timeMs[i]! > LONGEST_GAP_MS;
+      if (!isEnd) continue;
+      for (let j = Math.max(0, i - REACH + 1); j <= i; j++) this.#spareLayers(start[j]!, start[j + 1]!, verdicts);
+    }
+  }
+
+  #spareLayers(from: number, to: number, verdicts: Uint8Array): void {
+    const { u, v, height } = this.#nodes;
+    let first = from;
+    for (let n = from; n <= to; n++) {
+      const wrong = n < to && verdicts[n] === VERDICT.contradicts;
+      const goesOn =
+        wrong &&
+        n > first &&
+        Math.hypot(u[n]! - u[n - 1]!, v[n]! - v[n - 1]!) <=
+          AGREEING * this.#noise[n]! + LAYER_SHEAR * (height[n]! - height[n - 1]!);
+      if (goesOn) continue;
+      if (n - first >= LAYER_GATES) verdicts.fill(VERDICT.contested, first, n);
+      first = wrong ? n : n + 1;
+    }
   }
 
   /** Seeds joined into regions, the largest first. */
@@ -154,8 +198,8 @@ class Continuity {
   }
 
   /** Takes in what the region predicts, round by round from its edge, until nothing more fits. */
-  #grow(nodes: Uint32Array, fits: Uint8Array): void {
-    let open = nodes.filter((n) => this.#member[n] === 0 && fits[n] === 1);
+  #grow(nodes: Uint32Array, verdicts: Uint8Array): void {
+    let open = nodes.filter((n) => this.#member[n] === 0 && verdicts[n] === VERDICT.fits);
     for (const limit of LIMITS) {
       for (let round = 0; round < MOST_ROUNDS; round++) {
         const joining = open.filter((n) => this.#misses(n) <= limit);
