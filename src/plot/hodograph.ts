@@ -36,24 +36,38 @@ export interface HodographPlace {
 }
 
 /** Speeds, in the reader's unit, that the rings stand at; the last is the outer one. */
-export function hodographRings(fastest: number, unit: SpeedUnit): number[] {
+function hodographRings(fastest: number, unit: SpeedUnit): number[] {
   const shown = toSpeedUnit(fastest, unit);
-  const step = [2, 5, 10, 20, 50].find((candidate) => shown <= 4 * candidate) ?? 100;
+  const step = [2, 5, 10, 20, 50].find((candidate) => shown <= 5 * candidate) ?? 100;
   const count = Math.max(2, Math.ceil(shown / step - 1e-9));
   return Array.from({ length: count }, (_, k) => (k + 1) * step);
+}
+
+/** Where winds lie on a hodograph, for what is laid over it, such as the wind under the cursor. */
+export interface HodographScale {
+  /** Speeds of the rings in the reader's unit; the last is the outer one. */
+  readonly rings: readonly number[];
+  /** Device pixels of a wind: m/s and degrees it comes from. */
+  readonly point: (speed: number, direction: number) => [x: number, y: number];
+}
+
+export function hodographScale(data: HodographData, place: HodographPlace): HodographScale {
+  const winds = data.profile === null ? [] : windsOf(data.profile, data.ceiling);
+  const rings = ringsFor(data, winds, place);
+  const scale = place.radius / rings[rings.length - 1]!;
+  return {
+    rings,
+    point: (speed, direction) => {
+      const shown = toSpeedUnit(speed, place.unit) * scale;
+      return [place.x + eastward(shown, direction), place.y - northward(shown, direction)];
+    },
+  };
 }
 
 export function drawHodograph(pen: Pen, data: HodographData, place: HodographPlace, look: Look): void {
   const { theme, ratio } = look;
   const winds = data.profile === null ? [] : windsOf(data.profile, data.ceiling);
-  const rings = ringsFor(data, winds, place);
-  const outer = rings[rings.length - 1]!;
-  const scale = place.radius / outer;
-  const point = (speed: number, direction: number): [number, number] => {
-    const shown = toSpeedUnit(speed, place.unit) * scale;
-    return [place.x + eastward(shown, direction), place.y - northward(shown, direction)];
-  };
-
+  const { rings, point } = hodographScale(data, place);
   drawRings(pen, rings, place, look);
   if (data.trail !== null && data.trail !== undefined) {
     strokePath(pen, data.trail, point, theme.soft, ratio);

@@ -11,7 +11,14 @@ export {
   type PixelRule,
   type ShownUnit,
 } from './fields.ts';
-export { drawHodograph, hodographRings, type HodographData, type HodographPlace, type WindPath } from './hodograph.ts';
+export {
+  drawHodograph,
+  hodographScale,
+  type HodographData,
+  type HodographPlace,
+  type HodographScale,
+  type WindPath,
+} from './hodograph.ts';
 export { drawLegend, legendOf, type Legend } from './legend.ts';
 export { drawNightStrip, type StripStyle } from './night-strip.ts';
 export { SectionPainter, type SectionPaint } from './paint-section.ts';
@@ -33,6 +40,7 @@ export {
   profileOptions,
   sectionOptions,
   showCursor,
+  showExtent,
   type ProfileAxesOptions,
   type SectionAxesOptions,
 } from './section-axes.ts';

@@ -1,7 +1,7 @@
 // The current profile beside the section: speed across, the section's own height axis up.
 
 import { REJECTING, type Profile } from '../profile/index.ts';
-import { within, writeText, xPixel, yPixel, type Frame, type Look, type Pen } from './pen.ts';
+import { setFont, within, writeText, xPixel, yPixel, type Frame, type Look, type Pen } from './pen.ts';
 import { scaleColour, type ColourScale, type ValueRange } from './scales.ts';
 
 export interface ProfileLine {
@@ -139,7 +139,11 @@ function labelProfile(
   });
   if (inView.length === 0) return NaN;
   const fastest = inView.reduce((best, k) => (speed[k]! > speed[best]! ? k : best));
-  const x = Math.min(xPixel(frame, speed[fastest]!) + 11 * look.ratio, frame.left + frame.width);
-  writeText(pen, look, label, x, lineOf(fastest), { colour, weight, baseline: 'middle', rimmed: true });
+  const at = xPixel(frame, speed[fastest]!);
+  const beside = 11 * look.ratio;
+  const wide = setFont(pen, look, 13, weight).measureText(label).width;
+  const fits = at + beside + wide <= frame.left + frame.width;
+  const style = { colour, weight, baseline: 'middle', rimmed: true, align: fits ? 'left' : 'right' } as const;
+  writeText(pen, look, label, fits ? at + beside : at - beside, lineOf(fastest), style);
   return lineOf(fastest);
 }

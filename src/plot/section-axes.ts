@@ -123,6 +123,14 @@ export function emptyData(low: number, high: number): uPlot.AlignedData {
   ];
 }
 
+/** Brings a section to another extent in one redraw. */
+export function showExtent(chart: uPlot, { startMs, endMs, bottom, top }: SectionExtent): void {
+  chart.batch(() => {
+    chart.setScale('x', { min: startMs, max: endMs });
+    chart.setScale('height', { min: bottom, max: top });
+  });
+}
+
 /** Moves a panel's cursor to a height, and to a place across if one is given; null takes it away. Nothing is redrawn. */
 export function showCursor(chart: uPlot, at: { readonly x?: number; readonly height: number } | null): void {
   if (at === null) {
@@ -148,8 +156,8 @@ function panelOptions({
 
 function panelHooks({ drawUnder, drawOver, onCursor }: PanelOptions, xScale: string): uPlot.Hooks.Arrays {
   return {
-    drawClear: [(chart) => drawUnder(chart.ctx, frameOf(chart, xScale, 'height'))],
-    draw: [(chart) => drawOver(chart.ctx, frameOf(chart, xScale, 'height'))],
+    drawClear: [(chart) => keepStyle(chart.ctx, () => drawUnder(chart.ctx, frameOf(chart, xScale, 'height')))],
+    draw: [(chart) => keepStyle(chart.ctx, () => drawOver(chart.ctx, frameOf(chart, xScale, 'height')))],
     setCursor: [
       (chart) => {
         const { left = -1, top = -1 } = chart.cursor;
@@ -158,4 +166,11 @@ function panelHooks({ drawUnder, drawOver, onCursor }: PanelOptions, xScale: str
       },
     ],
   };
+}
+
+/** The library remembers what style it set last and does not set it again: it must find it as it left it. */
+function keepStyle(context: CanvasRenderingContext2D, draw: () => void): void {
+  context.save();
+  draw();
+  context.restore();
 }

@@ -13,7 +13,7 @@ export interface BarbTiles {
 }
 
 const MINUTE_MS = 60_000;
-const TIMES_MS = [1, 2, 5, 10, 15, 20, 30, 60, 120, 180, 360, 720, 1440].map((minutes) => minutes * MINUTE_MS);
+const TIMES_MS = [1, 2, 5, 10, 20, 30, 60, 120, 180, 360, 720, 1440].map((minutes) => minutes * MINUTE_MS);
 const HEIGHTS = [5, 10, 20, 25, 50, 75, 100, 125, 150, 200, 250, 300, 400, 500, 750, 1000, 1500, 2000];
 const THREE_HOURS_MS = 180 * MINUTE_MS;
 
@@ -28,15 +28,20 @@ export function pickBarbs(winds: WindLookup, frame: Frame, look: Look, tiles: Ba
   const picked: MeasuredWind[] = [];
   if (!(tileMs <= longestMs)) return picked;
   const firstTile = Math.ceil(frame.xLow / tileMs - 0.5);
+  let lastMs = -Infinity;
   for (let tile = firstTile; (tile + 0.5) * tileMs <= frame.xHigh; tile++) {
     const middleMs = (tile + 0.5) * tileMs;
     const profile = winds.profileNear(middleMs, tileMs / 2);
     if (profile === null) continue;
+    // Profiles on either side of a tile's edge would run into each other.
+    const timeMs = profile.block.timeMs[profile.index]!;
+    if (timeMs - lastMs < 0.6 * tileMs) continue;
+    lastMs = timeMs;
     let lastHeight = -Infinity;
     for (let row = Math.floor(frame.yLow / tileHeight); row * tileHeight < frame.yHigh; row++) {
       const middle = (row + 0.5) * tileHeight;
       const wind = WindLookup.levelNear(profile.block, profile.index, middle, tileHeight / 2);
-      // Levels on either side of a tile's edge would run into each other.
+      // The same for levels.
       if (wind === null || wind.height - lastHeight < 0.6 * tileHeight) continue;
       picked.push(wind);
       lastHeight = wind.height;

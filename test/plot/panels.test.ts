@@ -6,7 +6,7 @@ import {
   drawProfiles,
   FIELDS,
   FONT,
-  hodographRings,
+  hodographScale,
   legendOf,
   THEMES,
   type Frame,
@@ -72,9 +72,14 @@ describe('hodograph', () => {
   const place = { x: 100, y: 100, radius: 100, unit: 'm/s' } as const;
 
   it('puts rings at round speeds of the reader’s unit', () => {
-    expect(hodographRings(17, 'm/s')).toEqual([5, 10, 15, 20]);
-    expect(hodographRings(17, 'kt')).toEqual([10, 20, 30, 40]);
-    expect(hodographRings(3, 'm/s')).toEqual([2, 4]);
+    const rings = (speed: number, unit: 'm/s' | 'kt'): readonly number[] =>
+      hodographScale(
+        { profile: profileOf({ heightAgl: [100], speed: [speed], direction: [200] }), ceiling: 1000 },
+        { ...place, unit },
+      ).rings;
+    expect(rings(17, 'm/s')).toEqual([5, 10, 15, 20]);
+    expect(rings(17, 'kt')).toEqual([10, 20, 30, 40]);
+    expect(rings(3, 'm/s')).toEqual([2, 4]);
   });
 
   it('puts a south wind at the top and a west wind at the right', () => {
