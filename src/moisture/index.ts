@@ -8,7 +8,7 @@ export {
   type SurgeRule,
 } from './arrival-score.ts';
 export { humidAir, humidityUncertainty, type HumidAir, type HumidityOptions, type HumidityUse } from './humid-air.ts';
-export type { AirColumn } from './air-column.ts';
+export { airColumn, type AirColumn } from './air-column.ts';
 export type { PotentialInstability } from './instability.ts';
 export { moistureOf, type MoistureNumbers, type MoistureOptions } from './moisture.ts';
 export { fluxOf, precipitableWater, transportByHeight, transportByPressure, type Transport } from './transport.ts';

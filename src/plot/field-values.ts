@@ -1,7 +1,8 @@
 // A field's value at each level of a profile.
 
-import { GAS_CONSTANT_DRY, signedAngle, virtualTemperature } from '../air/index.ts';
-import { REJECTING, type ProfileBlock } from '../profile/index.ts';
+import { signedAngle } from '../air/index.ts';
+import { airColumn, fluxOf } from '../moisture/index.ts';
+import { profileAt, REJECTING, REJECTING_AIR, type ProfileBlock } from '../profile/index.ts';
 import type { FieldName } from './fields.ts';
 
 /** Slopes are taken between levels at least this far from the level, m, or this share of its height if that is less. */
@@ -9,6 +10,20 @@ const SLOPE_REACH = 20;
 const SLOPE_REACH_SHARE = 0.3;
 /** Beyond this distance, m, two levels say nothing of the slope between. */
 const SLOPE_LIMIT = 250;
+
+/** A field that a block stores as it is. */
+export interface PlainColumn {
+  readonly values: Float32Array;
+  /** Levels with any of these marks show nothing. */
+  readonly rejecting: number;
+}
+
+/** The block's own column of a field; null where the field has to be worked out or is not there. */
+export function plainColumn(block: ProfileBlock, field: FieldName): PlainColumn | null {
+  if (field === 'speed' || field === 'direction') return { values: block[field], rejecting: REJECTING };
+  if (field !== 'temperature' || block.temperature === null) return null;
+  return { values: block.temperature, rejecting: REJECTING_AIR };
+}
 
 /**
  * Writes a field's values of the i-th profile of a block into `out`, one per level.
@@ -18,59 +33,26 @@ const SLOPE_LIMIT = 250;
 export function fieldValuesInto(block: ProfileBlock, index: number, field: FieldName, out: Float32Array): void {
   const start = block.offsets[index]!;
   const count = block.offsets[index + 1]! - start;
-  switch (field) {
-    case 'speed': {
-      copyInto(block.speed, start, count, out, block.mark);
-      return;
-    }
-    case 'direction': {
-      copyInto(block.direction, start, count, out, block.mark);
-      return;
-    }
-    case 'temperature': {
-      copyInto(block.temperature, start, count, out, block.mark);
-      return;
-    }
-    case 'humidity-flux': {
-      humidityFluxInto(block, start, count, out);
-      return;
-    }
-    case 'shear': {
-      slopeInto(block, start, count, out, block.speed, (from, to) => to - from);
-      return;
-    }
-    case 'veer': {
-      slopeInto(block, start, count, out, block.direction, (from, to) => signedAngle(to - from));
-      return;
-    }
-  }
+  const plain = plainColumn(block, field);
+  if (plain !== null) {
+    const { values, rejecting } = plain;
+    for (let k = 0; k < count; k++) out[k] = (block.mark[start + k]! & rejecting) === 0 ? values[start + k]! : NaN;
+  } else if (field === 'humidity-flux') humidityFluxInto(block, index, start, count, out);
+  else if (field === 'shear') slopeInto(block, start, count, out, block.speed, (from, to) => to - from);
+  else if (field === 'veer') slopeInto(block, start, count, out, block.direction, (from, to) => signedAngle(to - from));
+  else out.fill(NaN, 0, count);
 }
 
-function copyInto(
-  column: Float32Array | null,
-  start: number,
-  count: number,
-  out: Float32Array,
-  mark: Uint32Array,
-): void {
-  if (column === null) {
-    out.fill(NaN, 0, count);
-    return;
-  }
-  for (let k = 0; k < count; k++) out[k] = (mark[start + k]! & REJECTING) === 0 ? column[start + k]! : NaN;
-}
-
-/** kg/(m2 s): density times specific humidity times speed, density by the gas law with virtual temperature. */
-function humidityFluxInto(block: ProfileBlock, start: number, count: number, out: Float32Array): void {
-  const { pressure, temperature, specificHumidity, speed, mark } = block;
+/** kg/(m2 s): density times specific humidity times speed, pressure worked out where it is not measured. */
+function humidityFluxInto(block: ProfileBlock, index: number, start: number, count: number, out: Float32Array): void {
   out.fill(NaN, 0, count);
-  if (pressure === null || temperature === null || specificHumidity === null) return;
+  if (block.temperature === null || block.specificHumidity === null) return;
+  const air = airColumn(profileAt(block, index));
+  let position = 0;
   for (let k = 0; k < count; k++) {
-    const at = start + k;
-    if ((mark[at]! & REJECTING) !== 0) continue;
-    const humidity = specificHumidity[at]!;
-    const density = pressure[at]! / (GAS_CONSTANT_DRY * virtualTemperature(temperature[at]!, humidity));
-    out[k] = density * humidity * speed[at]!;
+    if ((block.mark[start + k]! & REJECTING) !== 0 || !Number.isFinite(block.heightAgl[start + k]!)) continue;
+    out[k] = fluxOf(air.density[position]!, air.specificHumidity[position]!, block.speed[start + k]!);
+    position++;
   }
 }
 

@@ -1,9 +1,10 @@
 // Paints a section into pixels. Pure: same grid and view, same bytes; runs in a worker as well as on the page.
 
 import { columnRanges, rowRanges, type PixelRanges, type SectionView } from './pixel-ranges.ts';
-import { Pyramid, type RowWinners } from './pyramid.ts';
+import { Pyramid } from './pyramid.ts';
 import { SCALE_STEPS, type ColourScale, type ValueRange } from './scales.ts';
-import { wins, type SectionGrid } from './section-grid.ts';
+import { takeWinners, type RowWinners } from './pixel-rule.ts';
+import type { SectionGrid } from './section-grid.ts';
 
 export interface SectionPaint {
   readonly scale: ColourScale;
@@ -18,10 +19,8 @@ export interface SectionPaint {
 const HATCH_STAYS = 0.5;
 
 /** What falls into the view's pixel columns, one line of `width` values per row of the grid in view. */
-interface Gathered {
+interface Gathered extends RowWinners {
   readonly firstRow: number;
-  readonly values: Float32Array;
-  readonly strength: Float32Array | null;
 }
 
 /**
@@ -65,8 +64,8 @@ export class SectionPainter {
     const height = lines.first.length;
     const firstRow = lines.first[height - 1] ?? 0;
     const rows = Math.max(0, (lines.end[0] ?? 0) - firstRow);
-    const values = new Float32Array(rows * width).fill(NaN);
-    const strength = this.grid.strength === null ? null : new Float32Array(rows * width).fill(NaN);
+    const values = new Float32Array(rows * width).fill(-Infinity);
+    const strength = this.grid.strength === null ? null : new Float32Array(rows * width).fill(-Infinity);
     const winners = this.#winners;
     for (let x = 0; x < width; x++) {
       const first = columns.first[x]!;
@@ -100,22 +99,15 @@ export class SectionPainter {
   }
 
   /** Winners of some rows of what was gathered: the row itself where it is one. */
-  #lineOf({ values, strength }: Gathered, first: number, end: number, width: number): Float32Array {
+  #lineOf(gathered: Gathered, first: number, end: number, width: number): Float32Array {
+    const { values, strength } = gathered;
     if (end - first === 1) return values.subarray(first * width, end * width);
-    const line = values.slice(first * width, (first + 1) * width);
-    const lineStrength = strength?.slice(first * width, (first + 1) * width) ?? null;
-    const { rule } = this.#pyramid;
-    for (let row = first + 1; row < end; row++) {
-      for (let x = 0; x < width; x++) {
-        const value = values[row * width + x]!;
-        if (Number.isNaN(value)) continue;
-        const wind = strength?.[row * width + x] ?? NaN;
-        if (!Number.isNaN(line[x]!) && !wins(rule, value, wind, line[x]!, lineStrength?.[x] ?? NaN)) continue;
-        line[x] = value;
-        if (lineStrength !== null) lineStrength[x] = wind;
-      }
-    }
-    return line;
+    const line = {
+      values: values.slice(first * width, (first + 1) * width),
+      strength: strength?.slice(first * width, (first + 1) * width) ?? null,
+    };
+    for (let row = first + 1; row < end; row++) takeWinners(this.#pyramid.rule, line, gathered, row * width);
+    return line.values;
   }
 
   /** Crossed lines at a slant; they hold to the data's time, so that they move with it. */
@@ -176,7 +168,7 @@ function colourLine(
   const cyclic = scale.kind === 'cyclic';
   for (let x = 0; x < line.length; x++) {
     const position = (line[x]! - low) * factor;
-    if (Number.isNaN(position)) image[start + x] = 0;
+    if (position === -Infinity) image[start + x] = 0;
     else if (cyclic) image[start + x] = colours[Math.floor(position) & last]!;
     else image[start + x] = colours[position <= 0 ? 0 : position >= last ? last : position | 0]!;
   }

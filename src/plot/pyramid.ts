@@ -3,27 +3,15 @@
 // that a year costs no more than a night, and nothing at the edges of a pixel is guessed.
 
 import { FIELDS, type PixelRule } from './fields.ts';
-import { wins, type SectionGrid } from './section-grid.ts';
-
-/** Winners of runs of 2^k columns, one value a row; NaN where the whole run is empty. */
-interface Floor {
-  readonly values: Float32Array;
-  readonly strength: Float32Array | null;
-}
-
-/** Winners of a stretch of columns, one a row. */
-export interface RowWinners {
-  /** NaN where nothing was measured. */
-  readonly values: Float32Array;
-  readonly strength: Float32Array | null;
-}
+import { takeWinners, type RowWinners } from './pixel-rule.ts';
+import type { SectionGrid } from './section-grid.ts';
 
 export class Pyramid {
   readonly rule: PixelRule;
   readonly rowCount: number;
   readonly columnCount: number;
   /** floors[k] holds runs of 2^k columns; the first is the grid itself. */
-  readonly #floors: Floor[];
+  readonly #floors: RowWinners[];
 
   constructor(grid: SectionGrid) {
     this.rule = FIELDS[grid.field].pixelRule;
@@ -45,17 +33,17 @@ export class Pyramid {
 
   /** Winners of the columns from `first` up to, not including, `end`. */
   winnersInto(out: RowWinners, first: number, end: number): void {
-    out.values.fill(NaN);
-    out.strength?.fill(NaN);
+    out.values.fill(-Infinity);
+    out.strength?.fill(-Infinity);
     let from = Math.max(0, first);
     let to = Math.min(this.columnCount, end);
     for (let k = 0; from < to; k++, from >>= 1, to >>= 1) {
-      if ((from & 1) === 1) this.#take(out, this.#floors[k]!, from++);
-      if ((to & 1) === 1) this.#take(out, this.#floors[k]!, --to);
+      if ((from & 1) === 1) takeWinners(this.rule, out, this.#floors[k]!, this.rowCount * from++);
+      if ((to & 1) === 1) takeWinners(this.rule, out, this.#floors[k]!, this.rowCount * --to);
     }
   }
 
-  #nextFloor(below: Floor, runs: number): Floor {
+  #nextFloor(below: RowWinners, runs: number): RowWinners {
     const { rowCount } = this;
     const values = new Float32Array(runs * rowCount);
     const strength = below.strength === null ? null : new Float32Array(runs * rowCount);
@@ -63,35 +51,21 @@ export class Pyramid {
       greatestOfPairs(values, below.values, rowCount);
       return { values, strength };
     }
-    values.fill(NaN);
-    strength?.fill(NaN);
+    values.fill(-Infinity);
+    strength?.fill(-Infinity);
     for (let run = 0; run < runs; run++) {
       const out = {
         values: values.subarray(run * rowCount, (run + 1) * rowCount),
         strength: strength?.subarray(run * rowCount, (run + 1) * rowCount) ?? null,
       };
-      this.#take(out, below, 2 * run);
-      this.#take(out, below, 2 * run + 1);
+      takeWinners(this.rule, out, below, 2 * run * rowCount);
+      takeWinners(this.rule, out, below, (2 * run + 1) * rowCount);
     }
     return { values, strength };
   }
-
-  /** Lets one run's winners compete with those in `out`. */
-  #take(out: RowWinners, floor: Floor, run: number): void {
-    const base = run * this.rowCount;
-    if (this.rule === 'greatest') takeGreatest(out.values, floor.values, base);
-    else takeByRule(this.rule, out, floor, base);
-  }
 }
 
-/** The common case by itself, since it is most of the painter's work. Comparisons are so worded that NaN loses. */
-function takeGreatest(out: Float32Array, values: Float32Array, base: number): void {
-  for (let row = 0; row < out.length; row++) {
-    const value = values[base + row]!;
-    if (!(value <= out[row]!) && value === value) out[row] = value;
-  }
-}
-
+/** The common case in one pass, straight into the new floor. */
 function greatestOfPairs(out: Float32Array, below: Float32Array, rowCount: number): void {
   let at = 0;
   for (let first = 0; at < out.length; first += 2 * rowCount) {
@@ -100,17 +74,5 @@ function greatestOfPairs(out: Float32Array, below: Float32Array, rowCount: numbe
       const other = below[row + rowCount]!;
       out[at] = one > other ? one : Number.isNaN(other) ? one : other;
     }
-  }
-}
-
-function takeByRule(rule: PixelRule, out: RowWinners, floor: Floor, base: number): void {
-  for (let row = 0; row < out.values.length; row++) {
-    const value = floor.values[base + row]!;
-    if (Number.isNaN(value)) continue;
-    const wind = floor.strength?.[base + row] ?? NaN;
-    const held = out.values[row]!;
-    if (!Number.isNaN(held) && !wins(rule, value, wind, held, out.strength?.[row] ?? NaN)) continue;
-    out.values[row] = value;
-    if (out.strength !== null) out.strength[row] = wind;
   }
 }

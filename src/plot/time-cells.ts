@@ -94,6 +94,8 @@ function inOrder(blocks: readonly ProfileBlock[]): Pick<TimeCells, 'blockIndex' 
 /** Median of the steps from one time to the next. */
 function usualInterval(times: Float64Array): number {
   if (times.length < 2) return LONE_PROFILE_MS;
-  const steps = Float64Array.from({ length: times.length - 1 }, (_, k) => times[k + 1]! - times[k]!).sort();
+  const steps = new Float64Array(times.length - 1);
+  for (let k = 0; k < steps.length; k++) steps[k] = times[k + 1]! - times[k]!;
+  steps.sort();
   return steps[steps.length >> 1]!;
 }

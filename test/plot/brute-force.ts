@@ -35,7 +35,6 @@ export function brutePixel(grid: SectionGrid, rule: PixelRule, view: SectionView
     const size = Math.max(...values.map(Math.abs));
     return { value: values.includes(size) ? size : -size, doubtful };
   }
-  const calm = (wind: number): number => (Number.isNaN(wind) ? 0 : wind);
-  const strongest = Math.max(...found.map((cell) => calm(cell.wind)));
-  return { value: Math.max(...found.filter((c) => calm(c.wind) === strongest).map((c) => c.value)), doubtful };
+  const strongest = Math.max(...found.map((cell) => cell.wind));
+  return { value: Math.max(...found.filter((cell) => cell.wind === strongest).map((cell) => cell.value)), doubtful };
 }

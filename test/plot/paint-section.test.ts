@@ -51,7 +51,7 @@ const grids = (field: FieldName): fc.Arbitrary<SectionGrid> =>
         endMs,
         edges,
         values,
-        strength: field === 'direction' ? Float32Array.from({ length: cells }, value) : null,
+        strength: field === 'direction' ? values.map((each) => (Number.isNaN(each) ? -Infinity : value() || 0)) : null,
         doubt,
         doubtWords,
       };

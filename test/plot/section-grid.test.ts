@@ -1,7 +1,14 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { buildSectionGrid, type SectionGrid } from '../../src/plot/index.ts';
-import { BlockBuilder, MARK, unplacedStation, type ProfileBlock, type ProfileInput } from '../../src/profile/index.ts';
+import {
+  BlockBuilder,
+  MARK,
+  MARKS,
+  unplacedStation,
+  type ProfileBlock,
+  type ProfileInput,
+} from '../../src/profile/index.ts';
 
 const station = unplacedStation('here');
 const MINUTE = 60_000;
@@ -179,17 +186,31 @@ describe('fields of a section', () => {
     expect(grid.values[4]).toBeNaN();
   });
 
-  it('gives humidity flux where pressure, temperature and humidity are known', () => {
+  it('gives humidity flux where temperature and humidity are known', () => {
     const levels = {
-      heightAgl: [100, 200],
-      speed: [10, 10],
-      pressure: [100_000, NaN],
-      temperature: [290, 290],
-      specificHumidity: [0.01, 0.01],
+      heightAgl: [100, 200, 300],
+      speed: [10, 10, 10],
+      pressure: [100_000, NaN, NaN],
+      temperature: [290, 290, 290],
+      specificHumidity: [0.01, 0.01, NaN],
     };
     const grid = buildSectionGrid([blockOf({ timeMs: 0, levels })], { field: 'humidity-flux' });
     // Virtual temperature 290 (1 + 0.6077 x 0.01) = 291.762 K; density 100000 / (287.05 x 291.762) = 1.19403 kg/m3.
     expect(grid.values[0]).toBeCloseTo(0.119403, 4);
-    expect(grid.values[1]).toBeNaN();
+    // 100 m higher, in hydrostatic balance, the pressure is exp(-9.80665 x 100 / (287.05 x 291.762)) = 0.988358 of that.
+    expect(grid.values[1]).toBeCloseTo(0.118013, 4);
+    expect(grid.values[2]).toBeNaN();
+  });
+
+  it('shows no temperature that a screen rejected, though the wind stays', () => {
+    const levels = {
+      heightAgl: [100, 200],
+      speed: [5, 6],
+      temperature: [290, 350],
+      mark: [0, MARKS.find((mark) => mark.effect === 'reject-air')!.bit],
+    };
+    const block = blockOf({ timeMs: 0, levels });
+    expect([...buildSectionGrid([block], { field: 'temperature' }).values]).toEqual([290, NaN]);
+    expect([...buildSectionGrid([block], { field: 'speed' }).values]).toEqual([5, 6]);
   });
 });
