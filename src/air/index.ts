@@ -46,7 +46,7 @@ export {
   type MovingLevel,
   type ThermalLevel,
 } from './stability.ts';
-export { standardAtmosphere, type StandardAir } from './standard-atmosphere.ts';
+export { standardAtmosphere, standardHeight, type StandardAir } from './standard-atmosphere.ts';
 export { lightSpans, nightOf, type Light, type LightSpan, type Night, type NightKind } from './sun.ts';
 export { advectionBetweenHeights, advectionBetweenPressures, type LayerWind } from './thermal-wind.ts';
 export {

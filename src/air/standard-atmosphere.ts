@@ -36,3 +36,37 @@ export function standardAtmosphere(heightAmsl: number): StandardAir {
   const pressure = SEA_LEVEL_PRESSURE * Math.pow(temperature / SEA_LEVEL_TEMPERATURE, EXPONENT);
   return { temperature, pressure, density: (pressure * MOLAR_MASS) / (GAS_CONSTANT * temperature) };
 }
+
+/** Layers of the tables up to 47 km: geopotential height of their base, m, temperature there, K, and its change, K/m. */
+const LAYERS = [
+  { base: 0, temperature: SEA_LEVEL_TEMPERATURE, lapse: -LAPSE_RATE },
+  { base: TROPOPAUSE, temperature: 216.65, lapse: 0 },
+  { base: 20_000, temperature: 216.65, lapse: 0.001 },
+  { base: 32_000, temperature: 228.65, lapse: 0.0028 },
+  { base: 47_000, temperature: 270.65, lapse: 0 },
+];
+/** g0 M0 / R*, K/m. */
+const PER_METRE = (9.80665 * MOLAR_MASS) / GAS_CONSTANT;
+
+/**
+ * Geopotential height, m, at which the standard atmosphere has a pressure, Pa: where a pressure level lies when nothing
+ * better is known.
+ * @returns NaN for what is no pressure, and above 47 km (below 1.1 hPa)
+ */
+export function standardHeight(pressure: number): number {
+  let pressureAtBase = SEA_LEVEL_PRESSURE;
+  for (let k = 0; k + 1 < LAYERS.length; k++) {
+    const { base, temperature, lapse } = LAYERS[k]!;
+    const height =
+      lapse === 0
+        ? base + (temperature / PER_METRE) * Math.log(pressureAtBase / pressure)
+        : base + (temperature / lapse) * (Math.pow(pressureAtBase / pressure, lapse / PER_METRE) - 1);
+    const next = LAYERS[k + 1]!;
+    if (height < next.base) return height;
+    pressureAtBase *=
+      lapse === 0
+        ? Math.exp((-PER_METRE * (next.base - base)) / temperature)
+        : Math.pow(next.temperature / temperature, -PER_METRE / lapse);
+  }
+  return NaN;
+}

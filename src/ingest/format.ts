@@ -1,7 +1,7 @@
 // What every format of the house looks like to the front door: one file or folder a format, all of this shape.
 
 import type { Problem } from '../air/index.ts';
-import type { ProfileBlock } from '../profile/index.ts';
+import type { ProfileBlock, Station } from '../profile/index.ts';
 import type { Site } from '../site/index.ts';
 import type { ByteSource, ReadLimits } from './source.ts';
 
@@ -24,6 +24,8 @@ export interface ReadOptions {
    * the month need it, and no profile can lie more than a day behind it. Undefined where nobody knows.
    */
   readonly referenceTimeMs: number | undefined;
+  /** Places of stations that files name without saying where they are; the site's own stations come first. */
+  readonly stationList: readonly Station[];
 }
 
 /** Part of what a file holds; long files come in several, each with profiles in the file's order. */

@@ -6,12 +6,14 @@ import { coverageJson } from './coverage-json/coverage-json.ts';
 import { csvTable } from './csv/format.ts';
 import type { FileFormat } from './format.ts';
 import { netcdf4, netcdfClassic } from './netcdf/formats.ts';
+import { tempPilot } from './temp-pilot/format.ts';
 
 export const FORMATS: readonly FileFormat[] = [
   netcdfClassic,
   netcdf4,
   bufr,
   coverageJson,
+  tempPilot,
   // Whatever looks like a table and is nothing else.
   csvTable,
 ];

@@ -29,6 +29,7 @@ export async function* readProfiles(source: ByteSource, options: Partial<ReadOpt
     signal: options.signal,
     onProgress: options.onProgress,
     referenceTimeMs: options.referenceTimeMs,
+    stationList: options.stationList ?? [],
   });
 }
 

@@ -45,6 +45,7 @@ const OPTIONS: ReadOptions = {
   signal: undefined,
   onProgress: undefined,
   referenceTimeMs: undefined,
+  stationList: [],
 };
 const readToy = (bytes: Uint8Array, options: Partial<ReadOptions> = {}, name = 'a.toy'): ReturnType<typeof readToEnd> =>
   readToEnd(readWith([TOY], bytesSource(name, bytes), { ...OPTIONS, ...options }));

@@ -15,6 +15,7 @@ const options: ReadOptions = {
   signal: undefined,
   onProgress: undefined,
   referenceTimeMs: undefined,
+  stationList: [],
 };
 
 /** Reads with the format itself, past the front door that would catch what should not be thrown. */
