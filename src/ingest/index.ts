@@ -1,5 +1,6 @@
 export type { FileFormat, Reading, ReadOptions, ReadProgress } from './format.ts';
 export { FORMATS } from './formats.ts';
+export { readOutputSeries, type OutputReading } from './output-series.ts';
 export { readProfiles } from './read-profiles.ts';
 export { bytesSource, DEFAULT_LIMITS, type ByteSource, type ReadLimits } from './source.ts';
 export { writeCoverageJson } from './write/coverage-json.ts';

@@ -3,8 +3,8 @@
 
 /** Columns over one ascending coordinate, no value missing. */
 export interface Cut {
-  readonly along: readonly number[];
-  readonly columns: readonly (readonly number[])[];
+  readonly along: Float64Array;
+  readonly columns: readonly Float64Array[];
 }
 
 /**
@@ -20,33 +20,54 @@ export function cutLayer(
   low = -Infinity,
   high = Infinity,
 ): Cut | undefined {
-  const order: number[] = [];
-  for (let k = 0; k < along.length; k++) {
-    if (Number.isFinite(along[k]!) && columns.every((column) => Number.isFinite(column[k]!))) order.push(k);
-  }
-  order.sort((a, b) => along[a]! - along[b]!);
-  if (order.length < 2) return undefined;
+  const order = knownInOrder(along, columns);
+  const last = order.length - 1;
+  if (last < 1) return undefined;
   const from = Math.max(low, along[order[0]!]!);
-  const to = Math.min(high, along[order.at(-1)!]!);
+  const to = Math.min(high, along[order[last]!]!);
   if (!(to > from)) return undefined;
 
-  const keptAlong: number[] = [];
-  const kept = columns.map((): number[] => []);
-  const add = (at: number, below: number, above: number): void => {
-    const span = along[above]! - along[below]!;
-    const weight = span > 0 ? (at - along[below]!) / span : 0;
-    keptAlong.push(at);
-    columns.forEach((column, c) => kept[c]!.push(column[below]! * (1 - weight) + column[above]! * weight));
+  let first = 0;
+  while (along[order[first]!]! < from) first++;
+  let end = last;
+  while (along[order[end]!]! > to) end--;
+  const before = along[order[first]!]! > from;
+  const after = along[order[end]!]! < to;
+  const cut = (values: ArrayLike<number>): Float64Array => {
+    const kept = new Float64Array(end - first + 1 + Number(before) + Number(after));
+    let count = 0;
+    if (before) kept[count++] = linear(along, values, order[first - 1]!, order[first]!, from);
+    for (let k = first; k <= end; k++) kept[count++] = values[order[k]!]!;
+    if (after) kept[count] = linear(along, values, order[end]!, order[end + 1]!, to);
+    return kept;
   };
-  for (let position = 0; position < order.length; position++) {
-    const level = order[position]!;
-    const next = order[position + 1];
-    if (along[level]! >= from && along[level]! <= to) add(along[level]!, level, level);
-    if (next === undefined) break;
-    if (along[level]! < from && along[next]! > from) add(from, level, next);
-    if (along[level]! < to && along[next]! > to) add(to, level, next);
+  return { along: cut(along), columns: columns.map(cut) };
+}
+
+function knownInOrder(along: ArrayLike<number>, columns: readonly ArrayLike<number>[]): Uint32Array {
+  const order = new Uint32Array(along.length);
+  let count = 0;
+  let [ascending, descending] = [true, true];
+  for (let k = 0; k < along.length; k++) {
+    // A sum is finite only if every part of it is.
+    let sum = along[k]!;
+    for (const column of columns) sum += column[k]!;
+    if (sum - sum !== 0) continue;
+    if (count > 0) {
+      const step = along[k]! - along[order[count - 1]!]!;
+      if (step < 0) ascending = false;
+      if (step > 0) descending = false;
+    }
+    order[count++] = k;
   }
-  return { along: keptAlong, columns: kept };
+  const known = order.subarray(0, count);
+  if (ascending) return known;
+  return descending ? known.reverse() : known.sort((a, b) => along[a]! - along[b]!);
+}
+
+function linear(along: ArrayLike<number>, values: ArrayLike<number>, below: number, above: number, at: number): number {
+  const weight = (at - along[below]!) / (along[above]! - along[below]!);
+  return values[below]! * (1 - weight) + values[above]! * weight;
 }
 
 /** Trapezoid of a product of columns of the cut over its coordinate. */

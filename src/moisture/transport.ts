@@ -85,8 +85,8 @@ export function fluxOf(density: number, specificHumidity: number, component: num
   return density * specificHumidity * component;
 }
 
-type Columns3 = readonly [readonly number[], readonly number[], readonly number[]];
-type Columns4 = readonly [readonly number[], readonly number[], readonly number[], readonly number[]];
+type Columns3 = readonly [Float64Array, Float64Array, Float64Array];
+type Columns4 = readonly [Float64Array, Float64Array, Float64Array, Float64Array];
 
 function transport(east: number, north: number): Transport {
   return { east, north, size: speedOf(east, north), direction: directionOf(east, north) };

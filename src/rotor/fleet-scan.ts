@@ -143,11 +143,18 @@ export class FleetScan {
     this.#firstNeeded = count;
     this.#endNeeded = 0;
     for (const plan of this.#plans) {
-      const starts = [plan.hub, plan.bottom, plan.top, plan.coveredBottom, plan.coveredTop].map((at) => at.below);
-      for (const below of starts) if (below >= 0) this.#need(below, Math.min(count, below + 2));
+      this.#needAround(plan.hub);
+      this.#needAround(plan.bottom);
+      this.#needAround(plan.top);
+      this.#needAround(plan.coveredBottom);
+      this.#needAround(plan.coveredTop);
       if (plan.share.length > 0) this.#need(plan.first, plan.first + plan.share.length);
       if (plan.fitWeight.length > 0) this.#need(plan.fitFirst, plan.fitFirst + plan.fitWeight.length);
     }
+  }
+
+  #needAround(at: Between): void {
+    if (at.below >= 0) this.#need(at.below, Math.min(this.#levels.count, at.below + 2));
   }
 
   #need(first: number, end: number): void {

@@ -1,3 +1,4 @@
+export { meanOutputAt } from './actual-output.ts';
 export { densityAt, type HubDensity } from './density.ts';
 export {
   measureDisagreement,

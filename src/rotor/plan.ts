@@ -96,7 +96,7 @@ function whyNot(
 
 function slices(disc: Disc, heightAgl: ArrayLike<number>, count: number): { first: number; share: Float64Array } {
   const [lowTip, highTip] = [bottomTip(disc), topTip(disc)];
-  let first = 0;
+  let first = Math.max(0, firstFrom(lowTip, heightAgl, count) - 1);
   while (first < count - 1 && (heightAgl[first]! + heightAgl[first + 1]!) / 2 <= lowTip) first++;
   let end = first;
   while (end < count && (end === first || (heightAgl[end - 1]! + heightAgl[end]!) / 2 < highTip)) end++;
@@ -112,14 +112,26 @@ function slices(disc: Disc, heightAgl: ArrayLike<number>, count: number): { firs
 
 /** Where a height lies between ascending levels. */
 function between(height: number, heightAgl: ArrayLike<number>, count: number): Between {
-  if (count === 0 || !(height >= heightAgl[0]!) || !(height <= heightAgl[count - 1]!))
-    return { below: -1, weight: NaN };
-  let above = 1;
-  while (above < count - 1 && heightAgl[above]! < height) above++;
+  if (count === 0 || !(height >= heightAgl[0]!) || !(height <= heightAgl[count - 1]!)) return OUTSIDE;
   if (count === 1) return { below: 0, weight: 0 };
+  const above = Math.max(1, firstFrom(height, heightAgl, count));
   const low = heightAgl[above - 1]!;
   const span = heightAgl[above]! - low;
   return { below: above - 1, weight: span > 0 ? (height - low) / span : 0 };
+}
+
+const OUTSIDE: Between = { below: -1, weight: NaN };
+
+/** First level at or above a height; `count` where there is none. */
+function firstFrom(height: number, heightAgl: ArrayLike<number>, count: number): number {
+  let low = 0;
+  let high = count;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (heightAgl[middle]! < height) low = middle + 1;
+    else high = middle;
+  }
+  return low;
 }
 
 /** Least squares of ln V on ln z over the levels from tip to tip (IEC 61400-1 power law), as weights on ln V. */
@@ -131,8 +143,8 @@ function shearFit(
 ): { fitFirst: number; fitWeight: Float64Array } {
   const low = bottomTip(disc);
   const high = topTip(disc);
-  let fitFirst = 0;
-  while (fitFirst < count && !(heightAgl[fitFirst]! >= low && heightAgl[fitFirst]! > 0)) fitFirst++;
+  let fitFirst = firstFrom(low, heightAgl, count);
+  while (fitFirst < count && !(heightAgl[fitFirst]! > 0)) fitFirst++;
   let end = fitFirst;
   while (end < count && heightAgl[end]! <= high) end++;
   return { fitFirst, fitWeight: powerLawWeights(logHeight, fitFirst, end) };
