@@ -1,63 +1,71 @@
 // The profiles of all paths, block after block, with whatever was wrong told on stderr.
 
 import type { ProfileBlock } from '../profile/index.ts';
-import { readProfiles } from '../ingest/index.ts';
+import { readProfiles, type ReadOptions } from '../ingest/index.ts';
 import type { Site } from '../site/index.ts';
 import { EXIT, UsageError } from './command.ts';
-import { inputsOf, type Input } from './inputs.ts';
+import { openInputs, type Input } from './inputs.ts';
 import { OutputClosed } from './output.ts';
 import { Reporter } from './reporter.ts';
 
+export interface Reading {
+  /** Takes each block as soon as it is there; no more than one is held. */
+  readonly take: (block: ProfileBlock) => Promise<void>;
+  /** Sees every block of every path before the first is taken: then all is read twice. */
+  readonly survey?: (block: ProfileBlock) => void;
+}
+
 /**
- * Reads every path and hands each block on as soon as it is there; no more than one is held.
- * @returns exit code: well, or someUnread when an input named on the command line had a problem
+ * Reads every path.
+ * @returns exit code: well, or someUnread when something in a path could not be read
  * @throws UsageError when there is no path
  */
-export async function forEachBlock(
-  paths: readonly string[],
-  site: Site,
-  take: (block: ProfileBlock) => Promise<void>,
-): Promise<number> {
+export async function readPaths(paths: readonly string[], site: Site, { take, survey }: Reading): Promise<number> {
   if (paths.length === 0) throw new UsageError('It needs at least one file or folder, or - for stdin.');
+  const { inputs, problems, close } = await openInputs(paths);
   const reporter = new Reporter();
-  let unread = false;
+  const options = { site, referenceTimeMs: Date.now() };
   try {
-    for await (const input of inputsOf(paths)) {
-      if ('code' in input) {
-        reporter.problem(input);
-        unread = true;
-      } else if (await readInput(input, site, reporter, take)) unread = true;
-    }
+    for (const problem of problems) reporter.problem(problem);
+    if (survey !== undefined) await surveyInputs(inputs, options, survey);
+    let unread = problems.length > 0;
+    for (const input of inputs) if (await readInput(input, options, reporter, take)) unread = true;
+    return unread ? EXIT.someUnread : EXIT.well;
   } catch (error) {
-    if (!(error instanceof OutputClosed)) throw error;
+    if (error instanceof OutputClosed) return EXIT.well;
+    throw error;
   } finally {
     reporter.finish();
+    await close();
   }
-  return unread ? EXIT.someUnread : EXIT.well;
+}
+
+async function surveyInputs(
+  inputs: readonly Input[],
+  options: Partial<ReadOptions>,
+  survey: (block: ProfileBlock) => void,
+): Promise<void> {
+  for (const { source } of inputs) {
+    for await (const { block } of readProfiles(source, options)) if (block.profileCount > 0) survey(block);
+  }
 }
 
 /** @returns whether something in it could not be read */
 async function readInput(
   input: Input,
-  site: Site,
+  options: Partial<ReadOptions>,
   reporter: Reporter,
   take: (block: ProfileBlock) => Promise<void>,
 ): Promise<boolean> {
   let unread = false;
-  const options = {
-    site,
-    referenceTimeMs: Date.now(),
-    onProgress: (progress: Parameters<Reporter['progress']>[0]) => reporter.progress(progress),
-  };
-  for await (const { block, problems } of readProfiles(input.source, options)) {
+  const watched = { ...options, onProgress: reporter.progress.bind(reporter) };
+  for await (const { block, problems } of readProfiles(input.source, watched)) {
     for (const problem of problems) {
       // A folder may hold a README and a site file beside the data: those are passed over, not unread.
       const foreign = !input.named && problem.code === 'ingest/unknown-format';
       if (foreign) reporter.say(`${input.source.name}: passed over, no known format`);
-      else {
-        reporter.problem(problem);
-        unread = true;
-      }
+      else reporter.problem(problem);
+      if (!foreign && problem.mild !== true) unread = true;
     }
     if (block.profileCount > 0) await take(block);
   }

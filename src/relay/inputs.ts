@@ -1,7 +1,7 @@
 // From the paths on the command line to byte sources: files, folders with all that is in them, stdin.
 
 import { createReadStream, createWriteStream } from 'node:fs';
-import { mkdtemp, readdir, rm, stat } from 'node:fs/promises';
+import { lstat, mkdtemp, readdir, rm, stat } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { pipeline } from 'node:stream/promises';
@@ -14,49 +14,53 @@ export interface Input {
   readonly named: boolean;
 }
 
-/** Paths may be files, folders (all files in them, in order of name, hidden ones left out) and `-` for stdin. */
-export async function* inputsOf(paths: readonly string[]): AsyncGenerator<Input | Problem> {
-  for (const path of paths) {
-    if (path === '-') yield* fromStdin();
-    else yield* fromPath(path);
-  }
+export interface Inputs {
+  readonly inputs: readonly Input[];
+  /** Paths that cannot be opened. */
+  readonly problems: readonly Problem[];
+  /** Clears away what was laid down for the reading. */
+  readonly close: () => Promise<void>;
 }
 
-async function* fromPath(path: string): AsyncGenerator<Input | Problem> {
+/** Paths may be files, folders (all files in them, in order of name, hidden ones left out) and `-` for stdin. */
+export async function openInputs(paths: readonly string[]): Promise<Inputs> {
+  const inputs: Input[] = [];
+  const problems: Problem[] = [];
+  const laidDown: string[] = [];
+  for (const path of paths) {
+    if (path === '-') inputs.push(await fromStdin(laidDown));
+    else await addPath(path, true, inputs, problems);
+  }
+  const close = async (): Promise<void> => {
+    for (const folder of laidDown) await rm(folder, { recursive: true, force: true });
+  };
+  return { inputs, problems, close };
+}
+
+async function addPath(path: string, named: boolean, inputs: Input[], problems: Problem[]): Promise<void> {
   try {
     const entry = await stat(path);
-    if (entry.isDirectory()) yield* fromFolder(path);
-    else yield { source: fileSource(path, path, entry.isFile() ? entry.size : undefined), named: true };
-  } catch (error) {
-    yield pathProblem(path, error as NodeJS.ErrnoException);
-  }
-}
-
-async function* fromFolder(folder: string): AsyncGenerator<Input | Problem> {
-  const entries = await readdir(folder, { withFileTypes: true });
-  for (const entry of entries.sort((a, b) => (a.name < b.name ? -1 : 1))) {
-    if (entry.name.startsWith('.')) continue;
-    const path = join(folder, entry.name);
-    try {
-      const { size } = await stat(path);
-      if (entry.isDirectory()) yield* fromFolder(path);
-      else if (entry.isFile()) yield { source: fileSource(path, path, size), named: false };
-    } catch (error) {
-      yield pathProblem(path, error as NodeJS.ErrnoException);
+    if (entry.isDirectory()) {
+      // A link within a folder may lead back up to it: only links named on the command line are followed.
+      if (!named && (await lstat(path)).isSymbolicLink()) return;
+      for (const name of (await readdir(path)).sort()) {
+        if (!name.startsWith('.')) await addPath(join(path, name), false, inputs, problems);
+      }
+    } else if (named || entry.isFile()) {
+      inputs.push({ source: fileSource(path, path, entry.isFile() ? entry.size : undefined), named });
     }
+  } catch (error) {
+    problems.push(pathProblem(path, error as NodeJS.ErrnoException));
   }
 }
 
-/** Readers may take the bytes more than once; stdin comes once, so it is laid down in a file meanwhile. */
-async function* fromStdin(): AsyncGenerator<Input> {
+/** Readers take the bytes more than once; stdin comes once, so it is laid down in a file meanwhile. */
+async function fromStdin(laidDown: string[]): Promise<Input> {
   const folder = await mkdtemp(join(tmpdir(), 'duskveer-'));
-  try {
-    const file = join(folder, 'stdin');
-    await pipeline(process.stdin, createWriteStream(file));
-    yield { source: fileSource('stdin', file, (await stat(file)).size), named: true };
-  } finally {
-    await rm(folder, { recursive: true, force: true });
-  }
+  laidDown.push(folder);
+  const file = join(folder, 'stdin');
+  await pipeline(process.stdin, createWriteStream(file));
+  return { source: fileSource('stdin', file, (await stat(file)).size), named: true };
 }
 
 function fileSource(name: string, path: string, size: number | undefined): ByteSource {

@@ -5,7 +5,7 @@ import { profilesOf, type Profile } from '../profile/index.ts';
 import { CRITERIA, CRITERIA_NAMES, criteriaOf, findJets, type Criteria, type JetFinding } from '../jet/index.ts';
 import { screen } from '../quality/index.ts';
 import { siteStation, type Site } from '../site/index.ts';
-import { forEachBlock } from './blocks.ts';
+import { readPaths } from './blocks.ts';
 import { parseOptions, UsageError, type Command } from './command.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
@@ -31,11 +31,13 @@ ${CRITERIA_NAMES.map((name) => `                     ${name.padEnd(24)} ${CRITER
     const site = await siteOf(values.site);
     const criteria = chosenCriteria(site, values.criteria);
     const out = new LineWriter(process.stdout);
-    return forEachBlock(positionals, site, async (block) => {
-      for (const profile of profilesOf(screen(block, { site }).block)) {
-        await out.write(jetLine(profile, findingOf(profile, criteria, site)));
-      }
-      await out.flush();
+    return readPaths(positionals, site, {
+      take: async (block) => {
+        for (const profile of profilesOf(screen(block, { site }).block)) {
+          await out.write(jetLine(profile, findingOf(profile, criteria, site)));
+        }
+        await out.flush();
+      },
     });
   },
 };

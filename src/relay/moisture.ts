@@ -4,7 +4,8 @@ import { toJsonNumber, toJsonNumbers } from '../air/index.ts';
 import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { screen } from '../quality/index.ts';
-import { forEachBlock } from './blocks.ts';
+import { AirSources } from './air-sources.ts';
+import { readPaths } from './blocks.ts';
 import { numberOption, parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
@@ -15,6 +16,7 @@ export const command: Command = {
   help: `duskveer moisture PATH... [--site FILE] [--bottom-pa P] [--top-pa P]
 
 Reads profiles from files, from all files in folders, or from stdin (-), screens them and computes what vapour they carry.
+Winds without humidity take that of the newest profile before them from a station within 150 km or named in the site file.
 
 Prints a JSON line a profile:
   station, time
@@ -43,13 +45,18 @@ Prints a JSON line a profile:
       throw new UsageError('--top-pa must be less than --bottom-pa: pressure falls with height.');
     }
     const criteria = chosenCriteria(site, undefined);
+    const sources = new AirSources(site);
     const out = new LineWriter(process.stdout);
-    return forEachBlock(positionals, site, async (block) => {
-      for (const profile of profilesOf(screen(block, { site }).block)) {
-        const core = findingOf(profile, criteria, site).jets[0]?.core;
-        await out.write(moistureLine(profile, moistureOf(profile, { bottomPressure, topPressure, jetLayer: core })));
-      }
-      await out.flush();
+    return readPaths(positionals, site, {
+      survey: (block) => sources.gather(screen(block, { site }).block),
+      take: async (block) => {
+        for (const profile of profilesOf(screen(block, { site }).block)) {
+          const jetLayer = findingOf(profile, criteria, site).jets[0]?.core;
+          const options = { bottomPressure, topPressure, jetLayer, humidity: sources.for(profile) };
+          await out.write(moistureLine(profile, moistureOf(profile, options)));
+        }
+        await out.flush();
+      },
     });
   },
 };

@@ -15,7 +15,7 @@ import {
   type RampCause,
 } from '../rotor/index.ts';
 import type { RampDefinition, Site, TurbineType } from '../site/index.ts';
-import { forEachBlock } from './blocks.ts';
+import { readPaths } from './blocks.ts';
 import { parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
@@ -50,14 +50,16 @@ Prints a JSON line a ramp:
     if (turbines.length === 0) throw new UsageError(`${values.site} lists no turbine with a power curve.`);
     const criteria = chosenCriteria(site, undefined);
     const stations = new Map<string, ProfileFacts[]>();
-    const code = await forEachBlock(positionals, site, (block) => {
-      for (const profile of profilesOf(screen(block, { site }).block)) {
-        const facts = factsOf(profile, findingOf(profile, criteria, site), turbines, site);
-        const known = stations.get(profile.station.id);
-        if (known === undefined) stations.set(profile.station.id, [facts]);
-        else known.push(facts);
-      }
-      return Promise.resolve();
+    const code = await readPaths(positionals, site, {
+      take: (block) => {
+        for (const profile of profilesOf(screen(block, { site }).block)) {
+          const facts = factsOf(profile, findingOf(profile, criteria, site), turbines, site);
+          const known = stations.get(profile.station.id);
+          if (known === undefined) stations.set(profile.station.id, [facts]);
+          else known.push(facts);
+        }
+        return Promise.resolve();
+      },
     });
     const out = new LineWriter(process.stdout);
     for (const [station, facts] of stations) {

@@ -2,7 +2,7 @@
 
 import { dewPointOf, toJsonNumber, toJsonNumbers } from '../air/index.ts';
 import { markNames, profilesOf, type Profile } from '../profile/index.ts';
-import { forEachBlock } from './blocks.ts';
+import { readPaths } from './blocks.ts';
 import { parseOptions, type Command } from './command.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
@@ -28,9 +28,11 @@ Prints a JSON line a profile:
     const { values, positionals } = parseOptions(args, SITE_OPTION);
     const site = await siteOf(values.site);
     const out = new LineWriter(process.stdout);
-    return forEachBlock(positionals, site, async (block) => {
-      for (const profile of profilesOf(block)) await out.write(profileLine(profile));
-      await out.flush();
+    return readPaths(positionals, site, {
+      take: async (block) => {
+        for (const profile of profilesOf(block)) await out.write(profileLine(profile));
+        await out.flush();
+      },
     });
   },
 };

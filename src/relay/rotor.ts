@@ -5,7 +5,7 @@ import { profilesOf, type Profile } from '../profile/index.ts';
 import { screen } from '../quality/index.ts';
 import { typeOutput, windOnDisc, type DiscWind } from '../rotor/index.ts';
 import { siteStation, type Site, type TurbineType } from '../site/index.ts';
-import { forEachBlock } from './blocks.ts';
+import { readPaths } from './blocks.ts';
 import { numberOption, parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
@@ -45,14 +45,16 @@ Prints a JSON line a profile and turbine type:
     const turbines = chosenTurbines(site, values.hub, values.diameter);
     const criteria = chosenCriteria(site, undefined);
     const out = new LineWriter(process.stdout);
-    return forEachBlock(positionals, site, async (block) => {
-      for (const profile of profilesOf(screen(block, { site }).block)) {
-        const nose = findingOf(profile, criteria, site).jets[0]?.noseHeight ?? NaN;
-        for (const turbine of turbines) {
-          await out.write(rotorLine(profile, turbine, discWindOf(profile, turbine, nose, site)));
+    return readPaths(positionals, site, {
+      take: async (block) => {
+        for (const profile of profilesOf(screen(block, { site }).block)) {
+          const nose = findingOf(profile, criteria, site).jets[0]?.noseHeight ?? NaN;
+          for (const turbine of turbines) {
+            await out.write(rotorLine(profile, turbine, discWindOf(profile, turbine, nose, site)));
+          }
         }
-      }
-      await out.flush();
+        await out.flush();
+      },
     });
   },
 };

@@ -3,8 +3,9 @@
 import { toJsonNumber } from '../air/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { screen } from '../quality/index.ts';
-import { stormOf, type Figure, type StormNumbers, type VectorFigure } from '../storm/index.ts';
-import { forEachBlock } from './blocks.ts';
+import { joinWindAndAir, stormOf, type Figure, type StormNumbers, type VectorFigure } from '../storm/index.ts';
+import { AirSources } from './air-sources.ts';
+import { readPaths } from './blocks.ts';
 import { parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
@@ -15,11 +16,13 @@ export const command: Command = {
   help: `duskveer storm PATH... [--site FILE] [--motion U,V]
 
 Reads profiles from files, from all files in folders, or from stdin (-), screens them and computes what storms would get.
-An aid to judgement: official warnings come from the national weather service.
+Winds without temperature and humidity take those of the newest profile before them from a station within 150 km or named
+in the site file. An aid to judgement: official warnings come from the national weather service.
 
 Prints a JSON line a profile:
   station, time
   status, why          ok; partly, where data end below what a number needs, and why; not-assessable
+  air_from, air_age_s  whose temperature and humidity were used, and how old they were
   parcels              start (surface-based, mixed-layer, most-unstable, jet-fed), start_pressure_pa, lcl_pressure_pa,
                        lfc_pressure_pa, el_pressure_pa, cape_j_per_kg, cin_j_per_kg
   shear_0_1km_mps, shear_0_3km_mps, shear_0_6km_mps
@@ -35,14 +38,23 @@ Prints a JSON line a profile:
     const site = await siteOf(values.site);
     const motion = motionOption(values.motion);
     const criteria = chosenCriteria(site, undefined);
+    const sources = new AirSources(site);
     const out = new LineWriter(process.stdout);
-    return forEachBlock(positionals, site, async (block) => {
-      for (const profile of profilesOf(screen(block, { site }).block)) {
-        const [jet] = findingOf(profile, criteria, site).jets;
-        const given = { ...(jet === undefined ? {} : { jet }), ...(motion === undefined ? {} : { motion }) };
-        await out.write(stormLine(profile, stormOf(profile, given)));
-      }
-      await out.flush();
+    return readPaths(positionals, site, {
+      survey: (block) => sources.gather(screen(block, { site }).block),
+      take: async (block) => {
+        for (const profile of profilesOf(screen(block, { site }).block)) {
+          const [jet] = findingOf(profile, criteria, site).jets;
+          const { air } = joinWindAndAir(profile, sources.nearest(profile));
+          const numbers = stormOf(profile, {
+            ...(air === null ? {} : { air }),
+            ...(jet === undefined ? {} : { jet }),
+            ...(motion === undefined ? {} : { motion }),
+          });
+          await out.write(stormLine(profile, numbers));
+        }
+        await out.flush();
+      },
     });
   },
 };
@@ -72,6 +84,8 @@ export function stormLine(profile: Profile, numbers: StormNumbers): Record<strin
     time: isoTime(profile.timeMs),
     status: numbers.status === 'assessed' ? 'ok' : numbers.status,
     why: numbers.why,
+    air_from: numbers.airFrom.station,
+    air_age_s: toJsonNumber(numbers.airFrom.ageS, 0),
     parcels: parcels.map((parcel) => ({
       start: parcel.name,
       start_pressure_pa: pressure(parcel.start?.pressure ?? NaN),

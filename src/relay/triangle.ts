@@ -1,107 +1,86 @@
 // `triangle`: how the wind through three or more stations spreads, turns and gathers moisture; a JSON line a time and layer.
 
-import { toJsonNumber } from '../air/index.ts';
-import { windField, type WindField } from '../moisture/index.ts';
+import { distanceBetween, toJsonNumber } from '../air/index.ts';
+import { triangleThroughTime, type TriangleLayer, type TriangleTime } from '../moisture/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { screen } from '../quality/index.ts';
-import { PLAIN_SITE } from '../site/index.ts';
-import { forEachBlock } from './blocks.ts';
+import { readPaths } from './blocks.ts';
 import { EXIT, parseOptions, type Command } from './command.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
-import { levelsOf, pointAt, type StationLevels } from './layer-point.ts';
 import { LineWriter } from './output.ts';
+import { SITE_OPTION, siteOf } from './site-option.ts';
 
-/** Layers where the stations' levels differ, m above ground: every so many up to the top. */
-const LAYER_STEP = 100;
-const HIGHEST_LAYER = 3000;
-/** Profiles of the stations no further apart than this belong to one time, ms. */
-const TOGETHER_MS = 30 * 60_000;
+/** Instruments no further apart than this stand at one place, m. */
+const SAME_PLACE = 2000;
 
 export const command: Command = {
-  help: `duskveer triangle PATH...
+  help: `duskveer triangle PATH... [--site FILE]
 
 Reads the profiles of three or more stations from files, from all files in folders, or from stdin (-), screens them and
 fits a linear wind field through the stations (Bellamy 1949; least squares for more than three). All profiles are held at
-once. The station with the fewest profiles sets the times; of each other one the nearest profile within ${TOGETHER_MS / 60_000} minutes is taken.
+once. The station with the fewest profiles sets the times; of each other one the nearest profile in time is taken. Where
+several instruments stand at one place, the one with the most profiles gives the wind and all may give the humidity.
 
-Prints a JSON line a time and layer, at the levels that the stations share, else every ${LAYER_STEP} m, up to ${HIGHEST_LAYER} m:
-  time, stations           UTC; the stations that had wind there
-  height_agl_m
+Prints a JSON line a time and layer, layers of 250 m up to 3 km:
+  time, stations           UTC; the stations that took part
+  height_agl_m             middle of the layer
   status, why              ok, or not-assessable with the reason
   area_km2                 within the outermost stations
   divergence_per_s, vorticity_per_s
   moisture_flux_divergence_per_s
-                           of q V with q in kg/kg; negative where moisture gathers; null where a humidity is missing`,
+                           of q V with q in kg/kg; negative where moisture gathers; null where a humidity is missing
+
+  --site FILE    positions of stations`,
   async run(args) {
-    const { positionals } = parseOptions(args, {});
+    const { values, positionals } = parseOptions(args, SITE_OPTION);
+    const site = await siteOf(values.site);
     const stations = new Map<string, Profile[]>();
-    const code = await forEachBlock(positionals, PLAIN_SITE, (block) => {
-      for (const profile of profilesOf(screen(block, { site: PLAIN_SITE }).block)) {
-        const known = stations.get(profile.station.id);
-        if (known === undefined) stations.set(profile.station.id, [profile]);
-        else known.push(profile);
-      }
-      return Promise.resolve();
+    const code = await readPaths(positionals, site, {
+      take: (block) => {
+        for (const profile of profilesOf(screen(block, { site }).block)) {
+          const known = stations.get(profile.station.id);
+          if (known === undefined) stations.set(profile.station.id, [profile]);
+          else known.push(profile);
+        }
+        return Promise.resolve();
+      },
     });
-    if (stations.size < 3) {
-      const names = [...stations.keys()].join(', ');
-      process.stderr.write(
-        `Three stations are needed; here are ${stations.size}${names === '' ? '' : ` (${names})`}.\n`,
-      );
+    const all = [...stations.values()];
+    for (const profiles of all) profiles.sort((a, b) => a.timeMs - b.timeMs);
+    const series = onePerPlace(all);
+    if (series.length < 3) {
+      const names = series.map(([profile]) => profile!.station.id).join(', ');
+      process.stderr.write(`Three places are needed; here are ${series.length}${names === '' ? '' : ` (${names})`}.\n`);
       return code === EXIT.well ? EXIT.someUnread : code;
     }
     const out = new LineWriter(process.stdout);
-    for (const moment of momentsOf([...stations.values()])) {
-      for (const height of layerHeights(moment.levels)) {
-        await out.write(layerLine(moment.timeMs, moment.levels, height));
-      }
+    for (const time of triangleThroughTime(series, { humidity: all.flat().filter(carriesHumidity) })) {
+      for (const layer of time.layers) await out.write(layerLine(time, layer));
     }
     await out.flush();
     return code;
   },
 };
 
-interface TriangleMoment {
-  readonly timeMs: number;
-  readonly levels: readonly StationLevels[];
-}
-
-/** The times of the station with the fewest profiles, with the nearest profile of each other one. */
-function* momentsOf(stations: readonly (readonly Profile[])[]): Generator<TriangleMoment> {
-  const byCount = [...stations].sort((a, b) => a.length - b.length || (a[0]!.station.id < b[0]!.station.id ? -1 : 1));
-  const [fewest, ...others] = byCount;
-  for (const profile of [...fewest!].sort((a, b) => a.timeMs - b.timeMs)) {
-    const near = others.map((profiles) => nearest(profiles, profile.timeMs)).filter((found) => found !== null);
-    yield { timeMs: profile.timeMs, levels: [profile, ...near].map(levelsOf) };
+/** Of the stations at one place the one with the most profiles; those without a position stand alone. */
+function onePerPlace(stations: readonly (readonly Profile[])[]): (readonly Profile[])[] {
+  const places: (readonly Profile[])[] = [];
+  for (const profiles of [...stations].sort((a, b) => b.length - a.length)) {
+    const here = profiles[0]!.station;
+    if (!places.some(([other]) => distanceBetween(other!.station, here) <= SAME_PLACE)) places.push(profiles);
   }
+  return places.sort((a, b) => (a[0]!.station.id < b[0]!.station.id ? -1 : 1));
 }
 
-function nearest(profiles: readonly Profile[], timeMs: number): Profile | null {
-  const away = (profile: Profile): number => Math.abs(profile.timeMs - timeMs);
-  const best = profiles.reduce((a, b) => (away(b) < away(a) ? b : a));
-  return away(best) <= TOGETHER_MS ? best : null;
+function carriesHumidity({ specificHumidity }: Profile): boolean {
+  return specificHumidity?.some((value) => value >= 0) ?? false;
 }
 
-/** The levels that all stations have, where those are most of them; else even steps within the data of three stations. */
-function layerHeights(levels: readonly StationLevels[]): number[] {
-  const [first, ...others] = levels.map(({ wind }) => wind.heightAgl.filter((height) => height <= HIGHEST_LAYER));
-  const shared = first!.filter((height) => others.every((heights) => heights.includes(height)));
-  const fewest = Math.min(first!.length, ...others.map((heights) => heights.length));
-  if (shared.length > 0 && 2 * shared.length >= fewest) return shared;
-  const steps = Array.from({ length: HIGHEST_LAYER / LAYER_STEP }, (_, k) => LAYER_STEP * (k + 1));
-  const within = (height: number): number =>
-    levels.filter(({ wind }) => wind.heightAgl[0]! <= height && wind.heightAgl.at(-1)! >= height).length;
-  const reached = steps.filter((height) => within(height) >= 3);
-  // Where nothing is reached one line says why.
-  return reached.length > 0 ? reached : [LAYER_STEP];
-}
-
-function layerLine(timeMs: number, levels: readonly StationLevels[], heightAgl: number): Record<string, unknown> {
-  const points = levels.map((station) => ({ id: station.id, ...pointAt(station, heightAgl) }));
-  const field: WindField = windField(points);
+/** A layer as the contract of `triangle` has it. */
+function layerLine(time: TriangleTime, { heightAgl, field }: TriangleLayer): Record<string, unknown> {
   return {
-    time: isoTime(timeMs),
-    stations: points.filter(({ u }) => !Number.isNaN(u)).map(({ id }) => id),
+    time: isoTime(time.timeMs),
+    stations: time.stations,
     height_agl_m: heightAgl,
     status: field.status,
     why: field.why,

@@ -27,6 +27,12 @@ describe('moisture', () => {
     expect(lower).toBeGreaterThan(0);
   });
 
+  it('borrows humidity and says whose and how old', async () => {
+    const ran = await duskveer(['moisture', demo('storm')]);
+    const line = ran.lines().find(({ station, time }) => station === 'ashwillow' && time === '2024-06-28T06:30:00Z')!;
+    expect(line).toMatchObject({ status: 'ok', humidity_from: 'ashwillow-sonde', humidity_age_s: 3600 });
+  });
+
   it('says why where there is no humidity', async () => {
     const [line] = (await duskveer(['moisture', demo('valley/quill-lidar.nc')])).lines();
     expect(line).toMatchObject({ status: 'not-assessable', why: 'no humidity', transport_kg_per_m_s: null });

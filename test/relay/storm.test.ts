@@ -12,7 +12,7 @@ describe('storm', () => {
     expect(ran).toMatchObject({ code: 0, err: '' });
     const line = ran.lines()[50] as StormLine;
     expect(Object.keys(line).join(' ')).toBe(
-      'station time status why parcels shear_0_1km_mps shear_0_3km_mps shear_0_6km_mps srh_0_1km_m2_per_s2 ' +
+      'station time status why air_from air_age_s parcels shear_0_1km_mps shear_0_3km_mps shear_0_6km_mps srh_0_1km_m2_per_s2 ' +
         'srh_0_3km_m2_per_s2 motion clusters',
     );
     expect(line.parcels.map((parcel) => parcel.start)).toEqual([
@@ -30,6 +30,15 @@ describe('storm', () => {
       shear_0_1km_mps: expect.any(Number) as number,
     });
     expect(line.why).toContain('6000 m are needed');
+  });
+
+  it('joins the wind of the profiler with the air of the sounding beside it', async () => {
+    const ran = await duskveer(['storm', demo('storm')]);
+    const line = ran.lines().find(({ station, time }) => station === 'ashwillow' && time === '2024-06-28T06:30:00Z')!;
+    // Launched at 05:30 from the same place; the neighbours' radiometers are newer but 120 km away.
+    expect(line).toMatchObject({ air_from: 'ashwillow-sonde', air_age_s: 3600 });
+    const parcels = (line as StormLine).parcels;
+    expect(parcels.find((parcel) => parcel.start === 'most-unstable')!.cape_j_per_kg).toBeGreaterThan(500);
   });
 
   it('reckons helicity with the motion that is given', async () => {
