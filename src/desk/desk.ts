@@ -9,7 +9,8 @@ import { profileAt, profileRange, type Profile, type ProfileBlock } from '../pro
 import { screen, type FeedScreening } from '../quality/index.ts';
 import { windOnDisc, type DiscWind } from '../rotor/index.ts';
 import { siteStation, type Site, type TurbineType } from '../site/index.ts';
-import { FeedStore, type Acceptance, type FeedName } from './feed-store.ts';
+import type { FeedName } from './feed-name.ts';
+import { FeedStore, type Acceptance } from './feed-store.ts';
 import { nightWindow, type NightWindow } from './night-window.ts';
 
 /** A feed with what a reader must know to choose it and to trust it. */

@@ -1,23 +1,8 @@
 // Which profiles are at hand, feed by feed, whatever the order, number and lateness in which they came.
 
-import {
-  INSTRUMENTS,
-  pickProfiles,
-  VALUE_COLUMNS,
-  type Instrument,
-  type Pick,
-  type ProfileBlock,
-  type Station,
-} from '../profile/index.ts';
-import { siteStation, type Site } from '../site/index.ts';
-
-/** One instrument at one station: what a reader of the page chooses between. */
-export interface FeedName {
-  /** `station/instrument`, stable. */
-  readonly key: string;
-  readonly station: Station;
-  readonly instrument: Instrument;
-}
+import { pickProfiles, VALUE_COLUMNS, type Pick, type ProfileBlock, type Station } from '../profile/index.ts';
+import type { Site } from '../site/index.ts';
+import { compareStations, feedNameOf, type FeedName } from './feed-name.ts';
 
 /** What came of handing a block over. */
 export interface Acceptance {
@@ -94,15 +79,11 @@ export class FeedStore {
   }
 
   #feedOf(block: ProfileBlock, index: number): Feed {
-    const told = block.stations[block.stationIndex[index]!]!;
-    const known = siteStation(this.#site, told.id);
-    const instrument = known?.instrument ?? INSTRUMENTS[block.instrumentIndex[index]!]!;
-    const id = known?.id ?? told.id;
-    const key = `${id}/${instrument}`;
+    const name = feedNameOf(block, index, this.#site);
+    const { key, station } = name;
     let feed = this.#feeds.get(key);
-    const station = placed(told, known);
     if (feed === undefined) {
-      feed = { name: { key, station, instrument }, byTime: new Map(), block: null };
+      feed = { name, byTime: new Map(), block: null };
       this.#feeds.set(key, feed);
     } else if (compareStations(station, feed.name.station) > 0) {
       feed.name = { ...feed.name, station };
@@ -110,28 +91,6 @@ export class FeedStore {
     }
     return feed;
   }
-}
-
-/** What the site file says of a station wins, key by key; what it leaves out comes from the file. */
-function placed(told: Station, known: Station | undefined): Station {
-  if (known === undefined) return told;
-  const either = (a: number, b: number): number => (Number.isNaN(a) ? b : a);
-  return {
-    id: known.id,
-    name: known.name,
-    latitude: either(known.latitude, told.latitude),
-    longitude: either(known.longitude, told.longitude),
-    elevation: either(known.elevation, told.elevation),
-  };
-}
-
-/** Positive when a is to be preferred: files that place one station differently must end in one place, whichever came first. */
-function compareStations(a: Station, b: Station): number {
-  const known = ({ latitude, longitude, elevation }: Station): number =>
-    [latitude, longitude, elevation].filter((value) => !Number.isNaN(value)).length;
-  const inWords = ({ name, latitude, longitude, elevation }: Station): string =>
-    [latitude, longitude, elevation, name].join('/');
-  return known(a) - known(b) || (inWords(a) > inWords(b) ? 1 : inWords(a) < inWords(b) ? -1 : 0);
 }
 
 /** The block with one station for all its profiles, as the feed knows it. */

@@ -1,3 +1,27 @@
 export { Desk, type DiscSeries, type FeedState, type NightQuestion, type NightState } from './desk.ts';
-export type { Acceptance, FeedName } from './feed-store.ts';
+export type { FeedName } from './feed-name.ts';
+export type { Acceptance } from './feed-store.ts';
 export type { NightWindow } from './night-window.ts';
+export { archiveRows, judge, type ArchiveQuestion } from './archive/judge.ts';
+export { mergeRows } from './archive/merge.ts';
+export { NightGatherer, nightRows, type NightRow, type RotorMean } from './archive/nights.ts';
+export type { DiscColumns, FeedRows, JetColumns, ProfileColumns } from './archive/rows.ts';
+export { profileTable } from './archive/profile-table.ts';
+export { jetTable } from './archive/jet-table.ts';
+export { nightTable } from './archive/night-table.ts';
+export { csvHeading, csvRows } from './archive/csv.ts';
+export type { ColumnKind, FilledColumn, Table, TableColumn } from './archive/table.ts';
+export type { NamedDisc } from './archive/table-parts.ts';
+export {
+  ArchiveTally,
+  figureRows,
+  ROSE_SECTORS,
+  ROSE_SPEEDS,
+  solarClock,
+  type ArchiveFigures,
+  type Clock,
+  type FigureNight,
+  type FigureRows,
+  type RotorFigures,
+} from './archive/figures.ts';
+export type { Histogram } from './archive/histogram.ts';

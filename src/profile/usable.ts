@@ -38,15 +38,24 @@ export function windColumn(capacity = 256): WindColumn {
  * @returns `out`, for chaining; levels with NaN height or speed or with a rejecting mark are passed over
  */
 export function gatherWind(profile: Profile, out: WindColumn): WindColumn {
-  return gather(profile, 0, profile.levelCount, out);
+  return gather(profile, 0, profile.levelCount, Infinity, out);
 }
 
-/** The same for the i-th profile of a block, without making the view. */
-export function gatherWindAt(block: ProfileBlock, index: number, out: WindColumn): WindColumn {
-  return gather(block, block.offsets[index]!, block.offsets[index + 1]!, out);
+/**
+ * The same for the i-th profile of a block, without making the view.
+ * @param upTo m above ground: the first usable level at or above it is the last one taken
+ */
+export function gatherWindAt(block: ProfileBlock, index: number, out: WindColumn, upTo = Infinity): WindColumn {
+  return gather(block, block.offsets[index]!, block.offsets[index + 1]!, upTo, out);
 }
 
-function gather(levels: Profile | ProfileBlock, start: number, end: number, out: WindColumn): WindColumn {
+function gather(
+  levels: Profile | ProfileBlock,
+  start: number,
+  end: number,
+  upTo: number,
+  out: WindColumn,
+): WindColumn {
   if (out.heightAgl.length < end - start) Object.assign(out, windColumn(2 * (end - start)));
   const { heightAgl, speed, direction, speedUncertainty, mark } = levels;
   let count = 0;
@@ -59,6 +68,7 @@ function gather(levels: Profile | ProfileBlock, start: number, end: number, out:
     out.mark[count] = mark[k]!;
     out.level[count] = k - start;
     count++;
+    if (heightAgl[k]! >= upTo) break;
   }
   out.count = count;
   return out;
