@@ -5,12 +5,13 @@ export type { NightWindow } from './night-window.ts';
 export { archiveRows, judge, type ArchiveQuestion } from './archive/judge.ts';
 export { mergeRows } from './archive/merge.ts';
 export { NightGatherer, nightRows, type NightRow, type RotorMean } from './archive/nights.ts';
-export type { DiscColumns, FeedRows, JetColumns, ProfileColumns } from './archive/rows.ts';
+export { emptyRows, STATUSES, type FeedRows } from './archive/rows.ts';
+export { compareStations } from './feed-name.ts';
 export { profileTable } from './archive/profile-table.ts';
 export { jetTable } from './archive/jet-table.ts';
 export { nightTable } from './archive/night-table.ts';
 export { csvHeading, csvRows } from './archive/csv.ts';
-export type { ColumnKind, FilledColumn, Table, TableColumn } from './archive/table.ts';
+export { textColumn, yesNoColumn, type FilledColumn, type Table } from './archive/table.ts';
 export type { NamedDisc } from './archive/table-parts.ts';
 export {
   ArchiveTally,

@@ -49,13 +49,7 @@ export function gatherWindAt(block: ProfileBlock, index: number, out: WindColumn
   return gather(block, block.offsets[index]!, block.offsets[index + 1]!, upTo, out);
 }
 
-function gather(
-  levels: Profile | ProfileBlock,
-  start: number,
-  end: number,
-  upTo: number,
-  out: WindColumn,
-): WindColumn {
+function gather(levels: Profile | ProfileBlock, start: number, end: number, upTo: number, out: WindColumn): WindColumn {
   if (out.heightAgl.length < end - start) Object.assign(out, windColumn(2 * (end - start)));
   const { heightAgl, speed, direction, speedUncertainty, mark } = levels;
   let count = 0;

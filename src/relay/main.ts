@@ -39,6 +39,10 @@ const COMMANDS: Readonly<Record<string, { summary: string; load: () => Promise<C
     summary: 'computes parcels, shear, helicity and storm motion',
     load: async () => (await import('./storm.ts')).command,
   },
+  scan: {
+    summary: 'makes tables of jets and nights out of years of files',
+    load: async () => (await import('./scan/scan.ts')).command,
+  },
   serve: {
     summary: 'shows the page in a browser, with the demo loaded',
     load: async () =>

@@ -60,10 +60,17 @@ Prints a JSON line a profile and turbine type:
 };
 
 function chosenTurbines(site: Site, hub: string | undefined, diameter: string | undefined): readonly TurbineType[] {
-  if (hub === undefined && diameter === undefined) {
-    if (site.turbines.length > 0) return site.turbines;
-    throw new UsageError('It needs a disc: --hub and --diameter in metres, or --site with a file that lists turbines.');
-  }
+  const turbines = turbinesOf(site, hub, diameter);
+  if (turbines.length > 0) return turbines;
+  throw new UsageError('It needs a disc: --hub and --diameter in metres, or --site with a file that lists turbines.');
+}
+
+/**
+ * The disc of these numbers, or the site's turbine types where they are not given.
+ * @throws UsageError when the numbers make no disc
+ */
+export function turbinesOf(site: Site, hub: string | undefined, diameter: string | undefined): readonly TurbineType[] {
+  if (hub === undefined && diameter === undefined) return site.turbines;
   if (hub === undefined || diameter === undefined) throw new UsageError('--hub and --diameter go together.');
   const hubHeight = numberOption('hub', hub, 1, 500);
   const rotorDiameter = numberOption('diameter', diameter, 1, 500);

@@ -11,8 +11,9 @@ export default defineConfig({
     outDir: 'dist/relay',
     copyPublicDir: false,
     rolldownOptions: {
-      input: 'src/relay/main.ts',
-      output: { entryFileNames: 'main.js', chunkFileNames: '[name]-[hash].js' },
+      // The second is what each thread of a scan runs.
+      input: { main: 'src/relay/main.ts', 'scan-worker': 'src/relay/scan/worker.ts' },
+      output: { entryFileNames: '[name].js', chunkFileNames: '[name]-[hash].js' },
     },
   },
 });

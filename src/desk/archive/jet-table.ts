@@ -8,6 +8,7 @@ import {
   CATEGORY,
   CONFIDENCE,
   datesOf,
+  discAtStation,
   discPrefixes,
   EVENING,
   feedColumns,
@@ -61,7 +62,9 @@ export function jetTable(rows: FeedRows, discs: readonly NamedDisc[]): Table {
         yesNoColumn(
           `${prefixes[i]!}_nose_in_rotor`,
           `whether the nose lies between the tips of ${disc.name}`,
-          Uint8Array.from(jets.noseHeight, (height) => Number(noseInDisc(disc, height))),
+          Uint8Array.from(jets.noseHeight, (height) =>
+            Number(noseInDisc(discAtStation(disc, feed.station.elevation), height)),
+          ),
         ),
       ),
     ],

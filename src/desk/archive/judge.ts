@@ -3,7 +3,7 @@
 import { findJets, hasCategories, NO_JET, NOT_ASSESSABLE, scanNoses, type Criteria } from '../../jet/index.ts';
 import { gatherWindAt, profileAt, REJECTING, windColumn, type ProfileBlock } from '../../profile/index.ts';
 import { screen } from '../../quality/index.ts';
-import { FleetScan, topTip, type Disc } from '../../rotor/index.ts';
+import { FleetScan, topTip } from '../../rotor/index.ts';
 import { siteStation, type Site } from '../../site/index.ts';
 import { compareStations, feedNameOf, type FeedName } from '../feed-name.ts';
 import { mergeRows, pickRows } from './merge.ts';
@@ -17,13 +17,14 @@ import {
   type JetColumns,
   type ProfileColumns,
 } from './rows.ts';
+import { discAtStation, type NamedDisc } from './table-parts.ts';
 
 /** What is asked of every profile of an archive. */
 export interface ArchiveQuestion {
   readonly site: Site;
   readonly criteria: Criteria;
   /** Discs for which the rotor's wind is worked out. */
-  readonly discs: readonly Disc[];
+  readonly discs: readonly NamedDisc[];
   /** Goes in as the rows' source instead of the block's own. */
   readonly source: string;
 }
@@ -155,12 +156,16 @@ const wind = windColumn();
  * The wind on every disc. Levels above the highest tip change nothing but the first of them, so they are not gathered;
  * only where a level lacks a direction does it matter whether any other has one.
  */
-function discRows(block: ProfileBlock, discs: readonly Disc[]): DiscColumns[] {
+function discRows(block: ProfileBlock, discs: readonly NamedDisc[]): DiscColumns[] {
   const rows = discs.map(() => discColumns(block.profileCount));
   if (discs.length === 0) return rows;
-  const scan = new FleetScan(discs);
-  const upTo = Math.max(...discs.map(topTip));
+  // The same turbines stand at another height over each station's ground.
+  const scans = block.stations.map(({ elevation }) => {
+    const atStation = discs.map((disc) => discAtStation(disc, elevation));
+    return { scan: new FleetScan(atStation), upTo: Math.max(...atStation.map(topTip)) };
+  });
   for (let index = 0; index < block.profileCount; index++) {
+    const { scan, upTo } = scans[block.stationIndex[index]!]!;
     gatherWindAt(block, index, wind, upTo);
     let directed = true;
     for (let k = 0; k < wind.count; k++) directed &&= wind.direction[k]! >= 0;

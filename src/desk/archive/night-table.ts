@@ -60,12 +60,12 @@ export function nightTable(nights: readonly NightRow[], discs: readonly NamedDis
       timeColumn(
         'sunset',
         'upper limb on a level horizon',
-        numbers(({ sunsetMs }) => sunsetMs),
+        numbers(({ sunsetMs }) => wholeSecond(sunsetMs)),
       ),
       timeColumn(
         'sunrise',
         'the same in the morning',
-        numbers(({ sunriseMs }) => sunriseMs),
+        numbers(({ sunriseMs }) => wholeSecond(sunriseMs)),
       ),
       wholeColumn(
         'profiles',
@@ -195,4 +195,9 @@ function meanColumns(
     ),
     numberColumn(`${prefix}_veer_deg`, 'degrees 2', `mean turn from lower to upper tip (${of})`, numbers('veer')),
   ];
+}
+
+/** Sun times are good to a minute; their milliseconds are none worth writing. */
+function wholeSecond(timeMs: number): number {
+  return Math.round(timeMs / 1000) * 1000;
 }

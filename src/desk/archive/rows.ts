@@ -111,6 +111,18 @@ export function discColumns(count: number): DiscColumns {
   return Object.fromEntries(DISC_COLUMNS.map((name) => [name, missing(count)])) as unknown as DiscColumns;
 }
 
+/** No rows: what the tables' columns are told from. */
+export function emptyRows(feed: FeedName, discs: number): FeedRows {
+  return {
+    feed,
+    sources: [],
+    reasons: [''],
+    profiles: profileColumns(0),
+    jets: jetColumns(0),
+    discs: Array.from({ length: discs }, () => discColumns(0)),
+  };
+}
+
 /** Where each profile's jets begin in the jets' columns; one more than there are profiles. */
 export function jetOffsets({ jetCount }: ProfileColumns): Uint32Array {
   const offsets = new Uint32Array(jetCount.length + 1);

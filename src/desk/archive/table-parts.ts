@@ -8,6 +8,14 @@ import { textColumn, type FilledColumn } from './table.ts';
 /** A disc with the name of its turbine type. */
 export interface NamedDisc extends Disc {
   readonly name: string;
+  /** m above sea level: ground under the turbines; NaN where they stand at the station's height. */
+  readonly groundElevation: number;
+}
+
+/** The disc as the station's heights above ground have it. */
+export function discAtStation(disc: NamedDisc, elevation: number): Disc {
+  const lift = disc.groundElevation - elevation;
+  return { hubHeight: disc.hubHeight + (Number.isNaN(lift) ? 0 : lift), rotorDiameter: disc.rotorDiameter };
 }
 
 export const IEC = 'IEC 61400-12-1:2017';
