@@ -5,13 +5,14 @@ import type { LightSpan } from '../air/index.ts';
 import { lightSpans } from '../air/index.ts';
 import { criteriaOf, findJets, trackJets, type Criteria, type JetFinding, type JetTrack } from '../jet/index.ts';
 import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
-import { profileAt, profileRange, type Profile, type ProfileBlock } from '../profile/index.ts';
+import { profileAt, profileRange, type ProfileBlock } from '../profile/index.ts';
 import { screen, type FeedScreening } from '../quality/index.ts';
-import { windOnDisc, type DiscWind } from '../rotor/index.ts';
-import { siteStation, type Site, type TurbineType } from '../site/index.ts';
+import { siteStation, type Site } from '../site/index.ts';
+import { farmThrough, type DiscSeries, type FarmState } from './farm.ts';
 import type { FeedName } from './feed-name.ts';
 import { FeedStore, type Acceptance } from './feed-store.ts';
 import { nightWindow, type NightWindow } from './night-window.ts';
+import { siteDiscWind } from './site-disc.ts';
 
 /** A feed with what a reader must know to choose it and to trust it. */
 export interface FeedState extends FeedName {
@@ -23,12 +24,6 @@ export interface FeedState extends FeedName {
   /** Usual time between profiles, ms: the median; NaN for a lone profile. */
   readonly intervalMs: number;
   readonly screening: readonly FeedScreening[];
-}
-
-/** What one turbine type meets through the night, a record for each profile of the series. */
-export interface DiscSeries {
-  readonly turbine: TurbineType;
-  readonly winds: readonly DiscWind[];
 }
 
 /** One feed's night as far as it is known at a moment. Series run in parallel with `timeMs`. */
@@ -44,6 +39,7 @@ export interface NightState {
   /** The stories of the night's jets as far as they are known at `atMs`. */
   readonly tracks: readonly JetTrack[];
   readonly discs: readonly DiscSeries[];
+  readonly farm: FarmState;
   readonly moisture: readonly MoistureNumbers[];
 }
 
@@ -123,16 +119,26 @@ export class Desk {
       timeMs: block.timeMs[indices[k]!]!,
       finding,
     }));
+    const timeMs = indices.map((index) => block.timeMs[index]!);
+    const tracks = trackJets(timed);
+    const discs = this.site.turbines.map((turbine) => ({
+      turbine,
+      winds: profiles.map((profile, k) =>
+        siteDiscWind(profile, turbine, findings[k]!.jets[0]?.noseHeight ?? NaN, this.site),
+      ),
+    }));
+    const { sunriseMs } = window.night;
     return {
       atMs,
       feed,
       window,
       lights: lightSpans(window.startMs, window.endMs, feed.station.latitude, feed.station.longitude),
       criteria,
-      timeMs: indices.map((index) => block.timeMs[index]!),
+      timeMs,
       findings,
-      tracks: trackJets(timed),
-      discs: this.site.turbines.map((turbine) => ({ turbine, winds: discWinds(turbine, profiles, findings) })),
+      tracks,
+      discs,
+      farm: farmThrough({ site: this.site, timeMs, profiles, discs, tracks, sunriseMs }),
       moisture: profiles.map((profile, k) => moistureOf(profile, { jetLayer: coreOf(findings[k]!) })),
     };
   }
@@ -189,10 +195,6 @@ function countUntil(timeMs: Float64Array, moment: number): number {
 
 function coreOf(finding: JetFinding): { bottom: number; top: number } | undefined {
   return finding.jets[0]?.core;
-}
-
-function discWinds(turbine: TurbineType, profiles: readonly Profile[], findings: readonly JetFinding[]): DiscWind[] {
-  return profiles.map((profile, k) => windOnDisc(profile, turbine, { nose: findings[k]!.jets[0]?.noseHeight ?? NaN }));
 }
 
 function medianInterval(times: Float64Array): number {

@@ -1,4 +1,4 @@
-export { Desk, type DiscSeries, type FeedState, type NightQuestion, type NightState } from './desk.ts';
+export { Desk, type FeedState, type NightQuestion, type NightState } from './desk.ts';
 export type { FeedName } from './feed-name.ts';
 export type { Acceptance } from './feed-store.ts';
 export type { NightWindow } from './night-window.ts';
@@ -26,3 +26,12 @@ export {
   type RotorFigures,
 } from './archive/figures.ts';
 export type { Histogram } from './archive/histogram.ts';
+export {
+  USUAL_RAMPS,
+  type DiscNight,
+  type DiscSeries,
+  type FarmRamp,
+  type FarmState,
+  type WatchedLoad,
+} from './farm.ts';
+export { siteDiscWind } from './site-disc.ts';

@@ -5,6 +5,7 @@ import type { Board } from '../state/board.svelte.ts';
 import type { Picture } from '../state/picture.svelte.ts';
 import type { TimeWords } from '../words/time.ts';
 import Feeds from './Feeds.svelte';
+import Rotor from './Rotor.svelte';
 import Tonight from './Tonight.svelte';
 
 export interface PageProps {
@@ -22,5 +23,6 @@ export interface Page {
 
 export const PAGES: readonly Page[] = [
   { path: 'tonight', title: 'Tonight', component: Tonight },
+  { path: 'rotor', title: 'Rotor', component: Rotor },
   { path: 'feeds', title: 'Feeds', component: Feeds },
 ];
