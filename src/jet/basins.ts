@@ -9,11 +9,13 @@ export interface Basin {
 }
 
 /** A nose that stands out by less than this, m/s, is no nose of its own, however certain the levels. Our own choice. */
-const LEAST_PROMINENCE = 0.5;
+const LEAST_PROMINENCE = 1;
+/** And by so many times the uncertainty of its level. */
+const PROMINENCE_FACTOR = 2;
 
 /**
  * Splits a column at the minima between its distinct noses. A maximum that stands out from the saddle to a greater one by
- * less than the uncertainty of its level, or by less than 0.5 m/s, is merged into it.
+ * less than twice the uncertainty of its level, or by less than 1 m/s, is merged into it.
  * @param speed m/s, smooth, `count` values
  * @param uncertainty m/s of the levels the curve was drawn through
  * @returns lowest first; maxima at the lowest or highest level are no noses, but hold their stretch against others
@@ -29,7 +31,8 @@ export function basinsOf(speed: ArrayLike<number>, uncertainty: ArrayLike<number
       const saddleBelow = i > 0 ? speed[basin.lowest]! : -Infinity;
       const saddleAbove = i < basins.length - 1 ? speed[basin.highest]! : -Infinity;
       const prominence =
-        (peak - Math.max(saddleBelow, saddleAbove)) / Math.max(LEAST_PROMINENCE, uncertainty[basin.nose]!);
+        (peak - Math.max(saddleBelow, saddleAbove)) /
+        Math.max(LEAST_PROMINENCE, PROMINENCE_FACTOR * uncertainty[basin.nose]!);
       if (prominence < least) {
         least = prominence;
         weakest = i;

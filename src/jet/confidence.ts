@@ -133,7 +133,7 @@ export function judgeEnsemble(
 /**
  * Members are smoother than the levels but keep some of their wiggles. For a fall-off as shallow as 2 m/s these would end
  * the fall too soon: there a rise within so many uncertainties of the levels does not. Found on simulated nights, where
- * confidence is then right about as often as it says (test/outside/confidence-on-nights.test.ts).
+ * confidence is then right about as often as it says (test/jet/nights.test.ts).
  */
 const TOLERATED_RISE = 0.4;
 const SHALLOW_FALLOFF = 4;

@@ -15,3 +15,7 @@ export {
 export { jetLayer, noseAgainst, type Disc, type JetFlank, type JetLayer, type NosePlace } from './jet-layer.ts';
 export { thermalTurn, type ThermalTurn } from './thermal-turn.ts';
 export { turningAt, type Turning, type TurningOptions, type TurningVerdict } from './turning.ts';
+export { JET_KINDS, type Evidence, type JetKind } from './evidence.ts';
+export { type KindFinding } from './kinds.ts';
+export { storyOf, type JetStory, type StorySetting } from './story.ts';
+export { type WordFormat } from './story-words.ts';

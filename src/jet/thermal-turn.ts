@@ -71,7 +71,8 @@ export function thermalTurn(profile: Profile, above: number, latitude: number): 
   const kelvinPerHour = 3600 * advectionBetweenHeights(lower, upper, { latitude, meanTemperature });
   const veer = veerBetween(lower.direction, upper.direction);
   const sense = Math.abs(kelvinPerHour) < LEAST_ADVECTION ? 'neither' : kelvinPerHour > 0 ? 'warm' : 'cold';
-  const turn = `The wind ${veer >= 0 ? 'veers' : 'backs'} by ${Math.round(Math.abs(veer))} degrees`;
+  const degrees = Math.round(Math.abs(veer));
+  const turn = `The wind ${veer >= 0 ? 'veers' : 'backs'} by ${degrees} ${degrees === 1 ? 'degree' : 'degrees'}`;
   const where = `from ${Math.round(lower.height)} to ${Math.round(upper.height)} m`;
   const meaning =
     sense === 'neither'

@@ -66,7 +66,7 @@ const HOUR_MS = 3600_000;
 /** Evidence of a profile counts in full when it comes this long after the one before: sooner ones tell much the same. */
 const FULL_WEIGHT_MS = 600_000;
 /** What a track must be worth beyond its own evidence, in natural log units: three sure profiles of 10 minutes. */
-const BIRTH = 5;
+const BIRTH = 6.5;
 /** The most that one profile can say for or against. */
 const MOST_EVIDENCE = 3;
 /** Cost of an hour, and of each profile of 10 minutes, passed over without a nose. */

@@ -6,8 +6,8 @@ import type { Profile } from '../profile/index.ts';
 import { fitOscillation, type FittedOscillation } from './oscillation.ts';
 import { windAtHeights, type WindVector } from './wind-at.ts';
 
-/** Inertial: the rates agree within their uncertainty. Slower and faster have the same sense, opposite the other. */
-export type TurningVerdict = 'inertial' | 'slower' | 'faster' | 'opposite';
+/** Inertial: the rates agree. Slower and faster have the same sense, opposite the other; none hardly turns at all. */
+export type TurningVerdict = 'inertial' | 'slower' | 'faster' | 'opposite' | 'none';
 
 export interface Turning {
   /** m above ground */
@@ -154,11 +154,14 @@ function refine(rates: readonly number[], squares: readonly number[], best: numb
 
 /** A difference of less than this share of the inertial rate is agreement: the pressure field, too, changes in a night. */
 const AGREEMENT = 0.3;
+/** Less than this share of the inertial rate is hardly a turn. */
+const HARDLY = 0.15;
 
 function verdictOf(measured: number, uncertainty: number, inertial: number): TurningVerdict {
   const ratio = measured / inertial;
   const doubt = Math.max(AGREEMENT, (2 * uncertainty) / Math.abs(inertial));
   if (Math.abs(ratio - 1) <= doubt) return 'inertial';
+  if (Math.abs(ratio) < HARDLY) return 'none';
   if (ratio < 0) return 'opposite';
   return ratio < 1 ? 'slower' : 'faster';
 }

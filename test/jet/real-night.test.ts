@@ -1,9 +1,13 @@
 // The real night's 73 times, as two independent programs read them.
 
-import { describe, expect, it } from 'vitest';
-import { CRITERIA, findJets } from '../../src/jet/index.ts';
+import { beforeAll, describe, expect, it } from 'vitest';
+import { bytesSource, readProfiles } from '../../src/ingest/index.ts';
+import { CRITERIA, findJets, storyOf, trackJets } from '../../src/jet/index.ts';
+import { profilesOf, type Profile } from '../../src/profile/index.ts';
 import { readShared, readSharedJson, sharedIsHere } from '../support/shared.ts';
-import { profileOf } from './support.ts';
+import { readToEnd } from '../support/sources.ts';
+
+const HOUR_MS = 3600_000;
 
 interface Minimum {
   height: number;
@@ -33,24 +37,26 @@ interface NightTime {
   };
 }
 
-/** height, speed, direction by time, out of the table's fixed columns. */
-function nightLevels(): Map<string, { heightAgl: number[]; speed: number[]; direction: number[] }> {
-  const times = new Map<string, { heightAgl: number[]; speed: number[]; direction: number[] }>();
-  const lines = new TextDecoder().decode(readShared('real/night/combined_radar_data_qc.csv')).trim().split('\n');
-  for (const line of lines.slice(1)) {
-    const [datetime, height, , , speed, direction] = line.split(',');
-    const time = `${datetime!.replace(' ', 'T')}Z`;
-    const levels = times.get(time) ?? { heightAgl: [], speed: [], direction: [] };
-    levels.heightAgl.push(Number(height));
-    levels.speed.push(Number(speed));
-    levels.direction.push(Number(direction));
-    times.set(time, levels);
-  }
-  return times;
+const file = 'real/night/combined_radar_data_qc.csv';
+
+/** The night's profiles by time. */
+async function nightProfiles(): Promise<Map<string, Profile>> {
+  const { block } = await readToEnd(readProfiles(bytesSource(file, readShared(file))));
+  return new Map([...profilesOf(block)].map((profile) => [new Date(profile.timeMs).toISOString(), profile]));
+}
+
+/** The profile's levels up to a height. */
+function upTo(profile: Profile, top: number): Profile {
+  const keep = profile.heightAgl.map((height) => (height <= top ? height : NaN));
+  return { ...profile, heightAgl: keep };
 }
 
 describe.skipIf(!sharedIsHere)('the real night', () => {
-  const levels = sharedIsHere ? nightLevels() : new Map<string, never>();
+  let profiles = new Map<string, Profile>();
+  beforeAll(async () => {
+    profiles = await nightProfiles();
+  });
+  const at = (time: string): Profile => profiles.get(new Date(time).toISOString())!;
   const expected = sharedIsHere
     ? (readSharedJson('real/expected/night-numbers.json') as { times: NightTime[] }).times
     : [];
@@ -62,7 +68,7 @@ describe.skipIf(!sharedIsHere)('the real night', () => {
   ] as const)('agrees by %s with %s', (name, key) => {
     expect(expected).toHaveLength(73);
     for (const { time, jet: want } of expected) {
-      const jet = findJets(profileOf(levels.get(time)!), CRITERIA[name], { memberPairs: 1 }).jets[0];
+      const jet = findJets(at(time), CRITERIA[name], { memberPairs: 1 }).jets[0];
       expect(jet?.category ?? null, time).toBe(want[key].category);
       if (jet === undefined) continue;
       expect(Math.abs(jet.noseHeight - want.noseHeight), time).toBeLessThan(half(1));
@@ -79,14 +85,7 @@ describe.skipIf(!sharedIsHere)('the real night', () => {
     ['of the whole profile', Infinity],
   ])('agrees by andreas-2000 with the lowest maximum between its neighbouring minima, levels %s', (_, top) => {
     for (const { time, localMaximum: want } of expected) {
-      const all = levels.get(time)!;
-      const count = all.heightAgl.filter((height) => height <= top).length;
-      const profile = profileOf({
-        heightAgl: all.heightAgl.slice(0, count),
-        speed: all.speed.slice(0, count),
-        direction: all.direction.slice(0, count),
-      });
-      const jet = findJets(profile, CRITERIA['andreas-2000'], { memberPairs: 1 }).jets[0];
+      const jet = findJets(upTo(at(time), top), CRITERIA['andreas-2000'], { memberPairs: 1 }).jets[0];
       expect(jet !== undefined, time).toBe(want.adjacentFound);
       if (jet === undefined) continue;
       const lowest = want.adjacentLowest!;
@@ -99,5 +98,37 @@ describe.skipIf(!sharedIsHere)('the real night', () => {
       if (top === 1500) expect(Math.abs(jet.falloff - lowest.excessAbove), time).toBeLessThan(half(2));
       else expect(jet.falloff, time).toBeGreaterThan(lowest.excessAbove - half(2));
     }
+  });
+
+  it("is told hour by hour: the jet of the night before to its end, the night's own from evening to morning", () => {
+    const all = [...profiles.values()].sort((a, b) => a.timeMs - b.timeMs);
+    const findings = all.map((profile) => ({
+      stationId: 'tower',
+      timeMs: profile.timeMs,
+      finding: findJets(profile, CRITERIA.duskveer),
+    }));
+    const station = { ...all[0]!.station, latitude: 33.6105, longitude: -102.0505 };
+    const stories = trackJets(findings).map((track) =>
+      storyOf(
+        track,
+        { station, profiles: all, findings, axes: [], undisturbed: [], discs: [], geostrophicSpeed: NaN },
+        { time: (timeMs) => new Date(timeMs).toISOString().slice(11, 16) },
+      ),
+    );
+    const long = stories.filter(({ track: { points, beganMs } }) => points.at(-1)!.timeMs - beganMs >= HOUR_MS);
+    expect(long.map(({ words }) => words)).toEqual([
+      expect.stringMatching(
+        /^A nocturnal jet from 12:00 to 14:[3-5]0: strongest at 12:\d0, 2[01] m\/s at 4\d0 m from 21\d/,
+      ),
+      expect.stringMatching(
+        /^A nocturnal jet from 01:\d0 to 08:[0-3]0: .*turning clockwise at the inertial rate\. It has ended\.$/,
+      ),
+    ]);
+    // The layer minimum's category 1 or more, hour by hour, is what the threads lie on.
+    const onThread = (timeMs: number): boolean =>
+      long.some(({ track }) => track.points.some((point) => point.timeMs === timeMs));
+    const strong = expected.filter(({ jet }) => (jet.layerMinimum.category ?? -1) >= 1);
+    const followed = strong.filter(({ time }) => onThread(Date.parse(time)));
+    expect(followed.length / strong.length).toBeGreaterThan(0.85);
   });
 });
