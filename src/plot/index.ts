@@ -45,7 +45,8 @@ export {
   type SectionAxesOptions,
 } from './section-axes.ts';
 export { drawSectionBarbs, pickBarbs, type BarbTiles } from './section-barbs.ts';
-export { buildSectionGrid, type SectionGrid, type SectionGridOptions } from './section-grid.ts';
+export type { SectionGrid } from './section-grid.ts';
+export { buildSectionGrid, type SectionGridOptions } from './build-section-grid.ts';
 export { SectionPicture, viewOf } from './section-picture.ts';
 export { drawSectionOver, drawSectionUnder, type Call, type SectionScene } from './section-scene.ts';
 export { THEMES, type Theme, type ThemeName } from './theme.ts';
