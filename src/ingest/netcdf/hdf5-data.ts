@@ -9,14 +9,14 @@ import { mendText } from './mend-text.ts';
 const MOST_BYTES = 2 ** 30;
 
 /** The library's complaint in the house's form; errors already in that form pass. */
-export function damagedHdf5(source: string, key: string | undefined, cause: unknown): DuskveerError {
+export function damagedHdf5(source: string, key: string | undefined, cause: unknown, byte?: number): DuskveerError {
   if (cause instanceof DuskveerError) return cause;
   return new DuskveerError(
     {
       code: 'ingest/netcdf-damaged',
       what: key === undefined ? 'The netCDF-4 (HDF5) file is damaged.' : `The values of ${key} are damaged.`,
       mend: 'Fetch the file again; if it stays so, ask its provider for an intact copy.',
-      where: key === undefined ? { source } : { source, key },
+      where: { source, ...(key === undefined ? {} : { key }), ...(byte === undefined ? {} : { byte }) },
     },
     { cause },
   );

@@ -4,6 +4,7 @@ import type * as H5 from 'h5wasm';
 import { DuskveerError } from '../../air/index.ts';
 import type { AttributeValue, Dataset, StorageType, Variable } from './dataset.ts';
 import { damagedHdf5, Hdf5Data } from './hdf5-data.ts';
+import { brokenHeap } from './hdf5-heaps.ts';
 import { mendText } from './mend-text.ts';
 
 /** An open file; `close` gives its memory back. */
@@ -44,6 +45,8 @@ let opened = 0;
  * @throws DuskveerError `ingest/netcdf-damaged`, or `ingest/hdf5-not-available` when the library cannot start
  */
 export async function openHdf5(bytes: Uint8Array, source: string): Promise<OpenHdf5> {
+  const broken = brokenHeap(bytes);
+  if (broken !== null) throw damagedHdf5(source, undefined, undefined, broken);
   loading ??= loadLibrary();
   const library = await loading.catch((cause: unknown) => {
     loading = undefined;

@@ -6,6 +6,7 @@ import { sizeOf, textOf, type Dataset, type Variable } from './dataset.ts';
 import { meaningOfHeight } from './heights.ts';
 import { layoutOf, type Layout } from './layout.ts';
 import { candidates, type Finding, type Role, type UnknownUnit } from './roles.ts';
+import { layoutByRuns } from './runs.ts';
 import { findTime, type TimeSource } from './times.ts';
 
 export interface Plan {
@@ -14,7 +15,7 @@ export interface Plan {
   readonly pivot: Variable;
   readonly layout: Layout;
   /** What was found for each role but the height. */
-  readonly roles: ReadonlyMap<Role, Finding>;
+  readonly roles: ReadonlyMap<LevelRole, Finding>;
   readonly height: Finding;
   readonly time: TimeSource;
   /** Whether one thing passed the levels one after the other, as a sonde does: the profile's time is its launch. */
@@ -36,6 +37,8 @@ const LEVEL_ROLES = [
   'signal',
   'speedUncertainty',
 ] as const satisfies readonly Role[];
+/** What a level can have beside its height. */
+export type LevelRole = (typeof LEVEL_ROLES)[number];
 
 /**
  * Makes the plan.
@@ -55,17 +58,39 @@ export function planOf(dataset: Dataset, options: ReadOptions, problems: Problem
   const refused: Problem[] = [];
   const time = findTime(dataset, refused);
   if (time === null) throw refused[0] === undefined ? missing(dataset, 'time', unknown) : new DuskveerError(refused[0]);
-  const layout = layoutOf(dataset, pivot, height.variable, time.variable.dimensions, options.limits.levels);
-  const roles = new Map<Role, Finding>();
+  const found = layoutOf(dataset, pivot, height.variable, time.variable.dimensions, options.limits.levels);
+  const runs = isOneLongRow(found, time, height)
+    ? layoutByRuns(found, time.variable.numbers(), height.variable.numbers())
+    : null;
+  const layout = runs ?? found;
+  const roles = new Map<LevelRole, Finding>();
   for (const role of LEVEL_ROLES) {
     const chosen = candidates(dataset, role).find(({ variable }) => liesAlong(variable, pivot, layout));
     if (chosen !== undefined) roles.set(role, chosen);
   }
   for (const { variable, role, units } of unknown) {
-    if (!roles.has(role) && role !== 'height') problems.push(unknownUnit(dataset, variable, units));
+    if (role !== 'height' && !roles.has(role)) problems.push(unknownUnit(dataset, variable, units));
   }
-  const launched = layout.levelDimension !== null && time.variable.dimensions.includes(layout.levelDimension);
+  const launched =
+    runs === null && layout.levelDimension !== null && time.variable.dimensions.includes(layout.levelDimension);
   return { dataset, pivot, layout, roles, height, time, launched };
+}
+
+/** Time and height both run along the only dimension: one ascent, or a table of many profiles. */
+function isOneLongRow(
+  { levelDimension, profileDimensions, ragged }: Layout,
+  time: TimeSource,
+  height: Finding,
+): boolean {
+  const alongLevels = ({ dimensions }: Variable): boolean =>
+    dimensions.length === 1 && dimensions[0] === levelDimension;
+  return (
+    ragged === null &&
+    profileDimensions.length === 0 &&
+    time.unit !== null &&
+    alongLevels(time.variable) &&
+    alongLevels(height.variable)
+  );
 }
 
 /** Variables whose dimensions can decide: winds that are complete first, then speed alone, then the air's state. */

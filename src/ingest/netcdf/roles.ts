@@ -174,7 +174,8 @@ function shortName(variable: Variable): string {
 
 const STATISTIC = /:\s*(?:standard_deviation|variance|maximum|minimum|range)\b/u;
 
-function isUnfit(variable: Variable): boolean {
+/** Quality flags, and what the file itself calls raw, not screened or a statistic. */
+export function isUnfit(variable: Variable): boolean {
   const name = shortName(variable);
   if (/^(?:qc|aqc|flag)_|_(?:qc|flag|raw|std|error|unscreened)$|^raw_/u.test(name)) return true;
   if (/\b(?:un|non-?|not )screened\b|\bunfiltered\b|\bquality\b/iu.test(textOf(variable.attributes, 'long_name')))

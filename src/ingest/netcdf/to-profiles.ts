@@ -8,20 +8,21 @@ import {
   throwIfCancelled,
   type Problem,
 } from '../../air/index.ts';
-import { blockOfColumns, type ProfileBlock } from '../../profile/index.ts';
+import { blockOfColumns, type ColumnsInput, type ProfileBlock } from '../../profile/index.ts';
 import type { ReadOptions } from '../format.ts';
+import { assumedUnit } from '../csv/assumed-units.ts';
 import { ASSUMED_PRESSURE_NOTE, levelHumidity } from '../level-humidity.ts';
 import { findScan } from '../scan/find-scan.ts';
 import { profilesFromScan } from '../scan/scan-profiles.ts';
-import { assumedUnit } from './assumed-unit.ts';
 import { textOf, type Dataset } from './dataset.ts';
 import { stationsOf } from './file-station.ts';
 import { instrumentsOf, marksOf, revisionsOf } from './flags.ts';
 import { piecesOf, type Piece } from './gather.ts';
 import { groundHeights } from './ground-heights.ts';
-import { planOf, type Plan } from './plan.ts';
-import type { Role } from './roles.ts';
+import { planOf, type LevelRole, type Plan } from './plan.ts';
+import { withoutPadding } from './padding.ts';
 import { timesOf } from './times.ts';
+import { joinedByHeight } from './wide.ts';
 
 interface Part {
   readonly block: ProfileBlock;
@@ -45,8 +46,19 @@ export function* profilesFrom(dataset: Dataset, options: ReadOptions): Generator
       yield* profilesFromScan(dataset, scan, options);
       return;
     }
+    const joined = joinedByHeight(dataset);
+    if (joined !== null) {
+      yield* profilesFrom(joined, options);
+      return;
+    }
     if (dataset.groups.length === 0) throw error;
     for (const group of dataset.groups) yield* profilesFrom(group, options);
+    return;
+  }
+  // A single height beside variables that carry theirs in their names is only the first of them.
+  const joined = plan.layout.levelDimension === null ? joinedByHeight(dataset) : null;
+  if (joined !== null) {
+    yield* profilesFrom(joined, options);
     return;
   }
   const rowDimension = plan.layout.profileDimensions[0];
@@ -68,7 +80,7 @@ function blockOf(plan: Plan, piece: Piece, options: ReadOptions, problems: Probl
   const notes: string[] = [];
   const found = stationsOf(dataset, piece, plan.height.variable.name, options.site);
   const ground = groundHeights(plan, piece, found, notes, problems);
-  const read = (role: Role): Float32Array | null => columnOf(plan, piece, role, ground.downward, notes, problems);
+  const read = (role: LevelRole): Float32Array | null => columnOf(plan, piece, role, ground.downward, notes, problems);
   const { speed, direction } = windOf(read);
   const pressure = read('pressure');
   const temperature = read('temperature');
@@ -93,7 +105,7 @@ function blockOf(plan: Plan, piece: Piece, options: ReadOptions, problems: Probl
   }
   const { timeMs, periodS } = timesOf(dataset, piece, time);
   const { profileCount } = piece;
-  return blockOfColumns({
+  const columns: ColumnsInput = {
     stations: ground.stations,
     sources: [dataset.source],
     profileCount,
@@ -115,12 +127,14 @@ function blockOf(plan: Plan, piece: Piece, options: ReadOptions, problems: Probl
     specificHumidity: humidity.specificHumidity,
     signal: read('signal'),
     speedUncertainty: read('speedUncertainty'),
-    mark: marksOf(plan, piece, ground.downward),
-  });
+    mark: marksOf(plan, piece, ground.downward) ?? new Uint32Array(ground.heightAgl.length),
+  };
+  // Heights common to all profiles pad nothing.
+  return blockOfColumns(plan.height.variable.dimensions.length > 1 ? withoutPadding(columns) : columns);
 }
 
 /** Speed and direction as measured, or out of components where the file has only these. */
-function windOf(read: (role: Role) => Float32Array | null): Record<'speed' | 'direction', Float32Array | null> {
+function windOf(read: (role: LevelRole) => Float32Array | null): Record<'speed' | 'direction', Float32Array | null> {
   const speed = read('speed');
   const direction = read('direction');
   if (speed !== null && direction !== null) return { speed, direction };
@@ -139,7 +153,7 @@ function windOf(read: (role: Role) => Float32Array | null): Record<'speed' | 'di
 function columnOf(
   plan: Plan,
   piece: Piece,
-  role: Role,
+  role: LevelRole,
   downward: boolean,
   notes: string[],
   problems: Problem[],
@@ -158,11 +172,10 @@ function columnOf(
   }
   if (values === null) return null;
   if (unit === null && role !== 'signal') {
-    const assumed = assumedUnit(role, values);
+    const assumed = assumedUnit(role, sampleOf(values));
     notes.push(`${variable.name} has no unit: taken as ${assumed.words}`);
-    if (assumed.scale !== 1 || assumed.offset !== 0) {
-      for (let k = 0; k < values.length; k++) values[k] = values[k]! * assumed.scale + assumed.offset;
-    }
+    const { scale, offset } = assumed.unit;
+    if (scale !== 1 || offset !== 0) for (let k = 0; k < values.length; k++) values[k] = values[k]! * scale + offset;
   }
   const standardName = textOf(variable.attributes, 'standard_name');
   if (standardName === 'wind_to_direction') {
@@ -171,4 +184,12 @@ function columnOf(
     for (let k = 0; k < values.length; k++) values[k] = -values[k]!;
   }
   return values;
+}
+
+/** Enough values to judge their range by. */
+function sampleOf(values: Float32Array): Float32Array {
+  const step = Math.ceil(values.length / 5000);
+  return step <= 1
+    ? values
+    : Float32Array.from({ length: Math.floor(values.length / step) }, (_, k) => values[k * step]!);
 }

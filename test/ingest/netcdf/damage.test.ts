@@ -122,6 +122,14 @@ describe('spoiled netCDF-4', () => {
     expect(await survive(netcdf4, intact)).toBe('6 profiles');
   });
 
+  it('refuses a heap of texts in which the library would go round for ever', async () => {
+    const bytes = intact.slice();
+    const heap = Buffer.from(bytes.buffer).indexOf('GCOL');
+    // The first object's head follows the heap's 16 bytes; its size stands 8 bytes further on.
+    new DataView(bytes.buffer).setBigUint64(heap + 16 + 8, 2n ** 64n - 16n, true);
+    expect(await survive(netcdf4, bytes)).toBe('ingest/netcdf-damaged');
+  });
+
   it('never leads to anything but profiles or a problem (property)', async () => {
     await fc.assert(
       fc.asyncProperty(spoiling(intact.length), async (spoil) => {

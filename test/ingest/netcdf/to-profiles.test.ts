@@ -312,6 +312,85 @@ describe('profiles of differing length', () => {
   });
 });
 
+describe('other ways of laying profiles down', () => {
+  it('joins variables that carry their height in their names, whatever else they have', async () => {
+    const common = { units: 'm s-1', standard_name: 'wind_speed' };
+    const { profiles, problems } = await read({
+      dimensions: { time: 2 },
+      variables: {
+        time: doubles(['time'], [1, 2], { units: HOURS }),
+        ws_80m: floats(['time'], [8, 9], common),
+        ws_40m: floats(['time'], [6, -9999], { ...common, missing_value: [-9999] }),
+        ws_40m_std: floats(['time'], [1, 1], { units: 'm s-1' }),
+        wd_80m: floats(['time'], [270, 280], { units: 'degree' }),
+        temp_2m: floats(['time'], [10, 11], { units: 'degC' }),
+        height_80: floats([], [80], { units: 'm', standard_name: 'height' }),
+      },
+    });
+    expect(problems).toEqual([]);
+    expect([...profiles[0]!.heightAgl]).toEqual([2, 40, 80]);
+    expect([...profiles[0]!.speed]).toEqual([NaN, 6, 8]);
+    expect([...profiles[1]!.speed]).toEqual([NaN, NaN, 9]);
+    expect([...profiles[1]!.direction]).toEqual([NaN, NaN, 280]);
+    expect(profiles[0]!.temperature![0]).toBeCloseTo(283.15, 3);
+  });
+
+  it('tells a table of times and heights in one long row from an ascent', async () => {
+    const table = (height: number[]): FileParts => ({
+      dimensions: { index: 6 },
+      variables: {
+        time: doubles(['index'], [1, 1, 1, 2, 2, 2], { units: HOURS }),
+        height: floats(['index'], height, { units: 'm', standard_name: 'height' }),
+        speed: floats(['index'], [1, 2, 3, 4, 5, 6], { units: 'm s-1' }),
+      },
+    });
+    const many = await read(table([10, 20, 30, 10, 20, 40]));
+    expect(many.profiles.map(({ timeMs }) => timeMs)).toEqual([T0 + HOUR, T0 + 2 * HOUR]);
+    expect([...many.profiles[1]!.heightAgl]).toEqual([10, 20, 40]);
+    expect([...many.profiles[1]!.speed]).toEqual([4, 5, 6]);
+    const one = await read(table([10, 20, 30, 40, 50, 60]));
+    expect(one.profiles).toHaveLength(1);
+    expect(one.profiles[0]!.levelCount).toBe(6);
+  });
+
+  it('leaves out what only pads the shorter profiles of a grid', async () => {
+    const { profiles } = await read({
+      dimensions: { profile: 2, level: 3 },
+      variables: {
+        time: doubles(['profile'], [1, 2], { units: HOURS }),
+        height: floats(['profile', 'level'], [10, 20, 30, 10, 1e30, 1e30], {
+          units: 'm',
+          _FillValue: Float32Array.of(1e30),
+        }),
+        speed: floats(['profile', 'level'], [1, 2, 3, 4, 1e30, 1e30], {
+          units: 'm s-1',
+          _FillValue: Float32Array.of(1e30),
+        }),
+      },
+    });
+    expect(profiles.map(({ levelCount }) => levelCount)).toEqual([3, 1]);
+    expect([...profiles[1]!.speed]).toEqual([4]);
+    expect(profiles[0]!.notes).toEqual(['height does not say what it is counted from: taken as above ground']);
+  });
+
+  it('guesses the unit of numbers without one by their range, and tells so', async () => {
+    const { profiles } = await read(
+      grid({
+        wind_speed: floats(['time', 'height'], [1, 2, 3, 4, 5, 6]),
+        temp: floats(['time', 'height'], [10, 11, 12, 13, 14, 15]),
+        pres: floats(['time', 'height'], [1000, 995, 990, 1000, 995, 990]),
+      }),
+    );
+    expect(profiles[0]!.temperature![0]).toBeCloseTo(283.15, 3);
+    expect(profiles[0]!.pressure![0]).toBeCloseTo(100_000, 1);
+    expect(profiles[0]!.notes).toEqual([
+      'wind_speed has no unit: taken as speed m/s',
+      'pres has no unit: taken as pressure hPa',
+      'temp has no unit: taken as temperature °C',
+    ]);
+  });
+});
+
 describe('long files', () => {
   it('come in pieces that together hold every profile', async () => {
     const times = 3000;

@@ -1,6 +1,9 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { writeCsv } from '../../../src/ingest/index.ts';
-import { BlockBuilder, MARK } from '../../../src/profile/index.ts';
+import { BlockBuilder, concatBlocks, MARK, profileAt } from '../../../src/profile/index.ts';
+import { readBytes } from '../netcdf/read-bytes.ts';
+import { madeBlock } from './made-blocks.ts';
 
 describe('writeCsv', () => {
   it('writes a line a level, with units in the headings and nothing where nothing is known', () => {
@@ -34,5 +37,30 @@ describe('writeCsv', () => {
       'heath,"Heath, ""Upper""",52.5,,71,2024-06-01T12:00:00.000Z,600,lidar,80,99500,,,,,,,,,low-signal few-beams',
     );
     expect(lines).toHaveLength(4);
+  });
+
+  it('comes back with the same winds and air (property)', async () => {
+    await fc.assert(
+      fc.asyncProperty(madeBlock(true), async (block) => {
+        const text = [...writeCsv([block])].join('');
+        const { blocks, problems } = await readBytes('made.csv', new TextEncoder().encode(text));
+        const back = concatBlocks(blocks);
+        expect(problems.map(({ code }) => code)).toEqual([]);
+        expect(back.profileCount).toBe(block.profileCount);
+        for (let index = 0; index < block.profileCount; index++) {
+          const [want, got] = [profileAt(block, index), profileAt(back, index)];
+          expect(got.station.id).toBe(want.station.id);
+          expect(got.timeMs).toBe(want.timeMs);
+          expect(got.heightAgl).toEqual(want.heightAgl);
+          expect(got.speed).toEqual(want.speed);
+          expect(got.direction).toEqual(want.direction);
+          if (want.specificHumidity !== null && got.specificHumidity !== null) {
+            expect(got.specificHumidity).toEqual(want.specificHumidity);
+          }
+          if (want.temperature !== null && got.temperature !== null) expect(got.temperature).toEqual(want.temperature);
+        }
+      }),
+      { numRuns: 40 },
+    );
   });
 });

@@ -78,12 +78,13 @@ describe('writeNetcdf', () => {
     expect(() => writeNetcdf([])).toThrow('There is no profile to write.');
   });
 
-  const hasNcdump = spawnSync('ncdump', []).error === undefined;
+  const dump = 'ncdump';
+  const hasNcdump = spawnSync(dump, []).error === undefined;
   const hasScipy = spawnSync('python3', ['-c', 'import scipy.io']).status === 0;
 
   it.skipIf(!hasNcdump)('opens in ncdump', () => {
     inFile(writeNetcdf([example()]), (path) => {
-      const text = execFileSync('ncdump', ['-t', path], { encoding: 'utf8' });
+      const text = execFileSync(dump, ['-t', path], { encoding: 'utf8' });
       expect(text).toContain('wind_speed:standard_name = "wind_speed"');
       expect(text).toContain('2024-06-01 12:10');
     });
