@@ -13,6 +13,7 @@ export type AttributeValue = string | readonly number[];
 export type Attributes = ReadonlyMap<string, AttributeValue>;
 
 export interface Variable {
+  /** Without the names of its groups. */
   readonly name: string;
   readonly type: StorageType;
   /** Names of its dimensions, outermost first; of a text variable without the one that counts characters. */

@@ -38,7 +38,7 @@ export class Hdf5Data implements Variable {
     readonly attributes: ReadonlyMap<string, AttributeValue>,
     isLetters: boolean,
   ) {
-    this.name = data.path.replace(/^\//u, '');
+    this.name = data.path.slice(data.path.lastIndexOf('/') + 1);
     this.#source = source;
     this.#data = data;
     this.#letters = isLetters ? (data.shape?.at(-1) ?? 1) : 0;

@@ -42,7 +42,7 @@ export function meaningOfHeight({ variable, unit }: Finding): HeightMeaning {
   if (GROUND_WORDS.test(words) && !SEA_WORDS.test(words)) return meaning('ground');
   if (SEA_WORDS.test(words) && !GROUND_WORDS.test(words)) return meaning('sea');
   if (standardName === 'height' || standardName === 'height_above_ground_level') return meaning('ground');
-  const name = variable.name.slice(variable.name.lastIndexOf('/') + 1).toLowerCase();
+  const name = variable.name.toLowerCase();
   if (SEA_SHORT.test(name)) return meaning('sea');
   if (/agl|above_ground/u.test(name)) return meaning('ground');
   return meaning('ground', `${variable.name} does not say what it is counted from: taken as above ground`);

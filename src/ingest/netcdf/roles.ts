@@ -135,7 +135,7 @@ export function candidates(dataset: Dataset, role: Role, unknown: UnknownUnit[] 
     if (variable.type === 'text' || isUnfit(variable)) continue;
     const standardName = textOf(variable.attributes, 'standard_name').toLowerCase();
     const standardRank = standardName === '' ? -1 : byStandard.indexOf(standardName.replace(' ', '|'));
-    const nameRank = byName.indexOf(shortName(variable));
+    const nameRank = byName.indexOf(variable.name.toLowerCase());
     // A standard name for something else outweighs a likely name.
     const rank = standardRank >= 0 ? standardRank : standardName === '' && nameRank >= 0 ? 100 + nameRank : -1;
     if (rank < 0) continue;
@@ -167,18 +167,17 @@ export function unitIn(units: string): ParsedUnit | null {
   return parseUnit(units) ?? parseUnit(units.replace(/\s+above\b.*$/iu, ''));
 }
 
-/** The last part of a name with its groups. */
-function shortName(variable: Variable): string {
-  return variable.name.slice(variable.name.lastIndexOf('/') + 1).toLowerCase();
-}
-
 const STATISTIC = /:\s*(?:standard_deviation|variance|maximum|minimum|range)\b/u;
 
 /** Quality flags, and what the file itself calls raw, not screened or a statistic. */
 export function isUnfit(variable: Variable): boolean {
-  const name = shortName(variable);
+  const name = variable.name.toLowerCase();
   if (/^(?:qc|aqc|flag)_|_(?:qc|flag|raw|std|error|unscreened)$|^raw_/u.test(name)) return true;
-  if (/\b(?:un|non-?|not )screened\b|\bunfiltered\b|\bquality\b/iu.test(textOf(variable.attributes, 'long_name')))
+  if (
+    /\b(?:un|non-?|not )screened\b|\bunfiltered\b|\bquality[ -](?:check|flag|code|index|indicator|mask)/iu.test(
+      textOf(variable.attributes, 'long_name'),
+    )
+  )
     return true;
   // Extremes and scatter over time carry the same standard name; over height or area they would not be profiles.
   return STATISTIC.test(textOf(variable.attributes, 'cell_methods'));

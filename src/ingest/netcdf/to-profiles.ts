@@ -51,8 +51,7 @@ export function* profilesFrom(dataset: Dataset, options: ReadOptions): Generator
       yield* profilesFrom(joined, options);
       return;
     }
-    if (dataset.groups.length === 0) throw error;
-    for (const group of dataset.groups) yield* profilesFrom(group, options);
+    yield* profilesFromGroups(dataset.groups, options, error);
     return;
   }
   // A single height beside variables that carry theirs in their names is only the first of them.
@@ -73,6 +72,24 @@ export function* profilesFrom(dataset: Dataset, options: ReadOptions): Generator
     });
     yield { block, problems: fresh };
   }
+}
+
+/** Some groups hold profiles, others only what belongs to them. @throws `error` when none holds any */
+function* profilesFromGroups(groups: readonly Dataset[], options: ReadOptions, error: DuskveerError): Generator<Part> {
+  let found = false;
+  let first = error;
+  for (const group of groups) {
+    try {
+      for (const part of profilesFrom(group, options)) {
+        found = true;
+        yield part;
+      }
+    } catch (trouble) {
+      if (!(trouble instanceof DuskveerError)) throw trouble;
+      if (first === error && trouble.code !== error.code) first = trouble;
+    }
+  }
+  if (!found) throw first;
 }
 
 function blockOf(plan: Plan, piece: Piece, options: ReadOptions, problems: Problem[]): ProfileBlock {

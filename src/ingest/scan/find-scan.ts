@@ -80,11 +80,12 @@ function pick(
   fits: (variable: Variable) => boolean,
 ): Variable | null {
   const all = [...dataset.variables.values()].filter(
-    (variable) => variable.type !== 'text' && fits(variable) && !/^qc_|_(?:qc|flag|raw)$/u.test(shortName(variable)),
+    (variable) =>
+      variable.type !== 'text' && fits(variable) && !/^qc_|_(?:qc|flag|raw)$/u.test(variable.name.toLowerCase()),
   );
   const byStandard = (name: string): Variable | undefined =>
     all.find((variable) => textOf(variable.attributes, 'standard_name') === name);
-  const byName = (name: string): Variable | undefined => all.find((variable) => shortName(variable) === name);
+  const byName = (name: string): Variable | undefined => all.find((variable) => variable.name.toLowerCase() === name);
   for (const name of standardNames.split(' ')) {
     const found = name === '' ? undefined : byStandard(name);
     if (found !== undefined) return found;
@@ -94,10 +95,6 @@ function pick(
     if (found !== undefined) return found;
   }
   return null;
-}
-
-function shortName(variable: Variable): string {
-  return variable.name.slice(variable.name.lastIndexOf('/') + 1).toLowerCase();
 }
 
 /** Factor that brings the variable's unit to m, m/s or degrees; 1 where it states none that is known. */

@@ -41,3 +41,32 @@ export async function buildHdf5(): Promise<Uint8Array> {
   FS.unlink(path);
   return bytes;
 }
+
+/** Two groups, each with its own times and winds, heights in the parent, and a group that holds neither. */
+export async function buildGroups(): Promise<Uint8Array> {
+  const { FS } = await h5.ready;
+  const path = '/groups-for-test.nc';
+  const file = new h5.File(path, 'w');
+  const height = file.create_dataset({ name: 'height', data: Float32Array.of(10, 20) });
+  height.create_attribute('units', 'm');
+  height.create_attribute('standard_name', 'height');
+  height.make_scale('height');
+  file.create_group('about').create_attribute('title', 'nothing to see');
+  for (const [name, hour] of [
+    ['first', 1],
+    ['second', 2],
+  ] as const) {
+    const group = file.create_group(name);
+    const time = group.create_dataset({ name: 'time', data: Float64Array.of(hour) });
+    time.create_attribute('units', 'hours since 2024-01-01');
+    time.make_scale('time');
+    const speed = group.create_dataset({ name: 'wind_speed', data: Float32Array.of(hour, hour + 1), shape: [1, 2] });
+    speed.create_attribute('units', 'm s-1');
+    speed.attach_scale(0, `/${name}/time`);
+    speed.attach_scale(1, '/height');
+  }
+  file.close();
+  const bytes = FS.readFile(path).slice();
+  FS.unlink(path);
+  return bytes;
+}

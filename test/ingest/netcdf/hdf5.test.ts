@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { profileAt } from '../../../src/profile/index.ts';
 import { mendText } from '../../../src/ingest/netcdf/mend-text.ts';
 import { readShared, sharedIsHere } from '../../support/shared.ts';
-import { buildHdf5 } from './build-hdf5.ts';
+import { buildGroups, buildHdf5 } from './build-hdf5.ts';
 import { readBytes } from './read-bytes.ts';
 
 describe('netCDF-4', () => {
@@ -14,6 +14,17 @@ describe('netCDF-4', () => {
     expect([...second.speed]).toEqual([5, 6, NaN, 8, 9]);
     expect(second.timeMs).toBe(Date.UTC(2024, 0, 1, 1));
     expect(second.station.name).toBe('Jülich');
+  });
+
+  it('reads groups, with what they share in their parent', async () => {
+    const { blocks, problems } = await readBytes('groups.nc', await buildGroups());
+    expect(problems).toEqual([]);
+    expect(blocks.map((block) => [...block.speed])).toEqual([
+      [1, 2],
+      [2, 3],
+    ]);
+    expect(blocks.map(({ timeMs }) => timeMs[0])).toEqual([Date.UTC(2024, 0, 1, 1), Date.UTC(2024, 0, 1, 2)]);
+    expect([...blocks[1]!.heightAgl]).toEqual([10, 20]);
   });
 
   it.skipIf(!sharedIsHere)('gives no garbage for a damaged piece of packed data', async () => {
