@@ -1,19 +1,11 @@
 export { arrivalOf, type Arrival, type WayWind } from './arrival.ts';
-export {
-  findSurges,
-  scoreArrivals,
-  SURGE_RULE,
-  type ArrivalScore,
-  type Surge,
-  type SurgeRule,
-} from './arrival-score.ts';
-export { humidAir, humidityUncertainty, type HumidAir, type HumidityOptions, type HumidityUse } from './humid-air.ts';
+export { findSurges, scoreArrivals, type ArrivalScore, type Surge, type SurgeRule } from './arrival-score.ts';
+export { humidityUncertainty, type HumidAir, type HumidityOptions, type HumidityUse } from './humid-air.ts';
 export { airColumn, type AirColumn } from './air-column.ts';
 export type { PotentialInstability } from './instability.ts';
 export { moistureOf, type MoistureNumbers, type MoistureOptions } from './moisture.ts';
 export { fluxOf, precipitableWater, transportByHeight, transportByPressure, type Transport } from './transport.ts';
 export {
-  TRIANGLE_DEFAULTS,
   triangleLayers,
   triangleThroughTime,
   type TriangleLayer,

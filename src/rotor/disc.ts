@@ -6,11 +6,6 @@ export interface Disc {
   readonly rotorDiameter: number;
 }
 
-/** Area of the whole disc, m2. */
-export function discArea(disc: Disc): number {
-  return (Math.PI * disc.rotorDiameter * disc.rotorDiameter) / 4;
-}
-
 /** Height of the lower tip, m above ground. */
 export function bottomTip(disc: Disc): number {
   return disc.hubHeight - disc.rotorDiameter / 2;

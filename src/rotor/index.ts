@@ -7,10 +7,10 @@ export {
   type HeightDifference,
   type ProfilePair,
 } from './disagreement.ts';
-export { bottomTip, discArea, segmentArea, topTip, type Disc } from './disc.ts';
+export { segmentArea, type Disc } from './disc.ts';
 export type { DiscUncertainty } from './disc-uncertainty.ts';
-export { bestSpeed, noseInDisc, windOnDisc, type DiscWind, type DiscWindOptions, type WindAt } from './disc-wind.ts';
-export { sampleDurationsS, timeInBands, type BandTimes } from './durations.ts';
+export { windOnDisc, type DiscWind, type DiscWindOptions, type WindAt } from './disc-wind.ts';
+export { timeInBands, type BandTimes } from './durations.ts';
 export {
   farmOutput,
   fitFarmFactor,
@@ -24,7 +24,7 @@ export {
 } from './fleet-power.ts';
 export { FleetScan, type FleetWind } from './fleet-scan.ts';
 export { cubeMean, discQuadrature, type DiscQuadrature } from './integral.ts';
-export { disagreementInWords, joinProfiles, type Join, type JoinedProfile, type KnownDisagreement } from './join.ts';
+export { joinProfiles, type Join, type JoinedProfile, type KnownDisagreement } from './join.ts';
 export { LOADS_CAUTION, timeInState, watchLoads, type LoadState, type TimeInState } from './loads.ts';
 export { normalisePower, normaliseSpeed, powerFromCurve } from './power.ts';
 export {
