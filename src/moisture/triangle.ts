@@ -8,20 +8,24 @@ import { cutLayer, integrate } from './layer.ts';
 import { windField, type FieldPoint, type WindField } from './wind-field.ts';
 
 export interface TriangleOptions extends HumidityOptions {
-  /** m above ground: layers between successive edges, ascending. */
-  readonly edges: readonly number[];
-  /** s by which profiles may lie apart. */
-  readonly toleranceS: number;
+  /**
+   * m above ground, ascending: layers between successive edges, with the mean wind of each. Absent: at the levels that the
+   * stations share, with the wind measured there, where levels are few; else layers of 250 m up to 3 km.
+   */
+  readonly edges?: readonly number[] | undefined;
+  /** s by which profiles may lie apart; half an hour unless told. */
+  readonly toleranceS?: number | undefined;
 }
 
-/** Layers of a quarter kilometre to 3 km; profiles of the same quarter of an hour. */
-export const TRIANGLE_DEFAULTS: TriangleOptions = {
-  edges: Array.from({ length: 13 }, (_, k) => 250 * k),
-  toleranceS: 900,
-};
+const TOLERANCE_S = 1800;
+/** m above ground */
+const HIGHEST = 3000;
+/** Up to so many levels each stands for itself; more are dense enough to be averaged. Our own choice. */
+const FEW = 15;
+const USUAL_EDGES: readonly number[] = Array.from({ length: 13 }, (_, k) => 250 * k);
 
 export interface TriangleLayer {
-  /** Middle and bounds, m above each station's ground. */
+  /** Middle of the layer, or the level that stands for it, and bounds; m above each station's ground. */
   readonly heightAgl: number;
   readonly bottom: number;
   readonly top: number;
@@ -54,9 +58,9 @@ const WIDEST_GAP = 500;
  */
 export function triangleLayers(
   profiles: readonly Profile[],
-  options: Partial<TriangleOptions> = {},
+  options: TriangleOptions = {},
 ): Pick<TriangleTime, 'layers' | 'notes'> {
-  const { edges, toleranceS, ...humidity } = { ...TRIANGLE_DEFAULTS, ...options };
+  const { edges, toleranceS = TOLERANCE_S, ...humidity } = options;
   const times = profiles.map((profile) => profile.timeMs);
   const apartS = (Math.max(...times) - Math.min(...times)) / 1000;
   const grounds = profiles.map((profile) => profile.station.elevation).filter((value) => Number.isFinite(value));
@@ -68,9 +72,10 @@ export function triangleLayers(
 
   const columns = profiles.map((profile) => stationColumn(profile, humidity));
   let [motion, variance, lastDensity] = [0, 0, NaN];
-  const layers = edges.slice(1).map((top, k): TriangleLayer => {
-    const bottom = edges[k]!;
-    const points = columns.map((column) => layerMean(column, bottom, top));
+  const layers = layersFor(columns, edges).map(({ level, bottom, top }): TriangleLayer => {
+    const points = columns.map((column) =>
+      level === undefined ? layerMean(column, bottom, top) : windAtLevel(column, level),
+    );
     const field = apartS > toleranceS ? apart(windField(points), apartS) : windField(points);
     // Continuity of air whose density falls with height: rho w at the top = rho w at the bottom - rho div dz.
     const middle = densityOf(ground, (bottom + top) / 2);
@@ -80,7 +85,7 @@ export function triangleLayers(
     variance = variance * (lower / upper) ** 2 + ((field.divergenceUncertainty * middle * (top - bottom)) / upper) ** 2;
     lastDensity = upper;
     return {
-      heightAgl: (bottom + top) / 2,
+      heightAgl: level ?? (bottom + top) / 2,
       bottom,
       top,
       field,
@@ -91,6 +96,28 @@ export function triangleLayers(
   return { layers, notes };
 }
 
+interface Layer {
+  /** Shared level that stands for the layer; absent where its mean does. */
+  readonly level?: number;
+  readonly bottom: number;
+  readonly top: number;
+}
+
+/** The levels that all stations share, where those are few and at least half of what the richest has; else usual layers. */
+function layersFor(columns: readonly StationColumn[], edges: readonly number[] | undefined): Layer[] {
+  const between = (given: readonly number[]): Layer[] => given.slice(1).map((top, k) => ({ bottom: given[k]!, top }));
+  if (edges !== undefined) return between(edges);
+  const levels = columns.map(({ uncertainty }) => uncertainty.heightAgl.filter((height) => height <= HIGHEST));
+  const shared = [...(levels[0] ?? [])].filter((height) => levels.every((heights) => heights.includes(height)));
+  const richest = Math.max(...levels.map((heights) => heights.length));
+  if (shared.length === 0 || shared.length > FEW || 2 * shared.length < richest) return between(USUAL_EDGES);
+  return shared.map((level, k) => {
+    const bottom = k === 0 ? 0 : (shared[k - 1]! + level) / 2;
+    const top = k === shared.length - 1 ? 2 * level - bottom : (level + shared[k + 1]!) / 2;
+    return { level, bottom, top };
+  });
+}
+
 /**
  * Layers through time. The station with the fewest profiles gives the times; of each other station the profile nearest in
  * time is taken.
@@ -98,7 +125,7 @@ export function triangleLayers(
  */
 export function triangleThroughTime(
   series: readonly (readonly Profile[])[],
-  options: Partial<TriangleOptions> = {},
+  options: TriangleOptions = {},
 ): TriangleTime[] {
   const measuring = series.filter((profiles) => profiles.length > 0);
   if (measuring.length === 0) return [];
@@ -150,8 +177,17 @@ function stationColumn(profile: Profile, humidity: HumidityOptions): StationColu
   };
 }
 
+function windAtLevel(column: StationColumn, level: number): FieldPoint {
+  const at = column.heightAgl.indexOf(level);
+  return pointOf(column, level, {
+    u: column.u[at] ?? NaN,
+    v: column.v[at] ?? NaN,
+    specificHumidity: column.specificHumidity[at] ?? NaN,
+    windUncertainty: layerUncertainty(column, level, level),
+  });
+}
+
 function layerMean(column: StationColumn, bottom: number, top: number): FieldPoint {
-  const { station, instrument } = column.profile;
   const mean = (values: readonly ArrayLike<number>[]): number[] => {
     const cut = cutLayer(column.heightAgl, values, bottom, top);
     const widest = Math.max(WIDEST_GAP, 2 * (top - bottom));
@@ -163,15 +199,21 @@ function layerMean(column: StationColumn, bottom: number, top: number): FieldPoi
   };
   const [u, v] = mean([column.u, column.v]) as [number, number];
   const [specificHumidity] = mean([column.specificHumidity]) as [number];
+  const windUncertainty = layerUncertainty(column, bottom, top);
+  return pointOf(column, (bottom + top) / 2, { u, v, specificHumidity, windUncertainty });
+}
+
+function pointOf(
+  { profile, humidityUncertainty }: StationColumn,
+  height: number,
+  wind: Required<Pick<FieldPoint, 'u' | 'v' | 'specificHumidity' | 'windUncertainty'>>,
+): FieldPoint {
   return {
-    latitude: station.latitude,
-    longitude: station.longitude,
-    u,
-    v,
-    specificHumidity,
-    windUncertainty: layerUncertainty(column, bottom, top),
-    humidityUncertainty: column.humidityUncertainty * specificHumidity,
-    positionUncertainty: drift(instrument, Math.hypot(u, v), (bottom + top) / 2),
+    ...wind,
+    latitude: profile.station.latitude,
+    longitude: profile.station.longitude,
+    humidityUncertainty: humidityUncertainty * wind.specificHumidity,
+    positionUncertainty: drift(profile.instrument, Math.hypot(wind.u, wind.v), height),
   };
 }
 

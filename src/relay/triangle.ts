@@ -21,9 +21,9 @@ fits a linear wind field through the stations (Bellamy 1949; least squares for m
 once. The station with the fewest profiles sets the times; of each other one the nearest profile in time is taken. Where
 several instruments stand at one place, the one with the most profiles gives the wind and all may give the humidity.
 
-Prints a JSON line a time and layer, layers of 250 m up to 3 km:
+Prints a JSON line a time and layer: levels that the stations share where those are few, else layers of 250 m up to 3 km:
   time, stations           UTC; the stations that took part
-  height_agl_m             middle of the layer
+  height_agl_m             the level, or the middle of the layer
   status, why              ok, or not-assessable with the reason
   area_km2                 within the outermost stations
   divergence_per_s, vorticity_per_s

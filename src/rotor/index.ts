@@ -7,9 +7,9 @@ export {
   type HeightDifference,
   type ProfilePair,
 } from './disagreement.ts';
-export { segmentArea, type Disc } from './disc.ts';
+export { segmentArea, topTip, type Disc } from './disc.ts';
 export type { DiscUncertainty } from './disc-uncertainty.ts';
-export { windOnDisc, type DiscWind, type DiscWindOptions, type WindAt } from './disc-wind.ts';
+export { noseInDisc, windOnDisc, type DiscWind, type DiscWindOptions, type WindAt } from './disc-wind.ts';
 export { timeInBands, type BandTimes } from './durations.ts';
 export {
   farmOutput,

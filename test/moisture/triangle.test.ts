@@ -133,6 +133,37 @@ describe('triangleLayers', () => {
     expect(last(flown)).toBeGreaterThan(last(fixed));
   });
 
+  it('stands at the levels that the stations share, a single one too, with the wind measured there', () => {
+    const levels = [100, 400, 1000];
+    const shared = converging(1e-5, ({ longitude, latitude }) => ({
+      heightAgl: levels,
+      u: levels.map((z) => 8 - (z / 100) * 0.5e-5 * PER_DEGREE * longitude),
+      v: levels.map((z) => 3 - (z / 100) * 0.5e-5 * PER_DEGREE * latitude),
+      specificHumidity: levels.map(() => 0.01),
+    }));
+    const { layers } = triangleLayers(shared);
+    expect(layers.map(({ heightAgl, bottom, top }) => [heightAgl, bottom, top])).toEqual([
+      [100, 0, 250],
+      [400, 250, 700],
+      [1000, 700, 1300],
+    ]);
+    [-1e-5, -4e-5, -10e-5].forEach((rate, k) => {
+      expect(layers[k]!.field.divergence).toBeCloseTo(rate, 9);
+    });
+    const single = converging(1e-5, () => ({ heightAgl: [500], u: [8], v: [3], specificHumidity: [0.01] }));
+    expect(triangleLayers(single).layers).toMatchObject([{ heightAgl: 500, field: { status: 'ok' } }]);
+  });
+
+  it('takes layers of 250 m where the stations share too few levels', () => {
+    const own = converging(1e-5, ({ id }) => {
+      const shift = id.charCodeAt(0) - 64;
+      return { heightAgl: HEIGHTS.map((z) => z + shift) };
+    });
+    expect(triangleLayers(own).layers.map((layer) => layer.heightAgl)).toEqual(
+      Array.from({ length: 12 }, (_, k) => 125 + 250 * k),
+    );
+  });
+
   it('refuses stations on one line', () => {
     const line = PLACES.map(([id], k) => ({ id, name: id, latitude: 45 + k / 10, longitude: 10, elevation: 0 })).map(
       (station) => profile(station, { heightAgl: HEIGHTS, u: HEIGHTS.map(() => 5), v: HEIGHTS.map(() => 3) }),
