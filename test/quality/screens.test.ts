@@ -4,7 +4,8 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { MARK, REJECTING, type ProfileBlock } from '../../src/profile/index.ts';
 import { screen } from '../../src/quality/index.ts';
-import { blockOf, jetNight, marksOf, MINUTE_MS, randomFrom, START_MS, type Made } from './support.ts';
+import { randomFrom } from '../support/random.ts';
+import { blockOf, jetNight, marksOf, MINUTE_MS, START_MS, type Made } from './support.ts';
 
 const has = (block: ProfileBlock, i: number, mark: keyof typeof MARK): boolean[] =>
   marksOf(block, i).map((bits) => (bits & MARK[mark]) !== 0);

@@ -7,6 +7,7 @@ import {
   type LevelInput,
   type ProfileBlock,
 } from '../../src/profile/index.ts';
+import { randomFrom } from '../support/random.ts';
 
 export const MINUTE_MS = 60_000;
 /** An evening at no place in particular. */
@@ -41,17 +42,6 @@ export function blockOf(profiles: readonly Made[]): ProfileBlock {
 
 /** Marks of the i-th profile, lowest level first. */
 export const marksOf = (block: ProfileBlock, i: number): number[] => [...profileAt(block, i).mark];
-
-/** Pseudo-random numbers from 0 to 1, the same on every run (mulberry32). */
-export function randomFrom(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => {
-    state = (state + 0x6d2b79f5) >>> 0;
-    let t = Math.imul(state ^ (state >>> 15), 1 | state);
-    t = (t + Math.imul(t ^ (t >>> 7), 61 | t)) ^ t;
-    return ((t ^ (t >>> 14)) >>> 0) / 2 ** 32;
-  };
-}
 
 /** A night of a jet that grows: gates every 60 m, profiles every 10 minutes, noise of the given standard deviation. */
 export function jetNight(profiles: number, noise: number, seed = 7): { made: Made[]; u: number[][]; v: number[][] } {

@@ -31,6 +31,9 @@ class Compiler {
   readonly #state = new OperatorState();
   readonly #centre: number;
   #depth = 0;
+  /** The innermost repetition so far, by number, and how many there are. */
+  #loop = 0;
+  #loops = 0;
   slotCount = 0;
 
   constructor(centre: number) {
@@ -83,6 +86,8 @@ class Compiler {
       opening.width = entry.width;
     }
     const body = this.instructions.length;
+    const outer = this.#loop;
+    this.#loop = ++this.#loops;
     const before = this.#state.signature();
     this.list(descriptors, first, after, nesting);
     if (this.#state.signature() !== before) {
@@ -94,6 +99,7 @@ class Compiler {
     this.#push(OP.again, 0, { jump: body });
     opening.jump = this.instructions.length;
     this.#depth--;
+    this.#loop = outer;
     return after - 1;
   }
 
@@ -216,7 +222,7 @@ class Compiler {
       associated: 0,
       jump: 0,
       role: 0,
-      depth: this.#depth,
+      loop: this.#loop,
       ...rest,
     };
     this.instructions.push(instruction);

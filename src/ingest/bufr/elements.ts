@@ -3,7 +3,7 @@
 import { tooLarge } from './trouble.ts';
 
 /** Values of a data section in all; a report of a second's resolution has some 100,000. */
-const MOST_VALUES = 2 ** 23;
+const MOST_VALUES = 2 ** 22;
 
 /** Bits of what is said of a value. */
 export const SAID = {

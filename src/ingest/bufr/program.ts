@@ -56,11 +56,11 @@ export interface Program {
   readonly associated: Uint8Array;
   readonly jump: Int32Array;
   readonly role: Uint8Array;
-  /** Repetitions around the instruction. */
-  readonly depth: Uint8Array;
+  /** The innermost repetition around the instruction, by number; 0: none. */
+  readonly loop: Uint16Array;
+  /** 1: stands among measured values and is said of a level; 0: is said of the report. */
+  readonly ofLevel: Uint8Array;
   readonly slotCount: number;
-  /** Repetitions around the measured values: levels are read there. 0: the levels are spelled out. */
-  readonly levelDepth: number;
   /** Whether wind or temperature occurs at all. */
   readonly holdsProfile: boolean;
   readonly holdsTemperature: boolean;
@@ -78,7 +78,7 @@ export interface Instruction {
   associated: number;
   jump: number;
   role: number;
-  depth: number;
+  loop: number;
 }
 
 const MEASURED: ReadonlySet<number> = new Set([ROLE.speed, ROLE.u, ROLE.temperature]);
@@ -93,6 +93,9 @@ const COORDINATES: ReadonlySet<number> = new Set([
 /** Packs instructions into columns. */
 export function assemble(instructions: readonly Instruction[], slotCount: number): Program {
   const measured = instructions.filter((i) => MEASURED.has(i.role));
+  const levelLoops = new Set(measured.map((i) => i.loop));
+  // Values outside any repetition are levels spelled out only where nothing is repeated; else they are from the ground.
+  if (levelLoops.size > 1) levelLoops.delete(0);
   const column = (pick: (instruction: Instruction) => number): number[] => instructions.map(pick);
   return {
     length: instructions.length,
@@ -107,9 +110,9 @@ export function assemble(instructions: readonly Instruction[], slotCount: number
     associated: Uint8Array.from(column((i) => i.associated)),
     jump: Int32Array.from(column((i) => i.jump)),
     role: Uint8Array.from(column((i) => i.role)),
-    depth: Uint8Array.from(column((i) => i.depth)),
+    loop: Uint16Array.from(column((i) => i.loop)),
+    ofLevel: Uint8Array.from(column((i) => (levelLoops.has(i.loop) ? 1 : 0))),
     slotCount,
-    levelDepth: measured.reduce((deepest, i) => Math.max(deepest, i.depth), 0),
     holdsProfile: measured.length > 0 && instructions.some((i) => COORDINATES.has(i.role)),
     holdsProfilerTests: instructions.some((i) => i.role === ROLE.tests),
     holdsTemperature: instructions.some((i) => i.role === ROLE.temperature),

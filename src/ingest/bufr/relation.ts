@@ -8,12 +8,8 @@ export class Relation {
   /** Elements before this one are what bit-maps relate to; -1: not yet fixed. */
   #anchor = -1;
   #bits: number[] = [];
-  #targets: Int32Array | null = null;
+  #targets: number[] | null = null;
   #next = 0;
-
-  clear(): void {
-    this.forget();
-  }
 
   /** An operator of the kind begins. @param count elements so far */
   begin(kind: number, count: number): void {
@@ -48,9 +44,11 @@ export class Relation {
     return this.#next < this.#targets.length ? this.#targets[this.#next++]! : -1;
   }
 
-  #place(): Int32Array {
+  #place(): number[] {
     const first = this.#anchor - this.#bits.length;
     if (first < 0) throw damaged('A bit-map of data present is longer than the data it speaks of.');
-    return Int32Array.from(this.#bits.flatMap((bit, k) => (bit === 0 ? [first + k] : [])));
+    const targets: number[] = [];
+    for (let k = 0; k < this.#bits.length; k++) if (this.#bits[k] === 0) targets.push(first + k);
+    return targets;
   }
 }

@@ -36,7 +36,7 @@ export interface RunState {
 }
 
 /** Data that stand once can be repeated at no cost in bits: rounds are counted, too. */
-const MOST_ROUNDS = 2 ** 23;
+const MOST_ROUNDS = 2 ** 21;
 const RELATE_DIFFERENCE = 25;
 const RELATE_SUBSTITUTED = 23;
 const RELATE_QUALITY = 22;

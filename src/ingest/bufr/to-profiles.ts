@@ -24,27 +24,27 @@ export class ProfileMaker {
 
   /** Adds the profiles of one report of the elements: one as a rule, several where it repeats its time. */
   add(program: Program, elements: Elements, report: number, context: MessageContext, builder: BlockBuilder): void {
-    const { role, depth, levelDepth } = program;
+    const { role, loop, ofLevel } = program;
     const { instruction, value, said, count, reports } = elements;
     const levels = this.#levels;
     const header = this.#header;
     levels.clear();
     header.clear(elements.texts);
     let before = -1;
-    let depthBefore = 0;
+    let loopBefore = 0;
     for (let e = 0; e < count; e++) {
       const place = e * reports + report;
       if ((said[place]! & SAID.aside) !== 0) continue;
       const pc = instruction[e]!;
-      const here = depth[pc]!;
+      const here = loop[pc]!;
       // Entering or leaving a repetition, or beginning its next round, ends a level.
-      if (here !== depthBefore || pc <= before) levels.close();
+      if (here !== loopBefore || pc <= before) levels.close();
       before = pc;
-      depthBefore = here;
+      loopBefore = here;
       const what = role[pc]!;
       if (what === 0) continue;
       if (what < FIRST_OF_LEVEL) {
-        if (levelDepth > 0 && here >= levelDepth) continue;
+        if (here > 0 && ofLevel[pc] === 1) continue;
         // A time after levels opens the next profile of the same station.
         if (what === ROLE.year && levels.count > 0) {
           levels.close();
@@ -52,7 +52,7 @@ export class ProfileMaker {
           levels.clear();
         }
         header.put(what, value[place]!);
-      } else if (here === levelDepth) {
+      } else if (ofLevel[pc] === 1) {
         if (what <= LAST_COORDINATE && levels.hasMet(what)) levels.close();
         levels.put(what, value[place]!, said[place]!);
       }
