@@ -3,9 +3,18 @@
 
 import type { LightSpan } from '../air/index.ts';
 import { lightSpans } from '../air/index.ts';
-import { criteriaOf, findJets, trackJets, type Criteria, type JetFinding, type JetTrack } from '../jet/index.ts';
+import {
+  criteriaOf,
+  findJets,
+  storyOf,
+  trackJets,
+  type Criteria,
+  type JetFinding,
+  type JetStory,
+  type JetTrack,
+} from '../jet/index.ts';
 import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
-import { profileAt, profileRange, type ProfileBlock } from '../profile/index.ts';
+import { profileAt, profileRange, profilesOf, type Profile, type ProfileBlock } from '../profile/index.ts';
 import { screen, type FeedScreening } from '../quality/index.ts';
 import { siteStation, type Site } from '../site/index.ts';
 import { farmThrough, type DiscSeries, type FarmState } from './farm.ts';
@@ -38,6 +47,8 @@ export interface NightState {
   readonly findings: readonly JetFinding[];
   /** The stories of the night's jets as far as they are known at `atMs`. */
   readonly tracks: readonly JetTrack[];
+  /** Kind with evidence, turning and layer of each track, in the order of `tracks`. */
+  readonly stories: readonly JetStory[];
   readonly discs: readonly DiscSeries[];
   readonly farm: FarmState;
   readonly moisture: readonly MoistureNumbers[];
@@ -128,6 +139,12 @@ export class Desk {
       ),
     }));
     const { sunriseMs } = window.night;
+    const setting = {
+      station: feed.station,
+      axes: this.site.terrainAxes.filter((axis) => axis.stations.includes(feed.station.id)),
+      undisturbed: this.#upstreamProfiles(feed.station.id, window.startMs, atMs),
+      geostrophicSpeed: this.site.geostrophicWind?.speed ?? NaN,
+    };
     return {
       atMs,
       feed,
@@ -137,10 +154,25 @@ export class Desk {
       timeMs,
       findings,
       tracks,
+      stories: tracks.map((track) =>
+        storyOf(track, { ...setting, discs: this.site.turbines, findings: timed, profiles }, { time: utcClock }),
+      ),
       discs,
       farm: farmThrough({ site: this.site, timeMs, profiles, discs, tracks, sunriseMs }),
       moisture: profiles.map((profile, k) => moistureOf(profile, { jetLayer: coreOf(findings[k]!) })),
     };
+  }
+
+  /** Profiles of the stations that the site file names as upstream of one, ascending in time. */
+  #upstreamProfiles(station: string, startMs: number, atMs: number): Profile[] {
+    const from = this.site.upstream.filter((each) => each.station === station).flatMap((each) => each.from);
+    const keys = this.#store
+      .names()
+      .filter((name) => from.includes(name.station.id))
+      .map((name) => name.key);
+    return keys
+      .flatMap((key) => [...profilesOf(this.#screenedNight(key, this.#store.block(key)!, startMs, atMs).block)])
+      .sort((a, b) => a.timeMs - b.timeMs);
   }
 
   #screenedFeed(key: string): Screened | null {
@@ -191,6 +223,11 @@ function countUntil(timeMs: Float64Array, moment: number): number {
     else high = middle;
   }
   return low;
+}
+
+/** `22:40 UTC`: the desk knows no reader's clock. */
+function utcClock(timeMs: number): string {
+  return `${new Date(timeMs).toISOString().slice(11, 16)} UTC`;
 }
 
 function coreOf(finding: JetFinding): { bottom: number; top: number } | undefined {

@@ -2,7 +2,7 @@
 
 import { toHeightUnit } from '../../air/index.ts';
 import type { NightState } from '../../desk/index.ts';
-import type { JetTrack, TrackPoint } from '../../jet/index.ts';
+import type { JetKind, JetStory, JetTrack, TrackPoint, TurningVerdict } from '../../jet/index.ts';
 import type { DisplayUnits } from '../../site/index.ts';
 import { STALE_INTERVALS } from './answers.ts';
 import { compassWords, heightText, inHundred, plain, speedText } from './numbers.ts';
@@ -29,7 +29,10 @@ export function story(night: NightState, stepMs: number, units: DisplayUnits, ti
   const pieces: Piece[] = [];
   if (stale) pieces.push({ text: `The last profile is ${durationWords(ageMs)} old. `, weight: 'call' });
   const track = currentTrack(night);
-  if (track !== undefined) pieces.push(...trackPieces(track, noseNow(night, track), units, times, stale));
+  if (track !== undefined)
+    pieces.push(
+      ...trackPieces(night.stories[night.tracks.indexOf(track)]!, noseNow(night, track), units, times, stale),
+    );
   else pieces.push(...noTrackPieces(night, times));
   return pieces;
 }
@@ -52,21 +55,43 @@ function noseNow(night: NightState, track: JetTrack): Nose {
   return near ? jet : point;
 }
 
-function trackPieces(track: JetTrack, nose: Nose, units: DisplayUnits, times: TimeWords, stale: boolean): Piece[] {
+const KIND_WORDS: Readonly<Record<JetKind | 'undecided', string>> = {
+  nocturnal: 'A nocturnal jet',
+  barrier: 'A barrier jet',
+  'valley-exit': 'A valley-exit jet',
+  other: 'A low-level jet that the night does not explain',
+  undecided: 'A low-level jet',
+};
+
+function trackPieces(story: JetStory, nose: Nose, units: DisplayUnits, times: TimeWords, stale: boolean): Piece[] {
+  const { track } = story;
   const { confidence, timeMs } = track.points.at(-1)!;
   const { noseHeight, noseSpeed, noseDirection } = nose;
   const from = compassWords(noseDirection);
   return [
     {
-      text: `A low-level jet since ${times.clock(track.beganMs)}${stale ? `, last seen at ${times.clock(timeMs)}` : ''}: nose at `,
+      text: `${KIND_WORDS[story.kind]} since ${times.clock(track.beganMs)}${stale ? `, last seen at ${times.clock(timeMs)}` : ''}: nose at `,
     },
     { text: `${heightText(noseHeight, units)} ${units.height}`, weight: 'strong' },
     { text: ', ' },
     { text: `${speedText(noseSpeed, units)} ${units.speed}`, weight: 'strong' },
     {
-      text: `${from === '' ? '' : ` from the ${from}`}, ${track.phase}${heightWords(track, units)}; ${inHundred(confidence)} sure.`,
+      text: `${from === '' ? '' : ` from the ${from}`}, ${track.phase}${heightWords(track, units)}${turningWords(story)}; ${inHundred(confidence)} sure.`,
     },
   ];
+}
+
+const TURNING_WORDS: Readonly<Record<TurningVerdict, string>> = {
+  inertial: 'at the inertial rate',
+  slower: 'slower than the inertial rate',
+  faster: 'faster than the inertial rate',
+  opposite: 'against the inertial sense',
+  none: '',
+};
+
+function turningWords({ turning }: JetStory): string {
+  if (turning.status !== 'told' || turning.verdict === null || turning.verdict === 'none') return '';
+  return `, turning ${turning.measuredRate > 0 ? 'clockwise' : 'anticlockwise'} ${TURNING_WORDS[turning.verdict]}`;
 }
 
 function heightWords({ rates }: JetTrack, units: DisplayUnits): string {
