@@ -52,7 +52,7 @@ describe.skipIf(!existsSync(demo))('stories of the demo nights', () => {
   const nights = new Map<string, Awaited<ReturnType<typeof readNight>>>();
   beforeAll(async () => {
     for (const name of ['plains', 'barrier', 'valley']) nights.set(name, await readNight(name));
-  });
+  }, 60_000);
 
   it('tells a nocturnal jet over the plains that turns inertially', () => {
     const now = Date.UTC(2024, 4, 22, 8, 40);
