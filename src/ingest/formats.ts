@@ -5,6 +5,7 @@ import { bufr } from './bufr/bufr.ts';
 import { coverageJson } from './coverage-json/coverage-json.ts';
 import { csvTable } from './csv/format.ts';
 import type { FileFormat } from './format.ts';
+import { igra } from './igra/format.ts';
 import { netcdf4, netcdfClassic } from './netcdf/formats.ts';
 import { tempPilot } from './temp-pilot/format.ts';
 
@@ -14,6 +15,7 @@ export const FORMATS: readonly FileFormat[] = [
   bufr,
   coverageJson,
   tempPilot,
+  igra,
   // Whatever looks like a table and is nothing else.
   csvTable,
 ];
