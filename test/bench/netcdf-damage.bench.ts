@@ -28,6 +28,7 @@ const OPTIONS: ReadOptions = {
   signal: undefined,
   onProgress: undefined,
   referenceTimeMs: undefined,
+  stationList: [],
 };
 
 export default async function bench(report: (figure: Figure) => void): Promise<void> {
