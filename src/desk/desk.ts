@@ -14,7 +14,7 @@ import {
   type JetTrack,
 } from '../jet/index.ts';
 import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
-import { profileAt, profileRange, profilesOf, type Profile, type ProfileBlock } from '../profile/index.ts';
+import { MARK, profileAt, profileRange, profilesOf, type Profile, type ProfileBlock } from '../profile/index.ts';
 import { screen, type FeedScreening } from '../quality/index.ts';
 import { siteStation, type Site } from '../site/index.ts';
 import { farmThrough, type DiscSeries, type FarmState } from './farm.ts';
@@ -45,6 +45,8 @@ export interface NightState {
   /** Valid times of the profiles in the window up to `atMs`, ascending. */
   readonly timeMs: readonly number[];
   readonly findings: readonly JetFinding[];
+  /** Whether migrating birds may carry the signal of some level of each profile. */
+  readonly migrants: readonly boolean[];
   /** The stories of the night's jets as far as they are known at `atMs`. */
   readonly tracks: readonly JetTrack[];
   /** Kind with evidence, turning and layer of each track, in the order of `tracks`. */
@@ -153,6 +155,7 @@ export class Desk {
       criteria,
       timeMs,
       findings,
+      migrants: profiles.map(({ mark }) => mark.some((bits) => (bits & MIGRANTS) !== 0)),
       tracks,
       stories: tracks.map((track) =>
         storyOf(track, { ...setting, discs: this.site.turbines, findings: timed, profiles }, { time: utcClock }),
@@ -224,6 +227,8 @@ function countUntil(timeMs: Float64Array, moment: number): number {
   }
   return low;
 }
+
+const MIGRANTS = MARK['migrants-likely'] | MARK['migrants-certain'];
 
 /** `22:40 UTC`: the desk knows no reader's clock. */
 function utcClock(timeMs: number): string {

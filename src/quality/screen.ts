@@ -6,6 +6,7 @@ import { clockJumps } from './clock.ts';
 import { clutter } from './clutter.ts';
 import { duplicates } from './duplicates.ts';
 import { grossLimits } from './gross-limits.ts';
+import { migrants } from './migrants.ts';
 import { timeContinuity } from './time-continuity.ts';
 import { verticalContinuity } from './vertical-continuity.ts';
 import { pendulum } from './pendulum.ts';
@@ -36,7 +37,8 @@ export type ScreenName =
   | 'precipitation'
   | 'pendulum'
   | 'time-continuity'
-  | 'vertical-continuity';
+  | 'vertical-continuity'
+  | 'migrants';
 
 /** A screen reads the block and the marks set so far and adds bits; it never takes one away. */
 export interface Screen {
@@ -103,6 +105,12 @@ export const SCREENS: readonly Screen[] = [
     words: 'rejects a level of a lone profile that stands out from those below and above',
     source: 'Brewster & Schlatter 1986 (from memory); limits common practice, without source',
     apply: verticalContinuity,
+  },
+  {
+    name: 'migrants',
+    words: 'doubts bands of a wind profiler in which gates err in one heading through a night of the birds’ passage',
+    source: 'after Wilczak et al. 1995, J. Atmos. Oceanic Technol. 12 (from memory); limits our own',
+    apply: migrants,
   },
 ];
 

@@ -28,6 +28,9 @@ export function story(night: NightState, stepMs: number, units: DisplayUnits, ti
   const stale = ageMs > STALE_INTERVALS * stepMs;
   const pieces: Piece[] = [];
   if (stale) pieces.push({ text: `The last profile is ${durationWords(ageMs)} old. `, weight: 'call' });
+  if (night.migrants[last] === true) {
+    pieces.push({ text: 'Migrating birds may carry the signal: check with another instrument. ', weight: 'call' });
+  }
   const track = currentTrack(night);
   if (track !== undefined)
     pieces.push(
