@@ -12,7 +12,7 @@ export {
   type FittedOscillation,
   type Oscillation,
 } from './oscillation.ts';
-export { jetLayer, noseAgainst, type Disc, type JetFlank, type JetLayer, type NosePlace } from './jet-layer.ts';
+export { jetLayer, type Disc, type JetFlank, type JetLayer, type NosePlace } from './jet-layer.ts';
 export { thermalTurn, type ThermalTurn } from './thermal-turn.ts';
 export { turningAt, type Turning, type TurningOptions, type TurningVerdict } from './turning.ts';
 export { JET_KINDS, type Evidence, type JetKind } from './evidence.ts';

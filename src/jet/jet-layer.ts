@@ -56,7 +56,7 @@ export function jetLayer(profile: Profile, jet: Jet, discs: readonly Disc[] = []
 }
 
 /** Where a height stands against a disc; the tips belong to it. */
-export function noseAgainst(noseHeight: number, { hubHeight, rotorDiameter }: Disc): NosePlace {
+function noseAgainst(noseHeight: number, { hubHeight, rotorDiameter }: Disc): NosePlace {
   if (noseHeight < hubHeight - rotorDiameter / 2) return 'below';
   return noseHeight > hubHeight + rotorDiameter / 2 ? 'above' : 'in';
 }
