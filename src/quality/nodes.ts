@@ -30,6 +30,11 @@ export interface Nodes {
   readonly like: Int32Array;
 }
 
+/** Length of a vector; several times as fast as Math.hypot, whose care for huge numbers wind does not need. */
+export function lengthOf(x: number, y: number): number {
+  return Math.sqrt(x * x + y * y);
+}
+
 /** The net of all levels with height, speed and direction that carry no rejecting mark. */
 export function nodesOf(block: ProfileBlock, marks: Uint32Array, series: Series): Nodes {
   const { profiles } = series;
@@ -76,12 +81,32 @@ function likeNodes({ count, start, timeMs, height }: Omit<Nodes, 'like'>): Int32
   for (let n = 0; n < count; n++) like[n * SPAN + REACH] = n;
   const last = start.length - 1;
   for (let i = 0; i < last; i++) {
+    let alike = true;
     for (let d = 1; d <= REACH && i + d < last; d++) {
       if (timeMs[i + d]! - timeMs[i]! > LONGEST_GAP_MS) break;
-      pair(i, i + d, d);
+      alike &&= sameHeights(i + d - 1, i + d);
+      if (alike) pairAlike(i, i + d, d);
+      else pair(i, i + d, d);
     }
   }
   return like;
+
+  function sameHeights(i: number, j: number): boolean {
+    const from = start[i]!;
+    const shift = start[j]! - from;
+    if (start[i + 1]! - from !== start[j + 1]! - start[j]!) return false;
+    for (let n = from; n < start[i + 1]!; n++) if (height[n] !== height[n + shift]) return false;
+    return true;
+  }
+
+  /** Profiles of the same heights, as those of fixed gates mostly are. */
+  function pairAlike(i: number, j: number, d: number): void {
+    const shift = start[j]! - start[i]!;
+    for (let n = start[i]!; n < start[i + 1]!; n++) {
+      like[n * SPAN + REACH + d] = n + shift;
+      like[(n + shift) * SPAN + REACH - d] = n;
+    }
+  }
 
   /** Walks two profiles upward together and joins gates of like height. */
   function pair(i: number, j: number, d: number): void {

@@ -1,6 +1,6 @@
 // How noisy a series is, from the differences of neighbours: most pairs are sound, however wild a few gates are.
 
-import { REACH, type Nodes } from './nodes.ts';
+import { lengthOf, REACH, type Nodes } from './nodes.ts';
 import { quantile } from './series.ts';
 
 /** Height of a layer that gets a noise figure of its own, m. */
@@ -18,24 +18,33 @@ const MOST = 2;
 /** Standard deviation of a wind component, m/s, as a function of height above ground, m. */
 export function noiseOf(nodes: Nodes): (height: number) => number {
   const { count, like, u, v, height } = nodes;
-  const layers: number[][] = [];
-  const all: number[] = [];
   const span = 2 * REACH + 1;
+  const differences = new Float64Array(count);
+  const layers = new Int32Array(count);
+  const pairs: number[] = [];
+  let all = 0;
   for (let n = 0; n < count; n++) {
     const next = like[n * span + REACH + 1]!;
     if (next < 0) continue;
-    const difference = Math.hypot(u[next]! - u[n]!, v[next]! - v[n]!);
-    all.push(difference);
+    differences[all] = lengthOf(u[next]! - u[n]!, v[next]! - v[n]!);
     const layer = Math.max(0, Math.floor(height[n]! / LAYER));
-    (layers[layer] ??= []).push(difference);
+    layers[all++] = layer;
+    pairs[layer] = (pairs[layer] ?? 0) + 1;
   }
-  const deviation = (differences: number[]): number => {
-    const figure = quantile(differences, QUANTILE) / OF_UNIT;
+  const deviation = (values: Float64Array): number => {
+    const figure = quantile(values, QUANTILE) / OF_UNIT;
     return Number.isNaN(figure) ? 1 : Math.min(MOST, Math.max(LEAST, figure));
   };
-  const whole = deviation(all);
-  const figures = Array.from(layers, (pairs) =>
-    pairs !== undefined && pairs.length >= FEWEST_PAIRS ? deviation(pairs) : whole,
-  );
-  return (at) => figures[Math.max(0, Math.floor(at / LAYER))] ?? whole;
+  const figures = Array.from(pairs, (held: number | undefined, layer) => {
+    if (held === undefined || held < FEWEST_PAIRS) return NaN;
+    const own = new Float64Array(held);
+    let at = 0;
+    for (let k = 0; k < all; k++) if (layers[k] === layer) own[at++] = differences[k]!;
+    return deviation(own);
+  });
+  const whole = deviation(differences.subarray(0, all));
+  return (at) => {
+    const figure = figures[Math.max(0, Math.floor(at / LAYER))] ?? NaN;
+    return Number.isNaN(figure) ? whole : figure;
+  };
 }

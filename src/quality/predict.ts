@@ -1,6 +1,6 @@
 // What a gate should read, from the trusted gates around it.
 
-import { REACH, type Nodes } from './nodes.ts';
+import { lengthOf, REACH, type Nodes } from './nodes.ts';
 
 export interface Prediction {
   /** m/s; NaN where too few trusted gates are near. */
@@ -79,7 +79,7 @@ export function predict(nodes: Nodes, trusted: Uint8Array, n: number, out: Predi
   out.v = NaN;
   out.distance = NaN;
   const offer = (predictedU: number, predictedV: number): void => {
-    const distance = Math.hypot(u[n]! - predictedU, v[n]! - predictedV);
+    const distance = lengthOf(u[n]! - predictedU, v[n]! - predictedV);
     if (distance >= out.distance) return;
     out.u = predictedU;
     out.v = predictedV;

@@ -69,14 +69,36 @@ function usualStep(block: ProfileBlock, profiles: readonly number[]): number {
   return median(steps);
 }
 
-/** The value below which a share of the values lies; they are put in order. NaN for none. */
-export function quantile(values: number[], share: number): number {
+/** The value below which a share of the values lies; they are moved about. NaN for none. */
+export function quantile(values: number[] | Float64Array, share: number): number {
   if (values.length === 0) return NaN;
-  values.sort((a, b) => a - b);
-  return values[Math.min(values.length - 1, Math.floor(share * values.length))]!;
+  return smallest(values, Math.min(values.length - 1, Math.floor(share * values.length)));
 }
 
-/** The middle one of the values, which are put in order; NaN for none. */
+/** The value that would stand at a place if the values were in order (Hoare's selection: only the part around it is sorted). */
+function smallest(values: number[] | Float64Array, place: number): number {
+  let low = 0;
+  let high = values.length - 1;
+  while (low < high) {
+    const pivot = values[(low + high) >> 1]!;
+    let i = low;
+    let j = high;
+    while (i <= j) {
+      while (values[i]! < pivot) i++;
+      while (values[j]! > pivot) j--;
+      if (i > j) break;
+      const swapped = values[i]!;
+      values[i++] = values[j]!;
+      values[j--] = swapped;
+    }
+    if (place <= j) high = j;
+    else if (place >= i) low = i;
+    else break;
+  }
+  return values[place]!;
+}
+
+/** The middle one of the values, which are moved about; NaN for none. */
 export function median(values: number[]): number {
   return quantile(values, 0.5);
 }

@@ -5,7 +5,7 @@
 
 import { MARK } from '../profile/index.ts';
 import { noiseOf } from './noise.ts';
-import { LONGEST_GAP_MS, nodesOf, REACH, type Nodes } from './nodes.ts';
+import { lengthOf, LONGEST_GAP_MS, nodesOf, REACH, type Nodes } from './nodes.ts';
 import { predict, type Prediction } from './predict.ts';
 import type { Screened } from './series.ts';
 
@@ -68,7 +68,8 @@ class Continuity {
   constructor(nodes: Nodes) {
     this.#nodes = nodes;
     const noise = noiseOf(nodes);
-    this.#noise = Float64Array.from(nodes.height.subarray(0, nodes.count), noise);
+    this.#noise = new Float64Array(nodes.count);
+    for (let n = 0; n < nodes.count; n++) this.#noise[n] = noise(nodes.height[n]!);
     this.#member = new Uint8Array(nodes.count);
     this.#missed = new Float64Array(nodes.count);
     this.#isOld = new Uint8Array(nodes.count).fill(1);
@@ -78,7 +79,8 @@ class Continuity {
   judge(): Uint8Array {
     const { count } = this.#nodes;
     const verdicts = new Uint8Array(count).fill(VERDICT.fits);
-    const open = Uint32Array.from({ length: count }, (_, n) => n);
+    let open = new Uint32Array(count);
+    for (let n = 0; n < count; n++) open[n] = n;
     this.#regions().forEach((members, rank) => {
       const rest = members.filter((n) => this.#member[n] === 0);
       if (rest.length === 0) return;
@@ -86,8 +88,10 @@ class Continuity {
         for (const n of rest) verdicts[n] = VERDICT.contested;
         return;
       }
-      for (const n of rest) this.#trust(n);
-      this.#grow(open, verdicts);
+      // Before the first nothing is predicted yet that could get out of date.
+      if (rank === 0) for (const n of rest) this.#member[n] = 1;
+      else for (const n of rest) this.#trust(n);
+      open = this.#grow(open, verdicts);
     });
     for (let n = 0; n < count; n++) {
       if (verdicts[n] === VERDICT.fits && this.#member[n] === 0 && this.#misses(n) > 1) {
@@ -117,7 +121,7 @@ class Continuity {
       const goesOn =
         wrong &&
         n > first &&
-        Math.hypot(u[n]! - u[n - 1]!, v[n]! - v[n - 1]!) <=
+        lengthOf(u[n]! - u[n - 1]!, v[n]! - v[n - 1]!) <=
           AGREEING * this.#noise[n]! + LAYER_SHEAR * (height[n]! - height[n - 1]!);
       if (goesOn) continue;
       if (n - first >= LAYER_GATES) verdicts.fill(VERDICT.contested, first, n);
@@ -126,47 +130,56 @@ class Continuity {
   }
 
   /** Seeds joined into regions, the largest first. */
-  #regions(): number[][] {
-    const { count, start, profile, height, like, u, v } = this.#nodes;
-    const seed = new Uint8Array(count);
-    for (let n = 0; n < count; n++) seed[n] = this.#isSeed(n) ? 1 : 0;
-    const regions: number[][] = [];
-    const taken = new Uint8Array(count);
+  #regions(): Uint32Array[] {
+    const { count, start, profile, height, like } = this.#nodes;
+    /** 1: a seed that no region has yet. */
+    const free = new Uint8Array(count);
+    for (let n = 0; n < count; n++) free[n] = this.#isSeed(n) ? 1 : 0;
+    const regions: Uint32Array[] = [];
+    const members = new Uint32Array(count);
     for (let first = 0; first < count; first++) {
-      if (seed[first] === 0 || taken[first] === 1) continue;
-      const members = [first];
-      taken[first] = 1;
-      const join = (m: number, allowed: number, n: number): void => {
-        if (m < 0 || seed[m] === 0 || taken[m] === 1 || Math.hypot(u[n]! - u[m]!, v[n]! - v[m]!) > allowed) return;
-        taken[m] = 1;
-        members.push(m);
-      };
-      for (const n of members) {
-        for (let d = -REACH; d <= REACH; d++) {
-          const m = like[n * SPAN + REACH + d]!;
-          if (d !== 0 && m >= 0) join(m, this.#allowed(n, m), n);
+      if (free[first] === 0) continue;
+      members[0] = first;
+      free[first] = 0;
+      let held = 1;
+      for (let at = 0; at < held; at++) {
+        const n = members[at]!;
+        for (let k = n * SPAN; k < (n + 1) * SPAN; k++) {
+          const m = like[k]!;
+          if (m < 0 || free[m] === 0 || !this.#agrees(n, m, this.#allowed(n, m))) continue;
+          free[m] = 0;
+          members[held++] = m;
         }
         const i = profile[n]!;
-        for (const m of [n - 1, n + 1]) {
-          if (m < start[i]! || m >= start[i + 1]!) continue;
-          join(m, AGREEING * this.#noise[n]! + STRONGEST_SHEAR * Math.abs(height[m]! - height[n]!), n);
+        for (let m = n - 1; m <= n + 1; m += 2) {
+          if (m < start[i]! || m >= start[i + 1]! || free[m] === 0) continue;
+          const allowed = AGREEING * this.#noise[n]! + STRONGEST_SHEAR * Math.abs(height[m]! - height[n]!);
+          if (!this.#agrees(n, m, allowed)) continue;
+          free[m] = 0;
+          members[held++] = m;
         }
       }
-      regions.push(members);
+      if (held >= SMALLEST_REGION) regions.push(members.slice(0, held));
     }
-    return regions.filter((members) => members.length >= SMALLEST_REGION).sort((a, b) => b.length - a.length);
+    return regions.sort((a, b) => b.length - a.length);
+  }
+
+  /** Whether the winds of two nodes differ by no more than that, m/s. */
+  #agrees(n: number, m: number, most: number): boolean {
+    const { u, v } = this.#nodes;
+    return lengthOf(u[n]! - u[m]!, v[n]! - v[m]!) <= most;
   }
 
   /** Whether a node goes on like the gates of its height before and after. */
   #isSeed(n: number): boolean {
-    const { like, u, v } = this.#nodes;
+    const { like } = this.#nodes;
     let neighbours = 0;
     let agreeing = 0;
     for (let d = -REACH; d <= REACH; d++) {
       const m = like[n * SPAN + REACH + d]!;
       if (d === 0 || m < 0) continue;
       neighbours++;
-      if (Math.hypot(u[n]! - u[m]!, v[n]! - v[m]!) <= this.#allowed(n, m)) agreeing++;
+      if (this.#agrees(n, m, this.#allowed(n, m))) agreeing++;
     }
     return neighbours >= FEWEST_NEIGHBOURS && agreeing >= SEED_SHARE * neighbours;
   }
@@ -179,7 +192,7 @@ class Continuity {
   }
 
   /** Whether a smaller region stands against the accepted ones around it without being weather of its own. */
-  #contradicts(members: readonly number[]): boolean {
+  #contradicts(members: Uint32Array): boolean {
     let judged = 0;
     let missing = 0;
     const filled = new Map<number, number>();
@@ -197,8 +210,8 @@ class Continuity {
     return share / filled.size < WEATHER_SHARE;
   }
 
-  /** Takes in what the region predicts, round by round from its edge, until nothing more fits. */
-  #grow(nodes: Uint32Array, verdicts: Uint8Array): void {
+  /** Takes in what the region predicts, round by round from its edge, until nothing more fits. @returns what is left */
+  #grow(nodes: Uint32Array<ArrayBuffer>, verdicts: Uint8Array): Uint32Array<ArrayBuffer> {
     let open = nodes.filter((n) => this.#member[n] === 0 && verdicts[n] === VERDICT.fits);
     for (const limit of LIMITS) {
       for (let round = 0; round < MOST_ROUNDS; round++) {
@@ -208,6 +221,7 @@ class Continuity {
         open = open.filter((n) => this.#member[n] === 0);
       }
     }
+    return open;
   }
 
   #trust(n: number): void {
