@@ -67,6 +67,8 @@ export class FleetScan {
   #firstNeeded = 0;
   #endNeeded = 0;
   readonly #out: OutColumns;
+  /** What a scan returns; the same until the heights change. */
+  #wind: FleetWind;
   readonly #levels: ScannedLevels = {
     count: 0,
     heightAgl: new Float64Array(0),
@@ -84,6 +86,7 @@ export class FleetScan {
     this.#out = Object.fromEntries(
       OUT_COLUMNS.map((name) => [name, new Float64Array(discs.length)]),
     ) as unknown as OutColumns;
+    this.#wind = { plans: this.#plans, ...this.#out };
   }
 
   /** The levels of the last scan. */
@@ -100,7 +103,7 @@ export class FleetScan {
     this.#plan();
     this.#resolve();
     for (let index = 0; index < this.#plans.length; index++) this.#fill(index, this.#plans[index]!);
-    return { plans: this.#plans, ...this.#out };
+    return this.#wind;
   }
 
   #take(column: WindColumn): void {
@@ -140,6 +143,7 @@ export class FleetScan {
     this.#plannedCount = count;
     const logHeight = this.#plannedHeights.map(Math.log);
     this.#plans = this.#discs.map((disc) => planDisc(disc, heightAgl, logHeight, count));
+    this.#wind = { plans: this.#plans, ...this.#out };
     this.#firstNeeded = count;
     this.#endNeeded = 0;
     for (const plan of this.#plans) {
@@ -173,10 +177,10 @@ export class FleetScan {
 
   #fill(index: number, plan: DiscPlan): void {
     const out = this.#out;
-    for (const name of OUT_COLUMNS) out[name][index] = NaN;
+    const { speed, u, v, directed } = this.#levels;
+    if (plan.why !== '' || !directed) for (const name of OUT_COLUMNS) out[name][index] = NaN;
     out.coverage[index] = plan.coverage;
     if (plan.why !== '') return;
-    const { speed, u, v, directed } = this.#levels;
     const hubU = interpolate(u, plan.hub);
     const hubV = interpolate(v, plan.hub);
     const hubSpeed = directed ? speedOf(hubU, hubV) : interpolate(speed, plan.hub);
@@ -198,8 +202,9 @@ export class FleetScan {
     out.equivalentSpeed[index] = Math.cbrt(cubes);
     out.equivalentSpeedVeer[index] = allCalm && directed ? 0 : Math.cbrt(alongCubes);
     if (!directed) return;
-    out.veer[index] = turn(u, v, plan.bottom, plan.top);
-    out.veerPer100M[index] = (100 * turn(u, v, plan.coveredBottom, plan.coveredTop)) / plan.coveredSpan;
+    const covered = turn(u, v, plan.coveredBottom, plan.coveredTop);
+    out.veer[index] = plan.isCovered ? covered : NaN;
+    out.veerPer100M[index] = (100 * covered) / plan.coveredSpan;
   }
 
   #shear(plan: DiscPlan): number {

@@ -26,6 +26,8 @@ export interface DiscPlan {
   readonly coveredBottom: Between;
   readonly coveredTop: Between;
   readonly coveredSpan: number;
+  /** Whether both tips lie within the levels. */
+  readonly isCovered: boolean;
   /** First level within the disc, for the shear fit. */
   readonly fitFirst: number;
   /** Exponent = sum of fitWeight x ln V from `fitFirst` on; empty with fewer than two different heights in the disc. */
@@ -69,6 +71,7 @@ export function planDisc(
     coveredBottom: between(coveredLow, heightAgl, count),
     coveredTop: between(coveredHigh, heightAgl, count),
     coveredSpan: Math.max(0, coveredHigh - coveredLow),
+    isCovered: coveredLow === bottomTip(disc) && coveredHigh === topTip(disc),
     fitFirst,
     fitWeight,
   };

@@ -1,7 +1,7 @@
 // The archive: the compute part beside a bare sum of the same arrays, one core; then the whole command over files by month,
 // with its time and its memory. A year unless SCAN_YEARS says otherwise; ten years are what the house promises for.
 
-import { spawn } from 'node:child_process';
+import { spawn, spawnSync } from 'node:child_process';
 import { mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -54,6 +54,8 @@ export default async function bench(report: (figure: Figure) => void): Promise<v
       profiles += one.profileCount;
       writeFileSync(join(files, `gates-${String(index).padStart(3, '0')}.nc`), writeNetcdf([one]));
     }
+    // Builds the command line where it is not built yet.
+    spawnSync(process.execPath, ['src/relay/duskveer.mjs', '--help'], { stdio: 'ignore' });
     for (const criteria of ['whiteman-1997', 'duskveer']) {
       const out = join(folder, criteria);
       const ran = await scan([files, '--out', out, '--hub', '110', '--diameter', '130', '--criteria', criteria]);
@@ -68,7 +70,7 @@ export default async function bench(report: (figure: Figure) => void): Promise<v
 }
 
 /** A month of ten-minute profiles on gates 25 m apart: a jet in most nights, with noise. */
-export function month(year: number, number: number): ProfileBlock {
+function month(year: number, number: number): ProfileBlock {
   const startMs = Date.UTC(year, number, 1);
   const count = (Date.UTC(year, number + 1, 1) - startMs) / STEP_MS;
   const levels = count * GATES;

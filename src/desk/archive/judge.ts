@@ -61,23 +61,25 @@ export function judge(block: ProfileBlock, { site, criteria, discs, source }: Ar
   return { sources: [source], reasons, profiles, jets, discs: discRows(block, discs) };
 }
 
+/** Counts without branches, for on noisy marks none could be foreseen. */
 function countLevels(block: ProfileBlock, { windLevels, usableLevels, top }: ProfileColumns): void {
   const { offsets, speed, heightAgl, mark } = block;
   for (let index = 0; index < block.profileCount; index++) {
-    let wind = 0;
-    let usable = 0;
-    let highest = NaN;
+    const start = offsets[index]!;
     const end = offsets[index + 1]!;
-    for (let k = offsets[index]!; k < end; k++) {
-      if (!(speed[k]! >= 0)) continue;
-      wind++;
-      if ((mark[k]! & REJECTING) !== 0 || !(heightAgl[k]! > -Infinity)) continue;
-      usable++;
-      highest = heightAgl[k]!;
+    let wind = 0;
+    let lost = 0;
+    for (let k = start; k < end; k++) {
+      const known = Number(speed[k]! >= 0);
+      wind += known;
+      // Levels without height carry a rejecting mark of their own.
+      lost += known & Number((mark[k]! & REJECTING) !== 0);
     }
     windLevels[index] = wind;
-    usableLevels[index] = usable;
-    top[index] = highest;
+    usableLevels[index] = wind - lost;
+    let highest = end - 1;
+    while (highest >= start && ((mark[highest]! & REJECTING) !== 0 || !(speed[highest]! >= 0))) highest--;
+    top[index] = highest < start ? NaN : heightAgl[highest]!;
   }
 }
 

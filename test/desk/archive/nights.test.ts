@@ -41,8 +41,13 @@ describe('nightRows', () => {
   });
 
   it('takes a lone jet for first and last, but for no onset', () => {
-    const [row] = nightRows(rowsOf(night((hours) => hours === 9 || (hours > 11 && hours < 11.4))));
-    expect(row!.firstJetMs).toBe(NOON + 9 * HOUR);
+    // So far apart that no screen holds them against each other.
+    const made = Array.from({ length: 18 }, (_, k) => ({
+      timeMs: NOON + k * 80 * 60_000,
+      jet: [6, 10, 11].includes(k) ? 12 : 0,
+    }));
+    const [row] = nightRows(rowsOf(made));
+    expect(row).toMatchObject({ jets: 3, firstJetMs: NOON + 8 * HOUR });
     expect(row!.onsetMs).toBeNaN();
     expect(row!.endMs).toBeNaN();
   });
