@@ -99,8 +99,8 @@ interface Friction {
   readonly perSecond: number;
 }
 
-/** Half width of the zone in which day's mixing ends, m. */
-const LID_ZONE = 650;
+/** Depth of the zone in which day's mixing ends, m. */
+const LID_ZONE = 1200;
 
 function byDay(mixed: Wind, height: number, depth: number): Friction {
   const share = Math.min(1, Math.log(Math.max(height, 1) / ROUGHNESS) / Math.log(200 / ROUGHNESS));

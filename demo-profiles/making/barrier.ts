@@ -5,7 +5,7 @@ import { windFrom, type Wind } from './air-column.ts';
 import type { AtmospherePlan } from './atmosphere.ts';
 import { at, everyMinutes, ramp, spell } from './clock.ts';
 import { demoNight, siteFileStation, type DemoNight } from './night.ts';
-import { profilerNetcdf } from './profiler-netcdf.ts';
+import { profilerFile } from './profiler-file.ts';
 import { profilerRecord } from './profiler.ts';
 import { sondeCsv } from './sonde.ts';
 
@@ -120,10 +120,11 @@ export function barrier(): DemoNight {
     { id: 'barrier', title: 'Garrow Foothills: a barrier jet below a range', now: '2024-01-17T10:30:00Z' },
     SITE,
     {
-      'garrow-profiler.nc': profilerNetcdf(record, {
+      'garrow-profiler.nc': profilerFile(record, {
         station: 'garrow-profiler',
+        name: 'Garrow Foothills profiler',
         title: 'Garrow Foothills: winds of a profiler, temperature and humidity of a radiometer beside it',
-        instrument: 'wind profiler',
+        instrument: 'wind-profiler',
         ...FOOTHILL,
         periodS: 900,
       }),

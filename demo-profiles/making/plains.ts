@@ -5,7 +5,7 @@ import type { AtmospherePlan } from './atmosphere.ts';
 import { at, everyMinutes, ramp, spell } from './clock.ts';
 import { mastCsv } from './mast.ts';
 import { demoNight, siteFileStation, type DemoNight } from './night.ts';
-import { profilerNetcdf } from './profiler-netcdf.ts';
+import { profilerFile } from './profiler-file.ts';
 import { profilerRecord } from './profiler.ts';
 import { sondeCsv } from './sonde.ts';
 
@@ -21,7 +21,7 @@ const HOUR = 3_600_000;
 
 /** A south-south-westerly with its core a few hundred metres up, as over ground that slopes; it dies on the second day. */
 function pressureWind(heightAgl: number, timeMs: number): Wind {
-  const aboveCore = Math.max(0, heightAgl - 320) / 780;
+  const aboveCore = Math.max(0, heightAgl - 320) / 680;
   const belowCore = Math.max(0, 320 - heightAgl) / 900;
   const shape = 7.2 + 7.8 * Math.exp(-Math.pow(aboveCore, 1.6)) - 2 * belowCore + 1.6 * ramp(heightAgl, 1800, 4000);
   const strength = 1 - 0.86 * ramp(timeMs, FIRST_DAWN + 2 * HOUR, SECOND_DUSK - 3 * HOUR);
@@ -61,7 +61,7 @@ const ATMOSPHERE: AtmospherePlan = {
     0.0032 * ramp(timeMs, FIRST_DUSK + HOUR, FIRST_DAWN) * (1 - 0.7 * ramp(timeMs, FIRST_DAWN, SECOND_DUSK)),
   broughtHeight: 420,
   broughtWidth: 520,
-  eddies: (timeMs) => 0.28 + 0.15 * Math.min(1, mixedDepth(timeMs) / 400),
+  eddies: (timeMs) => 0.26 + 0.1 * Math.min(1, mixedDepth(timeMs) / 400),
 };
 
 const START = at('2024-05-21T21:00Z');
@@ -119,7 +119,7 @@ export function plains(): DemoNight {
     gates: GATES,
     timesMs: everyMinutes(10, START, END),
     noise: 0.12,
-    noisePerKm: 0.12,
+    noisePerKm: 0.06,
     echoAtGround: 20,
     echoLossPerKm: 10.5,
     leastEcho: -1,
@@ -137,8 +137,9 @@ export function plains(): DemoNight {
     },
     SITE,
     {
-      'larkmoor-lidar.nc': profilerNetcdf(record, {
+      'larkmoor-lidar.nc': profilerFile(record, {
         station: 'larkmoor-lidar',
+        name: 'Larkmoor Ridge lidar',
         title: 'Larkmoor Ridge: winds of a lidar, temperature and humidity of a radiometer beside it',
         instrument: 'lidar',
         ...PLACE,

@@ -34,8 +34,8 @@ export interface ProfilerRecord {
   readonly direction: number[];
   readonly verticalSpeed: number[];
   readonly signal: number[];
-  /** 0 good, 1 doubtful */
-  readonly quality: number[];
+  /** Whether the instrument itself doubts the wind. */
+  readonly doubted: boolean[];
   readonly pressure: number[];
   readonly temperature: number[];
   readonly specificHumidity: number[];
@@ -45,8 +45,9 @@ export interface ProfilerRecord {
 const DROWNED_BY = 10;
 const DROWNED_NOISE = 4;
 const ENOUGH_ECHO = 6;
-/** dB below which the instrument itself calls its wind doubtful. */
-const DOUBTED_ECHO = 3;
+/** dB below which the instrument itself calls its wind doubtful: commonly, and when it notices the noise of a spell. */
+const DOUBTED_ECHO = 0;
+const DOUBTED_IN_SPELL = 4;
 
 export function profilerRecord(atmosphere: AtmospherePlan, plan: ProfilerPlan): ProfilerRecord {
   const chance = new Chance(plan.seed);
@@ -57,7 +58,7 @@ export function profilerRecord(atmosphere: AtmospherePlan, plan: ProfilerPlan): 
     direction: [],
     verticalSpeed: [],
     signal: [],
-    quality: [],
+    doubted: [],
     pressure: [],
     temperature: [],
     specificHumidity: [],
@@ -77,7 +78,7 @@ export function profilerRecord(atmosphere: AtmospherePlan, plan: ProfilerPlan): 
         1.2 * chance.normal() -
         (drowned ? DROWNED_BY : 0);
       const reported = echo >= plan.leastEcho;
-      const doubted = echo < DOUBTED_ECHO;
+      const doubted = echo < (drowned ? DOUBTED_IN_SPELL : DOUBTED_ECHO);
       const drowning = drowned ? DROWNED_NOISE * Math.min(1, Math.max(0, 1 - echo / ENOUGH_ECHO)) : 0;
       const noise = plan.noise + (plan.noisePerKm * height) / 1000 + drowning;
       const u = wind.u + noise * chance.normal();
@@ -87,7 +88,7 @@ export function profilerRecord(atmosphere: AtmospherePlan, plan: ProfilerPlan): 
       record.direction.push(reported ? round(directionOf(u, v), 1) % 360 : NaN);
       record.verticalSpeed.push(reported ? round(w, 2) : NaN);
       record.signal.push(round(echo, 1));
-      record.quality.push(doubted ? 1 : 0);
+      record.doubted.push(doubted);
       if (air === null) return;
       record.pressure.push(round(air[k]!.pressure, 0));
       record.temperature.push(round(air[k]!.temperature + 0.15 * chance.normal(), 2));

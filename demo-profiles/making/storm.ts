@@ -5,7 +5,7 @@ import { columnWinds, windFrom, type Wind } from './air-column.ts';
 import type { AtmospherePlan } from './atmosphere.ts';
 import { at, everyMinutes, ramp } from './clock.ts';
 import { demoNight, siteFileStation, type DemoNight, type Place } from './night.ts';
-import { profilerNetcdf } from './profiler-netcdf.ts';
+import { profilerFile } from './profiler-file.ts';
 import { profilerRecord } from './profiler.ts';
 import { sondeCsv } from './sonde.ts';
 
@@ -130,7 +130,7 @@ const SITE = {
 /** The night at Ashwillow Plain. */
 export function storm(): DemoNight {
   const profiler = (station: StormStation, seed: number, withAir: boolean): Uint8Array =>
-    profilerNetcdf(
+    profilerFile(
       profilerRecord(atmosphere(station), {
         seed,
         gates: Array.from({ length: 54 }, (_, k) => 100 + 60 * k),
@@ -145,10 +145,11 @@ export function storm(): DemoNight {
         withAir,
       }),
       {
-        station: station.id,
-        title: `${station.name}: winds of a profiler${withAir ? ', temperature and humidity of a radiometer beside it' : ''}`,
-        instrument: 'wind profiler',
         ...station,
+        station: station.id,
+        name: `${station.name} profiler`,
+        title: `${station.name}: winds of a profiler${withAir ? ', temperature and humidity of a radiometer beside it' : ''}`,
+        instrument: 'wind-profiler',
         periodS: 600,
       },
     );

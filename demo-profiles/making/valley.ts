@@ -6,7 +6,7 @@ import type { AtmospherePlan } from './atmosphere.ts';
 import { at, everyMinutes, ramp } from './clock.ts';
 import { mastCsv } from './mast.ts';
 import { demoNight, siteFileStation, type DemoNight } from './night.ts';
-import { profilerNetcdf } from './profiler-netcdf.ts';
+import { profilerFile } from './profiler-file.ts';
 import { profilerRecord } from './profiler.ts';
 
 const PLACE = { latitude: -43.4, longitude: 171.2, elevation: 420 };
@@ -107,8 +107,9 @@ export function valley(): DemoNight {
     { id: 'valley', title: 'Quill Mouth: a jet out of a valley, southern hemisphere', now: '2024-02-09T13:20:00Z' },
     SITE,
     {
-      'quill-lidar.nc': profilerNetcdf(record, {
+      'quill-lidar.nc': profilerFile(record, {
         station: 'quill-lidar',
+        name: 'Quill Mouth lidar',
         title: 'Quill Mouth: winds of a lidar',
         instrument: 'lidar',
         ...PLACE,

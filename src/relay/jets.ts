@@ -3,18 +3,19 @@
 import { toJsonNumber } from '../air/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { CRITERIA, CRITERIA_NAMES, criteriaOf, findJets, type Criteria, type JetFinding } from '../jet/index.ts';
-import { screen } from '../quality/index.ts';
 import { siteStation, type Site } from '../site/index.ts';
 import { readPaths } from './blocks.ts';
 import { parseOptions, UsageError, type Command } from './command.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
 
 export const command: Command = {
   help: `duskveer jets PATH... [--criteria NAME] [--site FILE]
 
-Reads profiles from files, from all files in folders, or from stdin (-), screens them and looks for jets.
+Reads profiles from files, from all files in folders, or from stdin (-) and looks for jets. Published criteria are put to the
+levels as the files give them, the house's own to levels that have passed all screens; --screens says otherwise.
 
 Prints a JSON line a profile:
   station, time, criteria
@@ -25,15 +26,21 @@ Prints a JSON line a profile:
 
   --criteria NAME    one of these; without it the site's, else duskveer
 ${CRITERIA_NAMES.map((name) => `                     ${name.padEnd(24)} ${CRITERIA[name].title}`).join('\n')}
-  --site FILE        stations with their uncertainty, the site's own criteria`,
+  --site FILE        stations with their uncertainty, the site's own criteria
+${SCREENS_HELP}`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, criteria: { type: 'string' } });
+    const { values, positionals } = parseOptions(args, {
+      ...SITE_OPTION,
+      ...SCREENS_OPTION,
+      criteria: { type: 'string' },
+    });
     const site = await siteOf(values.site);
     const criteria = chosenCriteria(site, values.criteria);
+    const screened = screener(site, values.screens, criteria.decides === 'levels' ? 'gross' : 'all');
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
       take: async (block) => {
-        for (const profile of profilesOf(screen(block, { site }).block)) {
+        for (const profile of profilesOf(screened(block))) {
           await out.write(jetLine(profile, findingOf(profile, criteria, site)));
         }
         await out.flush();

@@ -4,6 +4,7 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { DuskveerError } from '../air/index.ts';
 import { EXIT, UsageError, type Command } from './command.ts';
+import { OutputFailed } from './output.ts';
 import { problemInWords } from './reporter.ts';
 
 // Both src/relay and dist/relay lie two folders below the checkout.
@@ -85,11 +86,15 @@ async function run(args: readonly string[]): Promise<number> {
   }
 }
 
-/** Trouble with the call or with the site file in words; anything else is a fault of ours and is thrown on. */
+/** Trouble with the call, the site file or the output in words; anything else is a fault of ours and is thrown on. */
 function explained(name: string, error: unknown): number {
   if (error instanceof UsageError) {
     process.stderr.write(`${error.message}\nHow to call it: duskveer ${name} --help\n`);
     return EXIT.wrongUsage;
+  }
+  if (error instanceof OutputFailed) {
+    process.stderr.write(`The output could not be written: ${error.message}.\n`);
+    return EXIT.failed;
   }
   if (!(error instanceof DuskveerError)) throw error;
   process.stderr.write(`${problemInWords(error.problem)}\n`);

@@ -3,13 +3,13 @@
 import { toJsonNumber, toJsonNumbers } from '../air/index.ts';
 import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
-import { screen } from '../quality/index.ts';
 import { AirSources } from './air-sources.ts';
 import { readPaths } from './blocks.ts';
 import { numberOption, parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
 
 export const command: Command = {
@@ -31,14 +31,17 @@ Prints a JSON line a profile:
 
   --site FILE      stations, criteria of the jet
   --bottom-pa P    limits of the layer, Pa; without them all that was measured
-  --top-pa P`,
+  --top-pa P
+${SCREENS_HELP}`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
       ...SITE_OPTION,
+      ...SCREENS_OPTION,
       'bottom-pa': { type: 'string' },
       'top-pa': { type: 'string' },
     });
     const site = await siteOf(values.site);
+    const screened = screener(site, values.screens);
     const bottomPressure = pressureOption('bottom-pa', values['bottom-pa']);
     const topPressure = pressureOption('top-pa', values['top-pa']);
     if (topPressure !== undefined && bottomPressure !== undefined && !(topPressure < bottomPressure)) {
@@ -48,9 +51,9 @@ Prints a JSON line a profile:
     const sources = new AirSources(site);
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
-      survey: (block) => sources.gather(screen(block, { site }).block),
+      survey: (block) => sources.gather(screened(block)),
       take: async (block) => {
-        for (const profile of profilesOf(screen(block, { site }).block)) {
+        for (const profile of profilesOf(screened(block))) {
           const jetLayer = findingOf(profile, criteria, site).jets[0]?.core;
           const options = { bottomPressure, topPressure, jetLayer, humidity: sources.for(profile) };
           await out.write(moistureLine(profile, moistureOf(profile, options)));

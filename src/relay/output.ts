@@ -1,10 +1,12 @@
 // Lines on stdout, whole and in order, at the pace of whoever reads them.
 
-import { once } from 'node:events';
 import type { Writable } from 'node:stream';
 
 /** Whoever read the output has gone: nothing more needs doing, and nothing went wrong. */
 export class OutputClosed extends Error {}
+
+/** The output cannot be written: no such folder, no room, no right. */
+export class OutputFailed extends Error {}
 
 const PIECE_CHARACTERS = 1 << 16;
 
@@ -33,13 +35,26 @@ export class LineWriter {
   async flush(): Promise<void> {
     const text = this.#pending;
     this.#pending = '';
-    if (text !== '' && !this.#closed && !this.#stream.write(text)) {
-      await Promise.race([once(this.#stream, 'drain'), once(this.#stream, 'close')]).catch(() => undefined);
-    } else {
-      // Lets the error of a closed pipe arrive before more is written into it.
-      await new Promise(setImmediate);
-    }
-    if (this.#failure !== null) throw this.#failure;
+    await this.put(text);
+  }
+
+  /** Text or bytes as they are. @throws OutputClosed when the reader has gone */
+  async put(piece: string | Uint8Array): Promise<void> {
+    if (piece.length > 0 && !this.#closed && !this.#stream.write(piece)) await this.#drained();
+    // Lets the error of a closed pipe arrive before more is written into it.
+    else await new Promise(setImmediate);
+    if (this.#failure !== null) throw new OutputFailed(this.#failure.message, { cause: this.#failure });
     if (this.#closed) throw new OutputClosed();
+  }
+
+  /** Until there is room again, or nobody left to make any. */
+  #drained(): Promise<void> {
+    return new Promise((resolve) => {
+      const done = (): void => {
+        this.#stream.off('drain', done).off('close', done);
+        resolve();
+      };
+      this.#stream.on('drain', done).on('close', done);
+    });
   }
 }

@@ -1,9 +1,9 @@
 // `ramps`: when the output of a farm changed fast, by how much and why; a JSON line a ramp.
 
 import { nightOf, toJsonNumber } from '../air/index.ts';
+import { siteDiscWind, USUAL_RAMPS } from '../desk/index.ts';
 import { trackJets, type JetFinding } from '../jet/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
-import { screen } from '../quality/index.ts';
 import {
   causesOfRamp,
   findRamps,
@@ -14,17 +14,14 @@ import {
   type Ramp,
   type RampCause,
 } from '../rotor/index.ts';
-import type { RampDefinition, Site, TurbineType } from '../site/index.ts';
+import type { Site, TurbineType } from '../site/index.ts';
 import { readPaths } from './blocks.ts';
 import { parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
-import { discWindOf } from './rotor.ts';
+import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
-
-/** What counts as a ramp where the site file does not say; common practice, without source. */
-const USUAL_RAMPS: readonly RampDefinition[] = [{ name: '30 % within an hour', share: 0.3, withinS: 3600 }];
 
 export const command: Command = {
   help: `duskveer ramps PATH... --site FILE
@@ -41,18 +38,20 @@ Prints a JSON line a ramp:
                            or unknown: the firmest by the evidence
   words                    the same in a sentence
 
-  --site FILE    turbines with power curves, definitions of ramps`,
+  --site FILE    turbines with power curves, definitions of ramps
+${SCREENS_HELP}`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, SITE_OPTION);
+    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, ...SCREENS_OPTION });
     if (values.site === undefined) throw new UsageError('It needs --site with a file that lists turbines.');
     const site = await siteOf(values.site);
+    const screened = screener(site, values.screens);
     const turbines = site.turbines.filter((turbine) => turbine.powerCurve !== null && turbine.count > 0);
     if (turbines.length === 0) throw new UsageError(`${values.site} lists no turbine with a power curve.`);
     const criteria = chosenCriteria(site, undefined);
     const stations = new Map<string, ProfileFacts[]>();
     const code = await readPaths(positionals, site, {
       take: (block) => {
-        for (const profile of profilesOf(screen(block, { site }).block)) {
+        for (const profile of profilesOf(screened(block))) {
           const facts = factsOf(profile, findingOf(profile, criteria, site), turbines, site);
           const known = stations.get(profile.station.id);
           if (known === undefined) stations.set(profile.station.id, [facts]);
@@ -87,7 +86,7 @@ function factsOf(profile: Profile, finding: JetFinding, turbines: readonly Turbi
   return {
     timeMs,
     finding,
-    winds: turbines.map((turbine) => discWindOf(profile, turbine, nose, site)),
+    winds: turbines.map((turbine) => siteDiscWind(profile, turbine, nose, site)),
     sunriseMs: nightOf(timeMs, station.latitude, station.longitude).sunriseMs,
   };
 }
@@ -106,6 +105,7 @@ function* rampLines(
     const winds = facts.map((fact) => fact.winds[index]!);
     const output = typeOutput(turbine, winds);
     const powerKw = output.equivalentKw.map((power) => power * turbine.count * site.farmFactor);
+    const capacityKw = ratedPower(turbine) * turbine.count * site.farmFactor;
     const evidence = {
       disc: turbine,
       timeMs,
@@ -115,7 +115,7 @@ function* rampLines(
       tracks,
       sunrisesMs,
     };
-    for (const ramp of findRamps({ timeMs, powerKw }, ratedPower(turbine) * turbine.count, definitions)) {
+    for (const ramp of findRamps({ timeMs, powerKw }, capacityKw, definitions)) {
       yield rampLine(station, turbine, ramp, causesOfRamp(ramp, evidence));
     }
   }

@@ -2,19 +2,21 @@
 
 import { dewPointOf, toJsonNumber, toJsonNumbers } from '../air/index.ts';
 import { markNames, profilesOf, type Profile } from '../profile/index.ts';
+import type { Site } from '../site/index.ts';
 import { readPaths } from './blocks.ts';
-import { parseOptions, type Command } from './command.ts';
+import { parseOptions, UsageError, type Command } from './command.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
+import { formatWriter, type FormatWriter } from './write-as.ts';
 
 export const command: Command = {
-  help: `duskveer read PATH... [--site FILE]
+  help: `duskveer read PATH... [--site FILE] [--to FORMAT [--out FILE]]
 
 Reads profiles from files, from all files in folders, or from stdin (-), recognising each format by its content, plain or
 in gzip or zip. Values are as the source gives them, turned into SI units; nothing is screened or left out.
 
-Prints a JSON line a profile:
+Prints a JSON line a profile, unless --to asks for another form:
   station, name, lat, lon, elevation_m    where; null what is not known
   time, period_s                          UTC; end of the averaging period, or launch, and the period
   instrument, source                      kind of instrument; the file
@@ -23,10 +25,19 @@ Prints a JSON line a profile:
                                           dewpoint_k, mark (names of quality marks, separated by blanks, "" for none)
   notes                                   what the reader has to say
 
-  --site FILE    positions of stations, headings of your own tables, time zone of files without one`,
+  --site FILE    positions of stations, headings of your own tables, time zone of files without one
+  --to FORMAT    writes the profiles for other software: csv (a line a level), netcdf (CF, classic format) or
+                 coveragejson (OGC CoverageJSON); all but csv hold every profile until the last is read
+  --out FILE     where to; without it to stdout`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, SITE_OPTION);
+    const { values, positionals } = parseOptions(args, {
+      ...SITE_OPTION,
+      to: { type: 'string' },
+      out: { type: 'string' },
+    });
+    if (values.out !== undefined && values.to === undefined) throw new UsageError('--out goes with --to.');
     const site = await siteOf(values.site);
+    if (values.to !== undefined) return convert(positionals, site, formatWriter(values.to, values.out));
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
       take: async (block) => {
@@ -36,6 +47,17 @@ Prints a JSON line a profile:
     });
   },
 };
+
+async function convert(paths: readonly string[], site: Site, writer: FormatWriter): Promise<number> {
+  try {
+    const code = await readPaths(paths, site, { take: writer.take });
+    await writer.finish();
+    return code;
+  } catch (error) {
+    await writer.giveUp();
+    throw error;
+  }
+}
 
 /** A profile as the contract of `read` has it. */
 export function profileLine(profile: Profile): Record<string, unknown> {

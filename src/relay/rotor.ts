@@ -1,15 +1,16 @@
 // `rotor`: what the wind of each profile does on a turbine's disc; a JSON line a profile and turbine type.
 
 import { toJsonNumber } from '../air/index.ts';
+import { siteDiscWind } from '../desk/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
-import { screen } from '../quality/index.ts';
-import { typeOutput, windOnDisc, type DiscWind } from '../rotor/index.ts';
-import { siteStation, type Site, type TurbineType } from '../site/index.ts';
+import { typeOutput, type DiscWind } from '../rotor/index.ts';
+import type { Site, TurbineType } from '../site/index.ts';
 import { readPaths } from './blocks.ts';
 import { numberOption, parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
 
 export const command: Command = {
@@ -34,23 +35,26 @@ Prints a JSON line a profile and turbine type:
 
   --hub M         hub height above ground
   --diameter M    rotor diameter
-  --site FILE     takes the turbine types of a site instead`,
+  --site FILE     takes the turbine types of a site instead
+${SCREENS_HELP}`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
       ...SITE_OPTION,
+      ...SCREENS_OPTION,
       hub: { type: 'string' },
       diameter: { type: 'string' },
     });
     const site = await siteOf(values.site);
+    const screened = screener(site, values.screens);
     const turbines = chosenTurbines(site, values.hub, values.diameter);
     const criteria = chosenCriteria(site, undefined);
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
       take: async (block) => {
-        for (const profile of profilesOf(screen(block, { site }).block)) {
+        for (const profile of profilesOf(screened(block))) {
           const nose = findingOf(profile, criteria, site).jets[0]?.noseHeight ?? NaN;
           for (const turbine of turbines) {
-            await out.write(rotorLine(profile, turbine, discWindOf(profile, turbine, nose, site)));
+            await out.write(rotorLine(profile, turbine, siteDiscWind(profile, turbine, nose, site)));
           }
         }
         await out.flush();
@@ -78,17 +82,6 @@ export function turbinesOf(site: Site, hub: string | undefined, diameter: string
   const notStated = { cutIn: NaN, rated: NaN, cutOut: NaN, restart: NaN, groundElevation: NaN };
   const name = `hub ${hubHeight} m, diameter ${rotorDiameter} m`;
   return [{ name, count: 1, hubHeight, rotorDiameter, powerCurve: null, ...notStated }];
-}
-
-/** The wind of a profile on a turbine type of the site. */
-export function discWindOf(profile: Profile, turbine: TurbineType, nose: number, site: Site): DiscWind {
-  const groundOffset = turbine.groundElevation - profile.station.elevation;
-  return windOnDisc(profile, turbine, {
-    nose,
-    groundOffset: Number.isNaN(groundOffset) ? 0 : groundOffset,
-    continuation: site.continuation,
-    speedUncertainty: siteStation(site, profile.station.id)?.speedUncertainty ?? NaN,
-  });
 }
 
 /** The numbers of a disc as the contract of `rotor` has them. */

@@ -2,7 +2,6 @@
 
 import { toJsonNumber } from '../air/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
-import { screen } from '../quality/index.ts';
 import { joinWindAndAir, stormOf, type Figure, type StormNumbers, type VectorFigure } from '../storm/index.ts';
 import { AirSources } from './air-sources.ts';
 import { readPaths } from './blocks.ts';
@@ -10,6 +9,7 @@ import { parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
 
 export const command: Command = {
@@ -32,18 +32,24 @@ Prints a JSON line a profile:
   clusters             cloud_layer, upwind, downwind: east_mps, north_mps (Corfidi 2003)
 
   --site FILE     stations, criteria of the jet
-  --motion U,V    storm motion in m/s eastward and northward, for the helicity in place of the mover`,
+  --motion U,V    storm motion in m/s eastward and northward, for the helicity in place of the mover
+${SCREENS_HELP}`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, motion: { type: 'string' } });
+    const { values, positionals } = parseOptions(args, {
+      ...SITE_OPTION,
+      ...SCREENS_OPTION,
+      motion: { type: 'string' },
+    });
     const site = await siteOf(values.site);
+    const screened = screener(site, values.screens);
     const motion = motionOption(values.motion);
     const criteria = chosenCriteria(site, undefined);
     const sources = new AirSources(site);
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
-      survey: (block) => sources.gather(screen(block, { site }).block),
+      survey: (block) => sources.gather(screened(block)),
       take: async (block) => {
-        for (const profile of profilesOf(screen(block, { site }).block)) {
+        for (const profile of profilesOf(screened(block))) {
           const [jet] = findingOf(profile, criteria, site).jets;
           const { air } = joinWindAndAir(profile, sources.nearest(profile));
           const numbers = stormOf(profile, {

@@ -3,11 +3,11 @@
 import { distanceBetween, toJsonNumber } from '../air/index.ts';
 import { triangleThroughTime, type TriangleLayer, type TriangleTime } from '../moisture/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
-import { screen } from '../quality/index.ts';
 import { readPaths } from './blocks.ts';
 import { EXIT, parseOptions, type Command } from './command.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
 
 /** Instruments no further apart than this stand at one place, m. */
@@ -30,14 +30,16 @@ Prints a JSON line a time and layer: levels that the stations share where those 
   moisture_flux_divergence_per_s
                            of q V with q in kg/kg; negative where moisture gathers; null where a humidity is missing
 
-  --site FILE    positions of stations`,
+  --site FILE    positions of stations
+${SCREENS_HELP}`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, SITE_OPTION);
+    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, ...SCREENS_OPTION });
     const site = await siteOf(values.site);
+    const screened = screener(site, values.screens);
     const stations = new Map<string, Profile[]>();
     const code = await readPaths(positionals, site, {
       take: (block) => {
-        for (const profile of profilesOf(screen(block, { site }).block)) {
+        for (const profile of profilesOf(screened(block))) {
           const known = stations.get(profile.station.id);
           if (known === undefined) stations.set(profile.station.id, [profile]);
           else known.push(profile);

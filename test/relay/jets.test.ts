@@ -41,6 +41,15 @@ describe('jets', () => {
     expect((ran.lines() as unknown as JetLine[]).flatMap((line) => line.jets)[0]).toMatchObject({ category: null });
   });
 
+  it('leaves out more or fewer levels as --screens asks', async () => {
+    const ask = async (screens: string): Promise<string> => (await duskveer(['jets', '--screens', screens, LIDAR])).out;
+    const [all, gross] = await Promise.all([ask('all'), ask('gross')]);
+    expect(all).not.toBe(gross);
+    const { code, err } = await duskveer(['jets', '--screens', 'some', LIDAR]);
+    expect(code).toBe(2);
+    expect(err).toContain('--screens is all or gross');
+  });
+
   it('lists the criteria when the name is none of them', async () => {
     const { code, out, err } = await duskveer(['jets', '--criteria', 'loud', LIDAR]);
     expect(code).toBe(2);

@@ -77,6 +77,32 @@ describe('read', () => {
     expect(ran.err).not.toContain('hidden');
   });
 
+  it.each(['csv', 'netcdf', 'coveragejson'])('what leaves as %s comes in again as it was', async (format) => {
+    const file = join(folder, `lidar.${format}`);
+    expect(await duskveer(['read', LIDAR, '--to', format, '--out', file])).toMatchObject({ code: 0, out: '', err: '' });
+    const [before, after] = await Promise.all([duskveer(['read', LIDAR]), duskveer(['read', file])]);
+    const winds = (ran: typeof before): unknown[] =>
+      (ran.lines() as unknown as ReadLine[]).map(({ station, time, levels }) => [
+        station,
+        time,
+        levels.height_agl_m,
+        levels.speed_mps,
+        levels.direction_deg,
+        levels.temperature_k,
+      ]);
+    expect(winds(after)).toEqual(winds(before));
+  });
+
+  it('says when the file cannot be written, and which formats there are', async () => {
+    const out = join(folder, 'nowhere/lidar.csv');
+    const failed = await duskveer(['read', LIDAR, '--to', 'csv', '--out', out]);
+    expect(failed.code).toBe(1);
+    expect(failed.err).toContain('The output could not be written');
+    const unknown = await duskveer(['read', LIDAR, '--to', 'stone']);
+    expect(unknown.code).toBe(2);
+    expect(unknown.err).toContain('Known: csv, netcdf, coveragejson.');
+  });
+
   it('called without a path, or with an unknown option, exits with 2 and says how', async () => {
     expect(await duskveer(['read'])).toMatchObject({ code: 2, out: '' });
     const { code, err } = await duskveer(['read', '--fast', LIDAR]);

@@ -68,7 +68,7 @@ describe.skipIf(!sharedIsHere)('the real night', () => {
   });
 
   it('the rotor numbers are the same at every hour', async () => {
-    const lines = (await duskveer(['rotor', '--hub', '100', '--diameter', '120', night])).lines();
+    const lines = (await duskveer(['rotor', '--screens', 'gross', '--hub', '100', '--diameter', '120', night])).lines();
     expect(lines).toHaveLength(145);
     for (const { time, rotorAllLevels: want } of expected) {
       const line = lines.find((candidate) => candidate.time === time)!;

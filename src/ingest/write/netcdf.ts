@@ -38,9 +38,10 @@ const RAGGED: Shape = {
 /**
  * Bytes of a netCDF classic file holding all profiles of the blocks, with stations, marks and averaging periods.
  * Notes and names of sources stay behind.
+ * @param about what the file says of itself: global attributes such as title and comment
  * @throws DuskveerError `ingest/nothing-to-write` without a profile
  */
-export function writeNetcdf(blocks: readonly ProfileBlock[]): Uint8Array {
+export function writeNetcdf(blocks: readonly ProfileBlock[], about: Readonly<Record<string, string>> = {}): Uint8Array {
   const block = concatBlocks(blocks);
   if (block.profileCount === 0) throw nothingToWrite();
   const isGrid = sharesHeights(block);
@@ -57,6 +58,7 @@ export function writeNetcdf(blocks: readonly ProfileBlock[]): Uint8Array {
       featureType: 'timeSeriesProfile',
       title: 'Wind profiles',
       source: instrumentsOf(block),
+      ...about,
     },
     variables: [
       ...stationVariables(block, shape, letters),
