@@ -4,7 +4,6 @@ export { airDensity, airDensityIec } from './density.ts';
 export { Cancelled, DuskveerError, placeInWords, throwIfCancelled, type Place, type Problem } from './errors.ts';
 export {
   dewPointOf,
-  dewPointOfVapourPressure,
   mixingRatioOf,
   potentialTemperature,
   relativeHumidityOf,
@@ -19,16 +18,7 @@ export { bearingTo, distanceBetween, type LatLon } from './geodesy.ts';
 export { hypsometricHeights } from './hypsometric.ts';
 export { fromJsonNumber, toJsonNumber, toJsonNumbers } from './json.ts';
 export { moistAirFactor, saturationOverIce, saturationOverWater } from './vapour.ts';
-export {
-  CALM_SPEED,
-  directionOf,
-  eastward,
-  normalDirection,
-  northward,
-  signedAngle,
-  speedOf,
-  veerBetween,
-} from './wind.ts';
+export { directionOf, eastward, normalDirection, northward, signedAngle, speedOf, veerBetween } from './wind.ts';
 export {
   equivalentPotentialTemperature,
   equivalentPotentialTemperatureSimple,
@@ -50,7 +40,6 @@ export { standardAtmosphere, standardHeight, type StandardAir } from './standard
 export { lightSpans, nightOf, type Light, type LightSpan, type Night, type NightKind } from './sun.ts';
 export { advectionBetweenHeights, advectionBetweenPressures, type LayerWind } from './thermal-wind.ts';
 export {
-  FOOT,
   fromHeightUnit,
   fromSpeedUnit,
   KNOT,

@@ -5,7 +5,7 @@ export type { NightWindow } from './night-window.ts';
 export { archiveRows, judge, type ArchiveQuestion } from './archive/judge.ts';
 export { mergeRows } from './archive/merge.ts';
 export { NightGatherer, nightRows, type NightRow, type RotorMean } from './archive/nights.ts';
-export { emptyRows, STATUSES, type FeedRows } from './archive/rows.ts';
+export { emptyRows, type FeedRows } from './archive/rows.ts';
 export { compareStations } from './feed-name.ts';
 export { profileTable } from './archive/profile-table.ts';
 export { jetTable } from './archive/jet-table.ts';
@@ -16,7 +16,6 @@ export type { NamedDisc } from './archive/table-parts.ts';
 export {
   ArchiveTally,
   figureRows,
-  ROSE_SECTORS,
   ROSE_SPEEDS,
   solarClock,
   type ArchiveFigures,

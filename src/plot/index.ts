@@ -44,14 +44,14 @@ export {
   type ProfileAxesOptions,
   type SectionAxesOptions,
 } from './section-axes.ts';
-export { drawSectionBarbs, pickBarbs, type BarbTiles } from './section-barbs.ts';
+export { pickBarbs, type BarbTiles } from './section-barbs.ts';
 export type { SectionGrid } from './section-grid.ts';
 export { buildSectionGrid, type SectionGridOptions } from './build-section-grid.ts';
 export { SectionPicture, viewOf } from './section-picture.ts';
 export { drawSectionOver, drawSectionUnder, type Call, type SectionScene } from './section-scene.ts';
 export { THEMES, type Theme, type ThemeName } from './theme.ts';
 export { drawThread, type Thread, type ThreadStyle } from './thread.ts';
-export { timeText, timeTicks, valueTicks, type Tick } from './ticks.ts';
+export { timeTicks, valueTicks, type Tick } from './ticks.ts';
 export { chartData, frameOf, thinned, timeAxis, valueAxis } from './uplot-adapter.ts';
 export { WindLookup, type MeasuredWind } from './wind-lookup.ts';
 export {

@@ -3,7 +3,6 @@ export {
   profileAt,
   profilesOf,
   VALUE_COLUMNS,
-  WIND_COLUMNS,
   type Levels,
   type Profile,
   type ProfileBlock,

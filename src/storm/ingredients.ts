@@ -7,9 +7,6 @@ import type { StormNumbers } from './numbers.ts';
 import type { Parcel } from './parcel.ts';
 import type { ParcelName } from './start.ts';
 
-/** Stands below every table of ingredients. */
-export const INGREDIENTS_CAUTION = 'An aid to judgement; official warnings come from the national weather service.';
-
 export interface Ingredient extends Figure {
   readonly ingredient: 'moisture' | 'instability' | 'lift' | 'shear';
   /** What the number is, in words. */
