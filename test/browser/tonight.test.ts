@@ -24,10 +24,11 @@ async function painted(page: Page): Promise<void> {
     const canvas = document.querySelector<HTMLCanvasElement>('.uplot canvas');
     const pen = canvas?.getContext('2d');
     if (canvas === null || pen === null || pen === undefined) return false;
-    const row = pen.getImageData(0, Math.floor(canvas.height * 0.6), canvas.width, 1).data;
+    // Up through the picture: the wind changes with height even in a night that stays the same.
+    const row = pen.getImageData(Math.floor(canvas.width * 0.4), 0, 1, canvas.height).data;
     const colours = new Set<number>();
     for (let k = 0; k < row.length; k += 4) colours.add((row[k]! << 16) | (row[k + 1]! << 8) | row[k + 2]!);
-    return colours.size > 20;
+    return colours.size > 10;
   });
 }
 
