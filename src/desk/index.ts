@@ -34,3 +34,5 @@ export {
   type WatchedLoad,
 } from './farm.ts';
 export { siteDiscWind } from './site-disc.ts';
+export { archiveView, type ArchiveNight, type ArchiveView } from './archive/view.ts';
+export { ArchiveTableReader, archiveTableKind } from './archive/read-tables.ts';

@@ -2,7 +2,8 @@
 // same code runs under test on one thread.
 
 import { Cancelled, type Problem } from '../../air/index.ts';
-import { Desk, type FeedState, type NightState } from '../../desk/index.ts';
+import { archiveView, Desk, judge, type ArchiveView, type FeedState, type NightState } from '../../desk/index.ts';
+import { criteriaOf } from '../../jet/index.ts';
 import { readProfiles } from '../../ingest/index.ts';
 import {
   buildSectionGrid,
@@ -14,6 +15,7 @@ import {
 } from '../../plot/index.ts';
 import { pickProfiles, type ProfileBlock } from '../../profile/index.ts';
 import { PLAIN_SITE, readSite, type DisplayUnits, type Site, type TurbineType } from '../../site/index.ts';
+import { readArchiveTables } from './archive-tables.ts';
 import { blobSource } from './blob-source.ts';
 import { sectionTable } from './section-table.ts';
 import type {
@@ -156,6 +158,30 @@ export class DeskService implements BoardWorker {
     const painter = this.#prepare(question);
     if (painter === null) return '';
     return [...sectionCsv(painter.grid, units, { ...view, endMs: Math.min(view.endMs, untilMs) })].join('');
+  }
+
+  archive(feed: string, criteria: string): ArchiveView | null {
+    const block = this.#desk.block(feed);
+    const name = this.#desk.feeds().find(({ key }) => key === feed);
+    if (block === null || name === undefined) return null;
+    const { site } = this.#desk;
+    const question = {
+      site,
+      criteria: criteriaOf(criteria === '' ? site.criteria : criteria),
+      discs: site.turbines,
+      source: '',
+    };
+    // The desk's block is screened already and in order of time.
+    const { key, station, instrument } = name;
+    const rows = { feed: { key, station, instrument }, ...judge(block, question) };
+    return archiveView(
+      rows,
+      site.turbines.map((turbine) => turbine.name),
+    );
+  }
+
+  archiveTables(files: readonly OpenFile[]): Promise<ArchiveView[]> {
+    return readArchiveTables(files);
   }
 
   #prepare({ feed, field, ceiling }: SectionQuestion): SectionPainter | null {

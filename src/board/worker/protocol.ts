@@ -1,7 +1,7 @@
 // The whole vocabulary between the page and its worker: plain data, typed arrays, and the calls.
 
 import type { Problem } from '../../air/index.ts';
-import type { Acceptance, FeedState, NightState } from '../../desk/index.ts';
+import type { Acceptance, ArchiveView, FeedState, NightState } from '../../desk/index.ts';
 import type { FieldName, SectionView, ThemeName, ValueRange } from '../../plot/index.ts';
 import type { ProfileBlock } from '../../profile/index.ts';
 import type { DisplayUnits, Site } from '../../site/index.ts';
@@ -110,6 +110,10 @@ export interface BoardWorker {
   profiles(feed: string, startMs: number, endMs: number): ProfileBlock | null;
   /** The newest columns of the section in view, as numbers. */
   table(request: SectionRequest): SectionTable | null;
+  /** The figures of a feed's open profiles; null where there is no such feed. */
+  archive(feed: string, criteria: string): ArchiveView | null;
+  /** The figures out of the archive's own tables. */
+  archiveTables(files: readonly OpenFile[]): Promise<ArchiveView[]>;
   /** The section in view as CSV, in the reader's units. */
   csv(request: SectionRequest, units: DisplayUnits): string;
 }
