@@ -17,6 +17,8 @@ export interface ThreadEvents {
 
 /** A thread's heap may grow to this, MB, before its file is given up: the others go on. */
 const HEAP_MB = 4096;
+/** Room for what is short-lived, MB: small, or the large arrays it holds on to wait long to be freed. */
+const YOUNG_MB = 8;
 
 /**
  * Works through the files.
@@ -41,7 +43,7 @@ export async function runThreads(
       for (let file = waiting.shift(); file !== undefined && !signal.aborted; file = waiting.shift()) {
         worker ??= new Worker(join(import.meta.dirname, 'scan-worker.js'), {
           workerData: question,
-          resourceLimits: { maxOldGenerationSizeMb: HEAP_MB },
+          resourceLimits: { maxOldGenerationSizeMb: HEAP_MB, maxYoungGenerationSizeMb: YOUNG_MB },
         });
         if (!(await workOn(worker, file))) worker = null;
       }
