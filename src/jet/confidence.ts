@@ -17,7 +17,7 @@ import {
   type NoseColumn,
   type NoseList,
 } from './nose.ts';
-import { fitPosteriorInto, posterior, sampleInto, type Posterior } from './posterior.ts';
+import { departuresInto, fitPosteriorInto, posterior, type Posterior } from './posterior.ts';
 import type { UncertaintyOrigin } from './uncertainty.ts';
 
 /** What the members of the ensemble found. */
@@ -41,13 +41,13 @@ export interface BasinVerdict {
 /** Working space of the ensemble, reused from profile to profile. */
 export interface Ensemble {
   readonly fit: Posterior;
-  sample: Float64Array;
+  departures: Float64Array;
   readonly column: NoseColumn;
   readonly list: NoseList;
 }
 
 export function ensemble(): Ensemble {
-  return { fit: posterior(), sample: new Float64Array(256), column: noseColumn(), list: noseList() };
+  return { fit: posterior(), departures: new Float64Array(256), column: noseColumn(), list: noseList() };
 }
 
 /** Pairs of members; 64 pairs leave a standard error of at most 0.044. */
@@ -72,8 +72,9 @@ export function judgeEnsemble(
   const { fit, column, list } = work;
   const levels = cut.ceilingShare >= 0 ? cut.kept + 1 : cut.kept;
   fitPosteriorInto(wind, levels, origin, fit);
-  if (work.sample.length < levels) work.sample = new Float64Array(2 * levels);
-  const { sample } = work;
+  if (work.departures.length < levels) work.departures = new Float64Array(2 * levels);
+  const { departures } = work;
+  const { mean } = fit;
   if (column.heightAgl.length < judged.count) Object.assign(column, noseColumn(2 * judged.count));
   column.count = judged.count;
   column.reachesCeiling = judged.reachesCeiling;
@@ -86,10 +87,12 @@ export function judgeEnsemble(
   const counts = new Array<number>(criteria.categories.length).fill(0);
   const members = 2 * pairs;
   for (let member = 0; member < members; member++) {
-    sampleInto(fit, NORMAL, (member >> 1) * STRIDE, (member & 1) === 0 ? 1 : -1, sample);
-    for (let k = 0; k < cut.kept; k++) column.speed[k] = sample[k]!;
+    const sign = (member & 1) === 0 ? 1 : -1;
+    if (sign > 0) departuresInto(fit, NORMAL, (member >> 1) * STRIDE, departures);
+    for (let k = 0; k < cut.kept; k++) column.speed[k] = Math.max(0, mean[k]! + sign * departures[k]!);
     if (cut.ceilingShare >= 0) {
-      column.speed[cut.kept] = between(sample[cut.kept - 1]!, sample[cut.kept]!, cut.ceilingShare);
+      const beyond = Math.max(0, mean[cut.kept]! + sign * departures[cut.kept]!);
+      column.speed[cut.kept] = between(column.speed[cut.kept - 1]!, beyond, cut.ceilingShare);
     }
     findNosesInto(column, asked, list);
     let best = -1;

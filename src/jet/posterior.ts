@@ -19,6 +19,8 @@ export interface Posterior {
   diagonal: Float64Array;
   below1: Float64Array;
   below2: Float64Array;
+  /** One over the diagonal: samples are many and divisions slow. */
+  inverse: Float64Array;
   /** Precision of the smooth curve alone, same form, and work space. */
   smooth0: Float64Array;
   smooth1: Float64Array;
@@ -34,6 +36,7 @@ export function posterior(capacity = 256): Posterior {
     diagonal: column(),
     below1: column(),
     below2: column(),
+    inverse: column(),
     smooth0: column(),
     smooth1: column(),
     smooth2: column(),
@@ -59,7 +62,8 @@ const RATIO_DOUBT = 2.5;
 
 /** Fits the posterior to the first `count` levels of a column with complete uncertainties. */
 export function fitPosteriorInto(wind: WindColumn, count: number, origin: UncertaintyOrigin, out: Posterior): void {
-  if (out.mean.length < count) Object.assign(out, posterior(2 * count));
+  // Two more than levels: see `departuresInto`.
+  if (out.mean.length < count + 2) Object.assign(out, posterior(2 * count + 2));
   out.count = count;
   fillSmoothness(wind, count, out);
   out.uncertainty.set(wind.speedUncertainty.subarray(0, count));
@@ -67,20 +71,25 @@ export function fitPosteriorInto(wind: WindColumn, count: number, origin: Uncert
   weigh(wind, origin, out);
 }
 
-/** One sample of the true speeds, m/s, from independent standard normal numbers at `from` onward. */
-export function sampleInto(fit: Posterior, normal: Float64Array, from: number, sign: number, out: Float64Array): void {
-  const { count, mean, diagonal, below1, below2 } = fit;
+/**
+ * How far one sample of the true speeds lies from their mean, m/s, by level, from independent standard normal numbers at
+ * `from` onward. With all signs turned it is a sample as likely.
+ */
+export function departuresInto(fit: Posterior, normal: Float64Array, from: number, out: Float64Array): void {
+  const { count, inverse, below1, below2 } = fit;
+  // Beyond the top nothing pulls: zeros there spare the loop its questions.
+  below1[count] = 0;
+  below2[count] = 0;
+  below2[count + 1] = 0;
+  let place = (from + count - 1) % normal.length;
   let above1 = 0;
   let above2 = 0;
   for (let k = count - 1; k >= 0; k--) {
-    let sum = sign * normal[(from + k) % normal.length]!;
-    if (k + 1 < count) sum -= below1[k + 1]! * above1;
-    if (k + 2 < count) sum -= below2[k + 2]! * above2;
-    const departure = sum / diagonal[k]!;
+    const departure = (normal[place]! - below2[k + 2]! * above2 - below1[k + 1]! * above1) * inverse[k]!;
     above2 = above1;
     above1 = departure;
-    const speed = mean[k]! + departure;
-    out[k] = speed > 0 ? speed : 0;
+    out[k] = departure;
+    place = place === 0 ? normal.length - 1 : place - 1;
   }
 }
 
@@ -133,6 +142,7 @@ function weigh(wind: WindColumn, origin: UncertaintyOrigin, out: Posterior): voi
   for (let k = 0; k < out.count; k++) out.uncertainty[k]! *= bestNoise;
   factorise(out, bestRatio * bestNoise * bestNoise, 1);
   solveMean(wind, out);
+  for (let k = 0; k < out.count; k++) out.inverse[k] = 1 / out.diagonal[k]!;
 }
 
 /** Cholesky factor of smoothness/curvature + 1/noise. @returns half the logarithm of its determinant */
@@ -196,14 +206,18 @@ const WILD_SHEAR = 0.03;
 /** Makes a lone wild level as uncertain as it is far off, so that it does not carry the profile. */
 function widenWild(wind: WindColumn, out: Posterior): void {
   const { heightAgl, speed } = wind;
-  const around: number[] = [];
+  const around = new Float64Array(2 * NEIGHBOURS + 1);
   for (let k = 0; k < out.count; k++) {
-    around.length = 0;
     const first = Math.max(0, k - NEIGHBOURS);
     const last = Math.min(out.count - 1, k + NEIGHBOURS);
-    for (let j = first; j <= last; j++) around.push(speed[j]!);
-    around.sort((a, b) => a - b);
-    const off = Math.abs(speed[k]! - around[around.length >> 1]!);
+    let held = 0;
+    for (let j = first; j <= last; j++) {
+      // Put in order as they come: five values are not worth calling a sort for.
+      let place = held++;
+      for (; place > 0 && around[place - 1]! > speed[j]!; place--) around[place] = around[place - 1]!;
+      around[place] = speed[j]!;
+    }
+    const off = Math.abs(speed[k]! - around[held >> 1]!);
     const gap = Math.min(
       k > 0 ? heightAgl[k]! - heightAgl[k - 1]! : Infinity,
       k < out.count - 1 ? heightAgl[k + 1]! - heightAgl[k]! : Infinity,
