@@ -17,6 +17,7 @@ import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
 import { MARK, profileAt, profileRange, profilesOf, type Profile, type ProfileBlock } from '../profile/index.ts';
 import { screen, type FeedScreening } from '../quality/index.ts';
 import { siteStation, type Site } from '../site/index.ts';
+import { AirSources } from './air-sources.ts';
 import { farmThrough, type DiscSeries, type FarmState } from './farm.ts';
 import type { FeedName } from './feed-name.ts';
 import { FeedStore, type Acceptance } from './feed-store.ts';
@@ -164,6 +165,21 @@ export class Desk {
       farm: farmThrough({ site: this.site, timeMs, profiles, discs, tracks, sunriseMs }),
       moisture: profiles.map((profile, k) => moistureOf(profile, { jetLayer: coreOf(findings[k]!) })),
     };
+  }
+
+  /**
+   * What may lend temperature and humidity to winds of a moment, as it was known then. Screens see no later profile.
+   * @param sinceMs nothing measured before is looked at
+   */
+  airSources(sinceMs: number, atMs: number): AirSources {
+    const sources = new AirSources(this.site);
+    for (const { key } of this.#store.names()) {
+      const raw = this.#store.block(key)!;
+      if (raw.specificHumidity === null) continue;
+      const part = profileRange(raw, countUntil(raw.timeMs, sinceMs - 1), countUntil(raw.timeMs, atMs));
+      sources.gather(screen(part, { site: this.site }).block);
+    }
+    return sources;
   }
 
   /** Profiles of the stations that the site file names as upstream of one, ascending in time. */

@@ -1,3 +1,4 @@
+export { AirSources } from './air-sources.ts';
 export { Desk, type FeedState, type NightQuestion, type NightState } from './desk.ts';
 export type { FeedName } from './feed-name.ts';
 export type { Acceptance } from './feed-store.ts';

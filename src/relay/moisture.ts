@@ -1,9 +1,9 @@
 // `moisture`: what vapour each profile carries; a JSON line a profile.
 
 import { toJsonNumber, toJsonNumbers } from '../air/index.ts';
+import { AirSources } from '../desk/index.ts';
 import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
-import { AirSources } from './air-sources.ts';
 import { readPaths } from './blocks.ts';
 import { numberOption, parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';

@@ -1,9 +1,9 @@
 // `storm`: parcels, shear, helicity and motion; a JSON line a profile.
 
 import { toJsonNumber } from '../air/index.ts';
+import { AirSources } from '../desk/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { joinWindAndAir, stormOf, type Figure, type StormNumbers, type VectorFigure } from '../storm/index.ts';
-import { AirSources } from './air-sources.ts';
 import { readPaths } from './blocks.ts';
 import { parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
