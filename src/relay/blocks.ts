@@ -1,7 +1,7 @@
 // The profiles of all paths, block after block, with whatever was wrong told on stderr.
 
 import type { ProfileBlock } from '../profile/index.ts';
-import { readProfiles, type ReadOptions } from '../ingest/index.ts';
+import { readProfiles } from '../ingest/index.ts';
 import type { Site } from '../site/index.ts';
 import { EXIT, UsageError } from './command.ts';
 import { openInputs, type Input } from './inputs.ts';
@@ -24,12 +24,11 @@ export async function readPaths(paths: readonly string[], site: Site, { take, su
   if (paths.length === 0) throw new UsageError('It needs at least one file or folder, or - for stdin.');
   const { inputs, problems, close } = await openInputs(paths);
   const reporter = new Reporter();
-  const options = { site, referenceTimeMs: Date.now() };
   try {
     for (const problem of problems) reporter.problem(problem);
-    if (survey !== undefined) await surveyInputs(inputs, options, survey);
+    if (survey !== undefined) await surveyInputs(inputs, site, survey);
     let unread = problems.length > 0;
-    for (const input of inputs) if (await readInput(input, options, reporter, take)) unread = true;
+    for (const input of inputs) if (await readInput(input, site, reporter, take)) unread = true;
     return unread ? EXIT.someUnread : EXIT.well;
   } catch (error) {
     if (error instanceof OutputClosed) return EXIT.well;
@@ -42,10 +41,11 @@ export async function readPaths(paths: readonly string[], site: Site, { take, su
 
 async function surveyInputs(
   inputs: readonly Input[],
-  options: Partial<ReadOptions>,
+  site: Site,
   survey: (block: ProfileBlock) => void,
 ): Promise<void> {
-  for (const { source } of inputs) {
+  for (const { source, writtenMs } of inputs) {
+    const options = { site, referenceTimeMs: writtenMs };
     for await (const { block } of readProfiles(source, options)) if (block.profileCount > 0) survey(block);
   }
 }
@@ -53,13 +53,13 @@ async function surveyInputs(
 /** @returns whether something in it could not be read */
 async function readInput(
   input: Input,
-  options: Partial<ReadOptions>,
+  site: Site,
   reporter: Reporter,
   take: (block: ProfileBlock) => Promise<void>,
 ): Promise<boolean> {
   let unread = false;
-  const watched = { ...options, onProgress: reporter.progress.bind(reporter) };
-  for await (const { block, problems } of readProfiles(input.source, watched)) {
+  const options = { site, referenceTimeMs: input.writtenMs, onProgress: reporter.progress.bind(reporter) };
+  for await (const { block, problems } of readProfiles(input.source, options)) {
     for (const problem of problems) {
       // A folder may hold a README and a site file beside the data: those are passed over, not unread.
       const foreign = !input.named && problem.code === 'ingest/unknown-format';

@@ -10,6 +10,8 @@ import type { ByteSource } from '../ingest/index.ts';
 
 export interface Input {
   readonly source: ByteSource;
+  /** UTC, ms, when it was written: where a code tells only the day of the month, this tells the rest. */
+  readonly writtenMs: number | undefined;
   /** It was named itself, not found in a folder: then it must be readable. */
   readonly named: boolean;
 }
@@ -47,7 +49,8 @@ async function addPath(path: string, named: boolean, inputs: Input[], problems: 
         if (!name.startsWith('.')) await addPath(join(path, name), false, inputs, problems);
       }
     } else if (named || entry.isFile()) {
-      inputs.push({ source: fileSource(path, path, entry.isFile() ? entry.size : undefined), named });
+      const source = fileSource(path, path, entry.isFile() ? entry.size : undefined);
+      inputs.push({ source, writtenMs: writtenMs(entry), named });
     }
   } catch (error) {
     problems.push(pathProblem(path, error as NodeJS.ErrnoException));
@@ -60,7 +63,15 @@ async function fromStdin(laidDown: string[]): Promise<Input> {
   laidDown.push(folder);
   const file = join(folder, 'stdin');
   await pipeline(process.stdin, createWriteStream(file));
-  return { source: fileSource('stdin', file, (await stat(file)).size), named: true };
+  return { source: fileSource('stdin', file, (await stat(file)).size), writtenMs: Date.now(), named: true };
+}
+
+/** Unpackers that keep no times leave files from 1970 or 1980: those were never written then. */
+const EARLIEST_FILE_MS = Date.UTC(2000, 0, 1);
+
+/** When a file was written; undefined where the file system does not truly know. */
+export function writtenMs({ mtimeMs }: { readonly mtimeMs: number }): number | undefined {
+  return mtimeMs >= EARLIEST_FILE_MS ? mtimeMs : undefined;
 }
 
 function fileSource(name: string, path: string, size: number | undefined): ByteSource {

@@ -5,6 +5,7 @@ import { placeInWords, type Problem } from '../../air/index.ts';
 import { archiveRows, mergeRows, type FeedRows } from '../../desk/index.ts';
 import { readProfiles, type ByteSource } from '../../ingest/index.ts';
 import { concatBlocks, type ProfileBlock } from '../../profile/index.ts';
+import { writtenMs } from '../inputs.ts';
 import type { ScanFile } from './files.ts';
 import type { Part, ScanProblem } from './part.ts';
 import type { ScanQuestion } from './question.ts';
@@ -13,8 +14,6 @@ import type { ScanQuestion } from './question.ts';
 const LEVELS_TOGETHER = 2 ** 20;
 /** So many problems of one file are told one by one; the rest are counted. */
 const MOST_PROBLEMS = 100;
-/** A clock before this was never set: it says nothing of when the file was written. */
-const EARLIEST_FILE_MS = Date.UTC(2000, 0, 1);
 
 /** @param onBytes told how many bytes of the file have been taken so far */
 export async function scanFile(
@@ -45,7 +44,7 @@ export async function scanFile(
   const readings = readProfiles(source, {
     site: question.site,
     // When a report tells only the day of the month, its file's age tells the rest.
-    referenceTimeMs: file.mtimeMs >= EARLIEST_FILE_MS ? file.mtimeMs : undefined,
+    referenceTimeMs: writtenMs(file),
     onProgress: ({ bytesRead }) => onBytes(bytesRead),
   });
   for await (const reading of readings) {
