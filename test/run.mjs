@@ -12,8 +12,13 @@ function vitest(configuration, environment = {}) {
   const cli = join(root, 'node_modules/vitest/vitest.mjs');
   const some = given.length > 0 ? ['--passWithNoTests'] : [];
   const args = [cli, 'run', '--config', configuration, ...some, ...given];
-  return spawnSync(process.execPath, args, { cwd: root, stdio: 'inherit', env: { ...process.env, ...environment } })
-    .status;
+  const { status, signal } = spawnSync(process.execPath, args, {
+    cwd: root,
+    stdio: 'inherit',
+    env: { ...process.env, ...environment },
+  });
+  if (signal !== null) process.stderr.write(`The tests of ${configuration} were ended from outside (${signal}).\n`);
+  return status;
 }
 
 let failed = vitest('vitest.config.ts') !== 0;
