@@ -4,8 +4,6 @@ import type { Component } from 'svelte';
 import type { Board } from '../state/board.svelte.ts';
 import type { Picture } from '../state/picture.svelte.ts';
 import type { TimeWords } from '../words/time.ts';
-import Feeds from './Feeds.svelte';
-import Rotor from './Rotor.svelte';
 import Tonight from './Tonight.svelte';
 
 export interface PageProps {
@@ -18,11 +16,12 @@ export interface Page {
   /** The part of the address behind `#/`. */
   readonly path: string;
   readonly title: string;
-  readonly component: Component<PageProps>;
+  /** Called when the page is first opened: Tonight comes with the first load, the others when somebody asks. */
+  readonly load: () => Promise<{ default: Component<PageProps> }>;
 }
 
 export const PAGES: readonly Page[] = [
-  { path: 'tonight', title: 'Tonight', component: Tonight },
-  { path: 'rotor', title: 'Rotor', component: Rotor },
-  { path: 'feeds', title: 'Feeds', component: Feeds },
+  { path: 'tonight', title: 'Tonight', load: () => Promise.resolve({ default: Tonight }) },
+  { path: 'rotor', title: 'Rotor', load: () => import('./Rotor.svelte') },
+  { path: 'feeds', title: 'Feeds', load: () => import('./Feeds.svelte') },
 ];
