@@ -1,6 +1,7 @@
 // Temperature and humidity for winds that come without: the newest profile of each station around, not later than the wind.
 
 import { distanceBetween } from '../air/index.ts';
+import { OLDEST_HUMIDITY_S } from '../moisture/index.ts';
 import { profilesOf, type Profile, type ProfileBlock } from '../profile/index.ts';
 import { siteStation, type Site } from '../site/index.ts';
 
@@ -10,11 +11,15 @@ const FARTHEST = 150_000;
 const NEAR = 50_000;
 /** Levels that make a profile of humidity. */
 const LEAST_LEVELS = 2;
+/** Up to here, m above ground, it matters how far the humidity of a source reaches. */
+const WANTED_REACH = 3000;
+/** What reaches less than this share as high as another that is not too old lends nothing: a mast beside a sounding. */
+const LEAST_REACH = 0.5;
 
 /** Gathers what may lend its air, block by block, and finds what may serve a wind. */
 export class AirSources {
   readonly #site: Site;
-  readonly #stations = new Map<string, Profile[]>();
+  readonly #stations = new Map<string, Source[]>();
   #sorted = true;
 
   constructor(site: Site) {
@@ -24,10 +29,12 @@ export class AirSources {
   gather(block: ProfileBlock): void {
     if (block.specificHumidity === null) return;
     for (const profile of profilesOf(block)) {
-      if (!carriesHumidity(profile)) continue;
+      const reach = reachOf(profile);
+      if (Number.isNaN(reach)) continue;
       const known = this.#stations.get(profile.station.id);
-      if (known === undefined) this.#stations.set(profile.station.id, [profile]);
-      else known.push(profile);
+      const source = { profile, reach, timeMs: profile.timeMs };
+      if (known === undefined) this.#stations.set(profile.station.id, [source]);
+      else known.push(source);
       this.#sorted = false;
     }
   }
@@ -35,12 +42,14 @@ export class AirSources {
   /** Of each station that may serve the newest profile at or before the wind's time. */
   for(wind: Profile): Profile[] {
     this.#sort();
-    const found: Profile[] = [];
-    for (const profiles of this.#stations.values()) {
-      const newest = profiles[countUpTo(profiles, wind.timeMs) - 1];
-      if (newest !== undefined && this.#mayServe(newest, wind)) found.push(newest);
+    const found: Source[] = [];
+    for (const sources of this.#stations.values()) {
+      const newest = sources[countUpTo(sources, wind.timeMs) - 1];
+      if (newest !== undefined && this.#mayServe(newest.profile, wind)) found.push(newest);
     }
-    return found;
+    const inTime = found.filter(({ timeMs }) => wind.timeMs - timeMs <= 1000 * OLDEST_HUMIDITY_S);
+    const farthest = Math.max(0, ...inTime.map(({ reach }) => reach));
+    return found.filter(({ reach }) => reach >= LEAST_REACH * farthest).map(({ profile }) => profile);
   }
 
   /** The same, but only those near the wind where there are any. */
@@ -57,24 +66,37 @@ export class AirSources {
 
   #sort(): void {
     if (this.#sorted) return;
-    for (const profiles of this.#stations.values()) profiles.sort((a, b) => a.timeMs - b.timeMs);
+    for (const sources of this.#stations.values()) sources.sort((a, b) => a.timeMs - b.timeMs);
     this.#sorted = true;
   }
 }
 
-function carriesHumidity({ specificHumidity }: Profile): boolean {
-  let levels = 0;
-  for (const value of specificHumidity ?? []) if (value >= 0 && ++levels >= LEAST_LEVELS) return true;
-  return false;
+interface Source {
+  readonly profile: Profile;
+  /** m above ground, at most `WANTED_REACH` */
+  readonly reach: number;
+  readonly timeMs: number;
 }
 
-/** How many of the profiles, ascending in time, are valid at or before a time. */
-function countUpTo(profiles: readonly Profile[], timeMs: number): number {
+/** How high the humidity reaches, m above ground, as far as that matters; NaN without a profile of it. */
+function reachOf({ specificHumidity, heightAgl }: Profile): number {
+  let levels = 0;
+  let reach = NaN;
+  (specificHumidity ?? []).forEach((value, k) => {
+    if (!(value >= 0)) return;
+    levels++;
+    reach = heightAgl[k]!;
+  });
+  return levels >= LEAST_LEVELS ? Math.min(reach, WANTED_REACH) : NaN;
+}
+
+/** How many of the sources, ascending in time, are valid at or before a time. */
+function countUpTo(sources: readonly Source[], timeMs: number): number {
   let low = 0;
-  let high = profiles.length;
+  let high = sources.length;
   while (low < high) {
     const middle = (low + high) >> 1;
-    if (profiles[middle]!.timeMs <= timeMs) low = middle + 1;
+    if (sources[middle]!.timeMs <= timeMs) low = middle + 1;
     else high = middle;
   }
   return low;

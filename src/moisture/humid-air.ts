@@ -48,7 +48,7 @@ export interface HumidityOptions {
 }
 
 /** Soundings are twelve hours apart: an hour more and the next one is overdue. */
-const OLDEST_HUMIDITY_S = 13 * 3600;
+export const OLDEST_HUMIDITY_S = 13 * 3600;
 const NO_HUMIDITY: HumidityUse = { id: '', ageS: NaN, distance: NaN, uncertainty: NaN };
 
 /** A profile's air with the humidity that serves it. */

@@ -1,6 +1,13 @@
 export { arrivalOf, type Arrival, type WayWind } from './arrival.ts';
 export { findSurges, scoreArrivals, type ArrivalScore, type Surge, type SurgeRule } from './arrival-score.ts';
-export { humidityUncertainty, type HumidAir, type HumidityOptions, type HumidityUse } from './humid-air.ts';
+export {
+  humidAir,
+  humidityUncertainty,
+  OLDEST_HUMIDITY_S,
+  type HumidAir,
+  type HumidityOptions,
+  type HumidityUse,
+} from './humid-air.ts';
 export { airColumn, type AirColumn } from './air-column.ts';
 export type { PotentialInstability } from './instability.ts';
 export { moistureOf, type MoistureNumbers, type MoistureOptions } from './moisture.ts';

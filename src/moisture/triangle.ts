@@ -8,6 +8,8 @@ import { cutLayer, integrate } from './layer.ts';
 import { windField, type FieldPoint, type WindField } from './wind-field.ts';
 
 export interface TriangleOptions extends HumidityOptions {
+  /** What may lend its humidity to a profile, where that differs between the stations; goes before `humidity`. */
+  readonly humidityFor?: ((profile: Profile) => readonly Profile[]) | undefined;
   /**
    * m above ground, ascending: layers between successive edges, with the mean wind of each. Absent: at the levels that the
    * stations share, with the wind measured there, where levels are few; else layers of 250 m up to 3 km.
@@ -60,7 +62,7 @@ export function triangleLayers(
   profiles: readonly Profile[],
   options: TriangleOptions = {},
 ): Pick<TriangleTime, 'layers' | 'notes'> {
-  const { edges, toleranceS = TOLERANCE_S, ...humidity } = options;
+  const { edges, toleranceS = TOLERANCE_S, humidityFor, ...shared } = options;
   const times = profiles.map((profile) => profile.timeMs);
   const apartS = (Math.max(...times) - Math.min(...times)) / 1000;
   const grounds = profiles.map((profile) => profile.station.elevation).filter((value) => Number.isFinite(value));
@@ -70,7 +72,9 @@ export function triangleLayers(
   if (uneven > UNEVEN) notes.push(`the stations' grounds differ by ${Math.round(uneven)} m, layers follow each ground`);
   if (apartS > toleranceS) notes.push(`the profiles lie ${Math.round(apartS / 60)} min apart`);
 
-  const columns = profiles.map((profile) => stationColumn(profile, humidity));
+  const columns = profiles.map((profile) =>
+    stationColumn(profile, humidityFor === undefined ? shared : { ...shared, humidity: humidityFor(profile) }),
+  );
   let [motion, variance, lastDensity] = [0, 0, NaN];
   const layers = layersFor(columns, edges).map(({ level, bottom, top }): TriangleLayer => {
     const points = columns.map((column) =>

@@ -1,6 +1,7 @@
 // `triangle`: how the wind through three or more stations spreads, turns and gathers moisture; a JSON line a time and layer.
 
 import { distanceBetween, toJsonNumber } from '../air/index.ts';
+import { AirSources } from '../desk/index.ts';
 import { triangleThroughTime, type TriangleLayer, type TriangleTime } from '../moisture/index.ts';
 import { profilesOf, type Profile } from '../profile/index.ts';
 import { readPaths } from './blocks.ts';
@@ -37,9 +38,12 @@ ${SCREENS_HELP}`,
     const site = await siteOf(values.site);
     const screened = screener(site, values.screens);
     const stations = new Map<string, Profile[]>();
+    const sources = new AirSources(site);
     const code = await readPaths(positionals, site, {
       take: (block) => {
-        for (const profile of profilesOf(screened(block))) {
+        const checked = screened(block);
+        sources.gather(checked);
+        for (const profile of profilesOf(checked)) {
           const known = stations.get(profile.station.id);
           if (known === undefined) stations.set(profile.station.id, [profile]);
           else known.push(profile);
@@ -56,7 +60,7 @@ ${SCREENS_HELP}`,
       return code === EXIT.well ? EXIT.someUnread : code;
     }
     const out = new LineWriter(process.stdout);
-    for (const time of triangleThroughTime(series, { humidity: all.flat().filter(carriesHumidity) })) {
+    for (const time of triangleThroughTime(series, { humidityFor: (profile) => sources.for(profile) })) {
       for (const layer of time.layers) await out.write(layerLine(time, layer));
     }
     await out.flush();
@@ -72,10 +76,6 @@ function onePerPlace(stations: readonly (readonly Profile[])[]): (readonly Profi
     if (!places.some(([other]) => distanceBetween(other!.station, here) <= SAME_PLACE)) places.push(profiles);
   }
   return places.sort((a, b) => (a[0]!.station.id < b[0]!.station.id ? -1 : 1));
-}
-
-function carriesHumidity({ specificHumidity }: Profile): boolean {
-  return specificHumidity?.some((value) => value >= 0) ?? false;
 }
 
 /** A layer as the contract of `triangle` has it. */
