@@ -18,6 +18,7 @@ import { MARK, profileAt, profileRange, profilesOf, type Profile, type ProfileBl
 import { screen, type FeedScreening } from '../quality/index.ts';
 import { siteStation, type Site } from '../site/index.ts';
 import { AirSources } from './air-sources.ts';
+import { archiveOf, type ArchiveView } from './archive/view.ts';
 import { farmThrough, type DiscSeries, type FarmState } from './farm.ts';
 import type { FeedName } from './feed-name.ts';
 import { FeedStore, type Acceptance } from './feed-store.ts';
@@ -114,6 +115,16 @@ export class Desk {
   /** A feed's profiles, screened and ascending in time; null where there is no such feed. */
   block(feed: string): ProfileBlock | null {
     return this.#screenedFeed(feed)?.block ?? null;
+  }
+
+  /** All of a feed's profiles as an archive, yielding the share done; null where there is no such feed. */
+  *archive({ feed: key, criteria }: NightQuestion): Generator<number, ArchiveView | null> {
+    const block = this.block(key);
+    const feed = this.#store.names().find((name) => name.key === key);
+    if (block === null || feed === undefined) return null;
+    const { site } = this;
+    const question = { site, criteria: criteriaOf(criteria ?? site.criteria), discs: site.turbines, source: '' };
+    return yield* archiveOf(block, feed, question);
   }
 
   /** The night of a feed as known at a moment: nothing later than `atMs` is looked at. Null where there is no such feed. */

@@ -17,6 +17,7 @@ export type { NamedDisc } from './archive/table-parts.ts';
 export {
   ArchiveTally,
   figureRows,
+  ROSE_SECTORS,
   ROSE_SPEEDS,
   solarClock,
   type ArchiveFigures,
@@ -35,5 +36,12 @@ export {
   type WatchedLoad,
 } from './farm.ts';
 export { siteDiscWind } from './site-disc.ts';
-export { archiveView, type ArchiveNight, type ArchiveView } from './archive/view.ts';
-export { ArchiveTableReader, archiveTableKind } from './archive/read-tables.ts';
+export type { ArchiveNight, ArchiveView } from './archive/view.ts';
+export {
+  ArchiveTableReader,
+  archiveTableKind,
+  readArchiveAbout,
+  type ArchiveAbout,
+  type ArchiveTableKind,
+  type TableCell,
+} from './archive/read-tables.ts';

@@ -2,8 +2,7 @@
 // same code runs under test on one thread.
 
 import { Cancelled, type Problem } from '../../air/index.ts';
-import { archiveView, Desk, judge, type ArchiveView, type FeedState, type NightState } from '../../desk/index.ts';
-import { criteriaOf } from '../../jet/index.ts';
+import { Desk, type FeedState, type NightState } from '../../desk/index.ts';
 import { readProfiles } from '../../ingest/index.ts';
 import {
   buildSectionGrid,
@@ -15,10 +14,12 @@ import {
 } from '../../plot/index.ts';
 import { pickProfiles, type ProfileBlock } from '../../profile/index.ts';
 import { PLAIN_SITE, readSite, type DisplayUnits, type Site, type TurbineType } from '../../site/index.ts';
-import { readArchiveTables } from './archive-tables.ts';
+import { archiveFileOf, breath, readArchiveTables } from './archive-tables.ts';
 import { blobSource } from './blob-source.ts';
 import { sectionTable } from './section-table.ts';
 import type {
+  ArchiveProgress,
+  ArchiveReport,
   BoardWorker,
   FileReport,
   OpenFile,
@@ -36,6 +37,9 @@ import type {
 
 /** Progress is told at most this often, in bytes, or reading would be slowed by telling of it. */
 const PROGRESS_STEP = 2 ** 18;
+/** The worker hears at least this often whether to stop, ms, and tells this often how far an archive has come. */
+const LONGEST_WITHOUT_BREATH_MS = 30;
+const ARCHIVE_TOLD_EVERY_MS = 100;
 
 interface PreparedSection {
   readonly question: SectionQuestion;
@@ -160,28 +164,61 @@ export class DeskService implements BoardWorker {
     return [...sectionCsv(painter.grid, units, { ...view, endMs: Math.min(view.endMs, untilMs) })].join('');
   }
 
-  archive(feed: string, criteria: string): ArchiveView | null {
-    const block = this.#desk.block(feed);
-    const name = this.#desk.feeds().find(({ key }) => key === feed);
-    if (block === null || name === undefined) return null;
-    const { site } = this.#desk;
-    const question = {
-      site,
-      criteria: criteriaOf(criteria === '' ? site.criteria : criteria),
-      discs: site.turbines,
-      source: '',
-    };
-    // The desk's block is screened already and in order of time.
-    const { key, station, instrument } = name;
-    const rows = { feed: { key, station, instrument }, ...judge(block, question) };
-    return archiveView(
-      rows,
-      site.turbines.map((turbine) => turbine.name),
+  async archive(
+    job: number,
+    feed: string,
+    criteria: string,
+    onProgress: (progress: ArchiveProgress) => void,
+  ): Promise<ArchiveReport> {
+    return this.#archiveJob(job, async (signal) => {
+      const steps = this.#desk.archive(criteria === '' ? { feed } : { feed, criteria });
+      for (let beganMs = performance.now(), toldMs = beganMs; ;) {
+        const step = steps.next();
+        if (step.done === true) return { views: step.value === null ? [] : [step.value], problems: [] };
+        const nowMs = performance.now();
+        if (nowMs - beganMs < LONGEST_WITHOUT_BREATH_MS) continue;
+        if (nowMs - toldMs > ARCHIVE_TOLD_EVERY_MS) {
+          toldMs = nowMs;
+          onProgress({ share: step.value, current: '' });
+        }
+        await breath();
+        if (signal.aborted) throw new Cancelled();
+        beganMs = performance.now();
+      }
+    });
+  }
+
+  async archiveTables(
+    job: number,
+    files: readonly OpenFile[],
+    onProgress: (progress: ArchiveProgress) => void,
+  ): Promise<ArchiveReport> {
+    return this.#archiveJob(job, (signal) =>
+      readArchiveTables(files, {
+        signal,
+        onProgress: (bytesRead, bytesTotal, current) => onProgress({ share: bytesRead / bytesTotal, current }),
+      }),
     );
   }
 
-  archiveTables(files: readonly OpenFile[]): Promise<ArchiveView[]> {
-    return readArchiveTables(files);
+  async areArchiveFiles(files: readonly OpenFile[]): Promise<boolean[]> {
+    return Promise.all(files.map(async (file) => (await archiveFileOf(file)) !== null));
+  }
+
+  async #archiveJob(
+    job: number,
+    work: (signal: AbortSignal) => Promise<Omit<ArchiveReport, 'cancelled'>>,
+  ): Promise<ArchiveReport> {
+    const control = new AbortController();
+    this.#jobs.set(job, control);
+    try {
+      return { ...(await work(control.signal)), cancelled: false };
+    } catch (error) {
+      if (!(error instanceof Cancelled)) throw error;
+      return { views: [], problems: [], cancelled: true };
+    } finally {
+      this.#jobs.delete(job);
+    }
   }
 
   #prepare({ feed, field, ceiling }: SectionQuestion): SectionPainter | null {

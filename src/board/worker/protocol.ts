@@ -110,12 +110,37 @@ export interface BoardWorker {
   profiles(feed: string, startMs: number, endMs: number): ProfileBlock | null;
   /** The newest columns of the section in view, as numbers. */
   table(request: SectionRequest): SectionTable | null;
-  /** The figures of a feed's open profiles; null where there is no such feed. */
-  archive(feed: string, criteria: string): ArchiveView | null;
-  /** The figures out of the archive's own tables. */
-  archiveTables(files: readonly OpenFile[]): Promise<ArchiveView[]>;
   /** The section in view as CSV, in the reader's units. */
   csv(request: SectionRequest, units: DisplayUnits): string;
+  /** The figures of a feed's open profiles: one view, none where there is no such feed. */
+  archive(
+    job: number,
+    feed: string,
+    criteria: string,
+    onProgress: (progress: ArchiveProgress) => void,
+  ): Promise<ArchiveReport>;
+  /** The figures out of the tables that a scan wrote: a view a feed. */
+  archiveTables(
+    job: number,
+    files: readonly OpenFile[],
+    onProgress: (progress: ArchiveProgress) => void,
+  ): Promise<ArchiveReport>;
+  /** Whether each file is one that a scan wrote, not one of profiles. */
+  areArchiveFiles(files: readonly OpenFile[]): Promise<boolean[]>;
+}
+
+/** How far the figures of an archive have come. */
+export interface ArchiveProgress {
+  /** 0 to 1 */
+  readonly share: number;
+  /** Name of the table being read; empty for open profiles. */
+  readonly current: string;
+}
+
+export interface ArchiveReport {
+  readonly views: readonly ArchiveView[];
+  readonly problems: readonly Problem[];
+  readonly cancelled: boolean;
 }
 
 export interface OpenSite {

@@ -19,6 +19,8 @@ export interface FigureRows {
   readonly timeMs: ArrayLike<number>;
   /** Index into STATUSES. */
   readonly status: ArrayLike<number>;
+  /** Highest met by the strongest jet; below 0 or NaN where there is none. */
+  readonly category: ArrayLike<number>;
   /** 1 while the sun is down, or where nobody knows. */
   readonly dark: ArrayLike<number>;
   /** NaN where there is no jet. */
@@ -33,7 +35,10 @@ export interface FigureRows {
 }
 
 /** What the figures need of a night. */
-export type FigureNight = Pick<NightRow, 'darkAssessable' | 'jets' | 'onsetMs' | 'endMs' | 'sunsetMs' | 'sunriseMs'>;
+export type FigureNight = Pick<
+  NightRow,
+  'darkAssessable' | 'jets' | 'category' | 'onsetMs' | 'endMs' | 'sunsetMs' | 'sunriseMs'
+>;
 
 /** Distributions of the rotor's wind over the assessable profiles of the dark hours. */
 export interface RotorFigures {
@@ -64,7 +69,10 @@ export interface ArchiveFigures {
   /** Nights with an assessable profile in the dark, and those of them with a jet at any time. */
   readonly nights: number;
   readonly nightsWithJet: number;
-  /** Hours after sunset of the first lasting jet, and after sunrise of its end, negative before; a value a night. */
+  /**
+   * Hours after sunset of the first lasting jet, and after sunrise of its end, negative before; a value a night. Of a least
+   * category: on the nights that reach it.
+   */
   readonly onset: Histogram;
   readonly end: Histogram;
   /** By turbine type. */
@@ -97,9 +105,14 @@ export class ArchiveTally {
   readonly #onset = new HistogramTally(-6, 0.5, 48);
   readonly #end = new HistogramTally(-18, 0.5, 48);
   readonly #discs: { withJet: RotorTally; withoutJet: RotorTally }[];
+  readonly #leastCategory: number;
 
-  /** @param discs how many turbine types the rows have */
-  constructor(discs: number) {
+  /**
+   * @param discs how many turbine types the rows have
+   * @param leastCategory jets below it are no jets here; 0 counts all, those of criteria without categories too
+   */
+  constructor(discs: number, leastCategory = 0) {
+    this.#leastCategory = leastCategory;
     this.#discs = Array.from({ length: discs }, () => ({ withJet: new RotorTally(), withoutJet: new RotorTally() }));
   }
 
@@ -111,7 +124,7 @@ export class ArchiveTally {
       this.#profiles[cell]!++;
       if (status === NOT_ASSESSABLE_ROW) continue;
       this.#assessable[cell]!++;
-      const jet = status === JET_ROW;
+      const jet = status === JET_ROW && this.#reaches(rows.category[row]!);
       if (jet) {
         this.#jets[cell]!++;
         this.#noseHeight.add(rows.noseHeight[row]!);
@@ -131,6 +144,7 @@ export class ArchiveTally {
     for (const night of nights) {
       if (night.darkAssessable === 0) continue;
       this.#nights++;
+      if (!this.#reaches(night.category)) continue;
       if (night.jets > 0) this.#nightsWithJet++;
       this.#onset.add((night.onsetMs - night.sunsetMs) / HOUR_MS);
       this.#end.add((night.endMs - night.sunriseMs) / HOUR_MS);
@@ -178,6 +192,10 @@ export class ArchiveTally {
     };
   }
 
+  #reaches(category: number): boolean {
+    return this.#leastCategory === 0 || category >= this.#leastCategory;
+  }
+
   #addToRose(speed: number, direction: number): void {
     if (Number.isNaN(direction)) {
       this.#roseUnknown++;
@@ -218,11 +236,12 @@ class RotorTally {
 /** The figures' columns out of a feed's rows. @param dark 1 while the sun is down, by row */
 export function figureRows({ profiles, jets, discs }: FeedRows, dark: ArrayLike<number>): FigureRows {
   const offsets = jetOffsets(profiles);
-  const ofStrongest = (values: Float32Array): Float32Array =>
+  const ofStrongest = (values: ArrayLike<number>): Float32Array =>
     Float32Array.from(profiles.jetCount, (count, row) => (count === 0 ? NaN : values[offsets[row]!]!));
   return {
     timeMs: profiles.timeMs,
     status: profiles.status,
+    category: ofStrongest(jets.category),
     dark,
     noseHeight: ofStrongest(jets.noseHeight),
     noseSpeed: ofStrongest(jets.noseSpeed),

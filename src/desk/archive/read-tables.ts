@@ -1,77 +1,124 @@
 // Reads the archive's own tables back: the figures out of the table of profiles, the nights out of the table of nights.
 
-import Papa from 'papaparse';
-import { ArchiveTally, solarClock, type FigureRows } from './figures.ts';
+import type { FigureRows } from './figures.ts';
 import { STATUSES } from './rows.ts';
-import type { ArchiveNight, ArchiveView } from './view.ts';
+import { discPrefixes } from './table-parts.ts';
+import { CategoryTallies, type ArchiveNight, type ArchiveView } from './view.ts';
 
-export type ArchiveTableKind = 'profiles' | 'nights';
+/** `other`: of the same scan, but nothing is read out of it. */
+export type ArchiveTableKind = 'profiles' | 'nights' | 'other';
 
-/** Which of the archive's tables begins with this line; null for any other text. */
-export function archiveTableKind(heading: string): ArchiveTableKind | null {
-  const names = heading.trim().split(',');
-  const has = (...wanted: string[]): boolean => wanted.every((name) => names.includes(name));
+/** Which of the archive's tables has these columns; null for any other. */
+export function archiveTableKind(columns: readonly string[]): ArchiveTableKind | null {
+  const has = (...wanted: string[]): boolean => wanted.every((name) => columns.includes(name));
   if (has('station', 'instrument', 'time', 'night', 'status', 'usable_levels', 'nose_height_agl_m')) return 'profiles';
   if (has('station', 'instrument', 'night', 'kind', 'dark_assessable', 'peak_speed_mps')) return 'nights';
-  return null;
+  if (has('station', 'instrument', 'time', 'night', 'rank', 'nose_height_agl_m')) return 'other';
+  return has('file', 'place', 'code', 'what', 'mend', 'unread') ? 'other' : null;
 }
+
+/** What the scan tells of its tables in `columns.json`, as far as the tables do not tell it themselves. */
+export interface ArchiveAbout {
+  readonly criteria: string;
+  /** Names of the turbine types. */
+  readonly discs: readonly string[];
+}
+
+/** Reads `columns.json`; null for any other text. */
+export function readArchiveAbout(text: string): ArchiveAbout | null {
+  try {
+    const { tables, criteria, turbines } = JSON.parse(text) as {
+      tables?: { profiles?: unknown };
+      criteria?: { name?: unknown };
+      turbines?: { name?: unknown }[];
+    };
+    const texts = [criteria?.name, ...(turbines ?? []).map(({ name }) => name)];
+    if (tables?.profiles === undefined || !texts.every((each) => typeof each === 'string')) return null;
+    const [name, ...discs] = texts;
+    return { criteria: name!, discs };
+  } catch {
+    return null;
+  }
+}
+
+/** A cell as text of a CSV file or as the value a Parquet file holds; missing is '', null or undefined. */
+export type TableCell = string | number | bigint | boolean | Date | null | undefined;
+type TableRow = readonly TableCell[];
 
 interface Feed {
   stationName: string;
   readonly instrument: string;
   longitude: number;
-  tally: ArchiveTally | null;
+  graded: boolean;
   discs: readonly string[];
-  readonly nights: ArchiveNight[];
+  tallies: CategoryTallies | null;
+  /** Moments and nights already taken: a table that is given twice counts once. */
+  readonly times: Set<number>;
+  readonly nights: Map<string, ArchiveNight>;
+  /** Names of files by night. */
+  readonly files: Map<string, Set<string>>;
 }
 
-/** Gathers tables, given in pieces of whole lines; those of nights first, for they know where the stations are. */
+/** Gathers tables in portions of rows; those of nights first, for they know where the stations are. */
 export class ArchiveTableReader {
   readonly #feeds = new Map<string, Feed>();
-  #names: readonly string[] = [];
+  #columns: readonly string[] = [];
   #kind: ArchiveTableKind | null = null;
+  /** Rows left out so far since they were cut short or told no time. */
+  broken = 0;
 
-  /** Begins a table. @param heading its first line */
-  begin(heading: string): void {
-    this.#names = heading.trim().split(',');
-    this.#kind = archiveTableKind(heading);
+  /** Begins a table. */
+  begin(columns: readonly string[]): void {
+    this.#columns = columns;
+    this.#kind = archiveTableKind(columns);
   }
 
-  /** Takes lines of the table begun. */
-  take(lines: string): void {
-    const { data } = Papa.parse<string[]>(lines, { delimiter: ',', skipEmptyLines: true });
-    const column = (name: string): number => this.#names.indexOf(name);
-    const byFeed = new Map<string, string[][]>();
-    const [station, instrument] = [column('station'), column('instrument')];
-    for (const cells of data) {
-      // A line cut short by a writer still at work.
-      if (cells.length < this.#names.length) continue;
-      const key = `${cells[station]!}/${cells[instrument]!}`;
+  /** Takes rows of the table begun. */
+  take(rows: readonly TableRow[]): void {
+    if (this.#kind !== 'nights' && this.#kind !== 'profiles') return;
+    const [station, instrument, moment] = ['station', 'instrument', this.#kind === 'nights' ? 'night' : 'time'].map(
+      (name) => this.#columns.indexOf(name),
+    ) as [number, number, number];
+    const byFeed = new Map<string, TableRow[]>();
+    for (const cells of rows) {
+      // A table that is still being written, or was cut, ends in the middle of a row.
+      if (cells.length < this.#columns.length || !Number.isFinite(timeOf(cells[moment]))) {
+        this.broken++;
+        continue;
+      }
+      const key = `${textOf(cells[station])}/${textOf(cells[instrument])}`;
       const known = byFeed.get(key);
       if (known === undefined) byFeed.set(key, [cells]);
       else known.push(cells);
     }
-    for (const [key, rows] of byFeed) {
-      const feed = this.#feedOf(key, rows[0]![station]!, rows[0]![instrument]!);
-      if (this.#kind === 'nights') this.#takeNights(feed, rows, column);
-      else if (this.#kind === 'profiles') this.#takeProfiles(feed, rows, column);
+    for (const [key, ofFeed] of byFeed) {
+      const feed = this.#feedOf(key, textOf(ofFeed[0]![station]), textOf(ofFeed[0]![instrument]));
+      if (this.#kind === 'nights') this.#takeNights(feed, ofFeed);
+      else this.#takeProfiles(feed, ofFeed);
     }
   }
 
   /** A view a feed, by key. */
-  views(): ArchiveView[] {
+  views(about: ArchiveAbout | null): ArchiveView[] {
+    const prefixes = discPrefixes((about?.discs ?? []).map((name) => ({ ...ANY_DISC, name })));
+    const named = (prefix: string): string => about?.discs[prefixes.indexOf(prefix)] ?? prefix.replaceAll('_', ' ');
     return [...this.#feeds.entries()]
       .sort(([a], [b]) => (a < b ? -1 : 1))
-      .map(([key, { stationName, instrument, longitude, tally, discs, nights }]) => {
-        const whole = tally ?? new ArchiveTally(0);
-        whole.addNights(nights);
+      .map(([key, feed]) => {
+        const nights = [...feed.nights.values()]
+          .map((night) => ({ ...night, files: [...(feed.files.get(night.night) ?? [])].filter((name) => name !== '') }))
+          .sort((a, b) => (a.night < b.night ? -1 : 1));
+        const tallies = feed.tallies ?? new CategoryTallies(0);
+        tallies.addNights(nights);
+        const { stationName, instrument, longitude, graded, discs } = feed;
         return {
           key,
           stationName,
           instrument,
-          isPlaced: Number.isFinite(longitude),
-          discs,
-          figures: whole.figures(),
+          longitude,
+          criteria: about?.criteria ?? '',
+          discs: discs.map(named),
+          figures: tallies.figures(graded),
           nights,
         };
       });
@@ -80,22 +127,35 @@ export class ArchiveTableReader {
   #feedOf(key: string, station: string, instrument: string): Feed {
     let feed = this.#feeds.get(key);
     if (feed === undefined) {
-      feed = { stationName: station, instrument, longitude: NaN, tally: null, discs: [], nights: [] };
+      feed = {
+        stationName: station,
+        instrument,
+        longitude: NaN,
+        graded: false,
+        discs: [],
+        tallies: null,
+        times: new Set(),
+        nights: new Map(),
+        files: new Map(),
+      };
       this.#feeds.set(key, feed);
     }
     return feed;
   }
 
-  #takeNights(feed: Feed, rows: readonly string[][], column: (name: string) => number): void {
-    const [first] = rows;
-    feed.stationName = first![column('station_name')] ?? feed.stationName;
-    feed.longitude = numberOf(first![column('longitude_deg')]);
+  #takeNights(feed: Feed, rows: readonly TableRow[]): void {
+    const at = (name: string): number => this.#columns.indexOf(name);
+    const name = textOf(rows[0]![at('station_name')]);
+    if (name !== '') feed.stationName = name;
+    feed.longitude = numberOf(rows[0]![at('longitude_deg')]);
     for (const cells of rows) {
-      const number = (name: string): number => numberOf(cells[column(name)]);
-      const time = (name: string): number => timeOf(cells[column(name)]);
+      const number = (column: string): number => numberOf(cells[at(column)]);
+      const time = (column: string): number => timeOf(cells[at(column)]);
+      const night = textOf(cells[at('night')]);
       const category = number('category');
-      feed.nights.push({
-        night: cells[column('night')]!,
+      if (!Number.isNaN(category)) feed.graded = true;
+      feed.nights.set(night, {
+        night,
         sunsetMs: time('sunset'),
         sunriseMs: time('sunrise'),
         profiles: number('profiles'),
@@ -111,42 +171,77 @@ export class ArchiveTableReader {
         peakHeight: number('peak_height_agl_m'),
         peakDirection: number('peak_direction_deg'),
         category: Number.isNaN(category) ? -1 : category,
+        files: [],
       });
     }
   }
 
-  #takeProfiles(feed: Feed, rows: readonly string[][], column: (name: string) => number): void {
+  #takeProfiles(feed: Feed, all: readonly TableRow[]): void {
+    const at = (name: string): number => this.#columns.indexOf(name);
+    const [time, night, file, status, dark] = ['time', 'night', 'file', 'status', 'sun_down'].map(at) as [
+      number,
+      number,
+      number,
+      number,
+      number,
+    ];
+    const rows = all.filter((cells) => {
+      const timeMs = timeOf(cells[time]);
+      if (feed.times.has(timeMs)) return false;
+      feed.times.add(timeMs);
+      const files = feed.files.get(textOf(cells[night]));
+      if (files === undefined) feed.files.set(textOf(cells[night]), new Set([textOf(cells[file])]));
+      else files.add(textOf(cells[file]));
+      return true;
+    });
     const ENDING = '_rews_mps';
-    feed.discs = this.#names.filter((name) => name.endsWith(ENDING)).map((name) => name.slice(0, -ENDING.length));
+    const prefixes = this.#columns.filter((name) => name.endsWith(ENDING)).map((name) => name.slice(0, -ENDING.length));
+    // A second scan with other turbine types: its figures of the rotor would not add up with the first one's.
+    const joins = feed.tallies === null || feed.discs.join() === prefixes.join();
+    if (feed.tallies === null) feed.discs = prefixes;
     const numbers = (name: string): Float64Array => {
-      const at = column(name);
-      return Float64Array.from(rows, (cells) => numberOf(cells[at]));
+      const place = at(name);
+      return Float64Array.from(rows, (cells) => numberOf(cells[place]));
     };
-    const [time, status, dark] = [column('time'), column('status'), column('sun_down')];
+    const category = numbers('category');
     const columns: FigureRows = {
       timeMs: Float64Array.from(rows, (cells) => timeOf(cells[time])),
       status: Uint8Array.from(rows, (cells) =>
-        Math.max(0, STATUSES.indexOf(cells[status] as (typeof STATUSES)[number])),
+        Math.max(
+          0,
+          STATUSES.findIndex((each) => each === cells[status]),
+        ),
       ),
-      dark: Uint8Array.from(rows, (cells) => Number(cells[dark] === 'yes')),
+      category,
+      dark: Uint8Array.from(rows, (cells) => Number(cells[dark] === true || cells[dark] === 'yes')),
       noseHeight: numbers('nose_height_agl_m'),
       noseSpeed: numbers('nose_speed_mps'),
       noseDirection: numbers('nose_direction_deg'),
-      discs: feed.discs.map((prefix) => ({
+      discs: (joins ? prefixes : []).map((prefix) => ({
         equivalentSpeed: numbers(`${prefix}${ENDING}`),
         shearExponent: numbers(`${prefix}_shear_exponent`),
         veer: numbers(`${prefix}_veer_deg`),
       })),
     };
-    feed.tally ??= new ArchiveTally(feed.discs.length);
-    feed.tally.addRows(columns, solarClock(feed.longitude));
+    feed.graded ||= category.some((each) => !Number.isNaN(each));
+    feed.tallies ??= new CategoryTallies(feed.discs.length);
+    feed.tallies.addRows(columns, feed.longitude);
   }
 }
 
-function numberOf(text: string | undefined): number {
-  return text === undefined || text === '' ? NaN : Number(text);
+/** Prefixes hang on the names alone. */
+const ANY_DISC = { hubHeight: NaN, rotorDiameter: NaN, groundElevation: NaN };
+
+function textOf(cell: TableCell): string {
+  return typeof cell === 'string' ? cell : '';
 }
 
-function timeOf(text: string | undefined): number {
-  return text === undefined || text === '' ? NaN : Date.parse(text);
+function numberOf(cell: TableCell): number {
+  return cell === undefined || cell === null || cell === '' ? NaN : Number(cell);
+}
+
+/** UTC ms. */
+function timeOf(cell: TableCell): number {
+  if (cell instanceof Date) return cell.getTime();
+  return typeof cell === 'string' && cell !== '' ? Date.parse(cell) : NaN;
 }

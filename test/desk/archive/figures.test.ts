@@ -65,6 +65,7 @@ describe('ArchiveTally', () => {
       return {
         timeMs: of(rows.timeMs),
         status: of(rows.status),
+        category: of(rows.category),
         dark: of(rows.dark),
         noseHeight: of(rows.noseHeight),
         noseSpeed: of(rows.noseSpeed),
