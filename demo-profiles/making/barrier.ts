@@ -97,6 +97,7 @@ const SITE = {
       stations: ['garrow-profiler'],
     },
   ],
+  upstream: [{ station: 'garrow-profiler', from: ['gull-flats'] }],
 };
 
 /** The night at Garrow Foothills. */
@@ -129,6 +130,7 @@ export function barrier(): DemoNight {
         periodS: 900,
       }),
       'gull-flats-evening.csv': sounding(862104, '2024-01-17T00:00Z'),
+      'gull-flats-night.csv': sounding(862106, '2024-01-17T06:00Z'),
       'gull-flats-morning.csv': sounding(862105, '2024-01-17T12:00Z'),
     },
   );

@@ -12,9 +12,18 @@ import {
   type JetFinding,
   type JetStory,
   type JetTrack,
+  type StorySetting,
 } from '../jet/index.ts';
 import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
-import { MARK, profileAt, profileRange, profilesOf, type Profile, type ProfileBlock } from '../profile/index.ts';
+import {
+  MARK,
+  profileAt,
+  profileRange,
+  profilesOf,
+  type Profile,
+  type ProfileBlock,
+  type Station,
+} from '../profile/index.ts';
 import { screen, type FeedScreening } from '../quality/index.ts';
 import { siteStation, type Site } from '../site/index.ts';
 import { AirSources } from './air-sources.ts';
@@ -153,12 +162,7 @@ export class Desk {
       ),
     }));
     const { sunriseMs } = window.night;
-    const setting = {
-      station: feed.station,
-      axes: this.site.terrainAxes.filter((axis) => axis.stations.includes(feed.station.id)),
-      undisturbed: this.#upstreamProfiles(feed.station.id, window.startMs, atMs),
-      geostrophicSpeed: this.site.geostrophicWind?.speed ?? NaN,
-    };
+    const setting = { ...this.#placeOf(feed.station, window.startMs, atMs), findings: timed, profiles };
     return {
       atMs,
       feed,
@@ -169,9 +173,7 @@ export class Desk {
       findings,
       migrants: profiles.map(({ mark }) => mark.some((bits) => (bits & MIGRANTS) !== 0)),
       tracks,
-      stories: tracks.map((track) =>
-        storyOf(track, { ...setting, discs: this.site.turbines, findings: timed, profiles }, { time: utcClock }),
-      ),
+      stories: tracks.map((track) => storyOf(track, setting, { time: utcClock })),
       discs,
       farm: farmThrough({ site: this.site, timeMs, profiles, discs, tracks, sunriseMs }),
       moisture: profiles.map((profile, k) => moistureOf(profile, { jetLayer: coreOf(findings[k]!) })),
@@ -191,6 +193,39 @@ export class Desk {
       sources.gather(screen(part, { site: this.site }).block);
     }
     return sources;
+  }
+
+  /** The stories of all jets of a feed, with the whole record known; empty where there is no such feed. */
+  stories({ feed: key, criteria: name }: NightQuestion): JetStory[] {
+    const screened = this.#screenedFeed(key);
+    const feed = this.#store.names().find((each) => each.key === key);
+    if (screened === null || feed === undefined) return [];
+    const { block } = screened;
+    const criteria = criteriaOf(name ?? this.site.criteria);
+    const timed = Array.from(block.timeMs, (timeMs, index) => ({
+      stationId: feed.station.id,
+      timeMs,
+      finding: this.#finding(screened, index, criteria),
+    }));
+    return trackJets(timed).map((track) => {
+      const lastMs = track.points.at(-1)!.timeMs;
+      const { startMs } = nightWindow(track.beganMs, feed.station, block.timeMs);
+      const [from, to] = [countUntil(block.timeMs, startMs - 1), countUntil(block.timeMs, lastMs)];
+      const profiles = Array.from({ length: to - from }, (_, k) => profileAt(block, from + k));
+      const place = this.#placeOf(feed.station, startMs, lastMs);
+      return storyOf(track, { ...place, findings: timed.slice(from, to), profiles }, { time: utcClock });
+    });
+  }
+
+  /** What a story must know of the place: terrain, the wind far upstream, the discs. */
+  #placeOf(station: Station, startMs: number, atMs: number): Omit<StorySetting, 'profiles' | 'findings'> {
+    return {
+      station,
+      axes: this.site.terrainAxes.filter((axis) => axis.stations.includes(station.id)),
+      undisturbed: this.#upstreamProfiles(station.id, startMs, atMs),
+      discs: this.site.turbines,
+      geostrophicSpeed: this.site.geostrophicWind?.speed ?? NaN,
+    };
   }
 
   /** Profiles of the stations that the site file names as upstream of one, ascending in time. */

@@ -139,17 +139,33 @@ function tracksOf(findings: readonly TimedFinding[], options: TrackOptions): Jet
     })),
   );
   const passing = passingCosts(findings, weights);
+  const paths = runsOf(nodes, options).flatMap((run) => pathsOf(run, passing, options));
+  paths.sort((a, b) => a[0]!.timeMs - b[0]!.timeMs || a[0]!.height - b[0]!.height);
+  const usualStepMs = usualStep(findings);
+  return paths.map((path) => describe(path, paths, findings, usualStepMs, options));
+}
+
+/** Nodes parted where no way leads across, so that years cost no more than their nights. */
+function runsOf(nodes: readonly Node[], { longestGapMs }: TrackOptions): Node[][] {
+  const runs: Node[][] = [];
+  for (const node of nodes) {
+    const run = runs.at(-1);
+    if (run !== undefined && node.timeMs - run.at(-1)!.timeMs <= longestGapMs) run.push(node);
+    else runs.push([node]);
+  }
+  return runs;
+}
+
+/** The best way, then the best through what it leaves, and so on. */
+function pathsOf(nodes: readonly Node[], passing: readonly number[], options: TrackOptions): Node[][] {
   const paths: Node[][] = [];
   for (;;) {
     const path = bestPath(nodes, passing, options);
-    if (path === null) break;
+    if (path === null) return paths;
     for (const node of path) node.taken = true;
     const trimmed = trim(path, options);
     if (trimmed.length > 0) paths.push(trimmed);
   }
-  paths.sort((a, b) => a[0]!.timeMs - b[0]!.timeMs || a[0]!.height - b[0]!.height);
-  const usualStepMs = usualStep(findings);
-  return paths.map((path) => describe(path, paths, findings, usualStepMs, options));
 }
 
 /** Log odds of a confidence against those of giving up, bounded. */
@@ -167,7 +183,7 @@ function passingCosts(findings: readonly TimedFinding[], weights: readonly numbe
 }
 
 /** The best way through nodes not yet taken; null when none is worth a track. */
-function bestPath(nodes: Node[], passing: readonly number[], options: TrackOptions): Node[] | null {
+function bestPath(nodes: readonly Node[], passing: readonly number[], options: TrackOptions): Node[] | null {
   let best: Node | null = null;
   let first = 0;
   for (let k = 0; k < nodes.length; k++) {

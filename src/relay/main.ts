@@ -20,6 +20,10 @@ const COMMANDS: Readonly<Record<string, { summary: string; load: () => Promise<C
     summary: 'finds low-level jets in each profile',
     load: async () => (await import('./jets.ts')).command,
   },
+  tracks: {
+    summary: 'follows jets through the night: story, kind, evidence',
+    load: async () => (await import('./tracks.ts')).command,
+  },
   rotor: {
     summary: 'computes speed, shear and veer over rotor discs',
     load: async () => (await import('./rotor.ts')).command,

@@ -109,4 +109,15 @@ describe('Desk', () => {
     expect(desk.night(start, { feed: 'elsewhere/lidar' })).toBeNull();
     expect(desk.night(start - 30 * 86_400_000, { feed })!.timeMs).toEqual([]);
   });
+
+  it('tells the stories of the whole record as it tells that of the night', () => {
+    const desk = new Desk(site);
+    desk.accept(night(30));
+    const [told, ...others] = desk.stories({ feed });
+    expect(others).toEqual([]);
+    const { track } = desk.night(start + 29 * STEP, { feed })!.stories[0]!;
+    expect(told!.track).toEqual(track);
+    expect(told!.track.beganMs).toBe(start + 6 * STEP);
+    expect(desk.stories({ feed: 'nowhere/mast' })).toEqual([]);
+  });
 });

@@ -132,6 +132,19 @@ describe('trackJets', () => {
     );
   });
 
+  it('follows each of many nights as if it were alone', () => {
+    const sure = [nose(300, 14)];
+    const one = night([none, sure, sure, sure, sure, none, none, [nose(800, 12)], none, none]);
+    const shifted = (days: number): TimedFinding[] =>
+      one.map((each) => ({ ...each, timeMs: each.timeMs + days * 1440 * MINUTE_MS }));
+    const alone = trackJets(one);
+    expect(alone).toHaveLength(1);
+    const tracks = trackJets([0, 1, 2].flatMap(shifted));
+    expect(
+      tracks.map(({ beganMs, endedMs, points }) => [minutes(beganMs) % 1440, minutes(endedMs) % 1440, points.length]),
+    ).toEqual(Array.from({ length: 3 }, () => [minutes(alone[0]!.beganMs), minutes(alone[0]!.endedMs), 4]));
+  });
+
   it('keeps stations apart and takes nothing for something', () => {
     const sure = [nose(300, 14)];
     const here = night([sure, sure, sure, sure]);
