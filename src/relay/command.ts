@@ -33,10 +33,22 @@ export function parseOptions<T extends Options>(
   options: T,
 ): ReturnType<typeof parseArgs<{ args: string[]; options: T; allowPositionals: true }>> {
   try {
-    return parseArgs({ args: [...args], options, allowPositionals: true });
+    return parseArgs({ args: joinNegatives(args, options), options, allowPositionals: true });
   } catch (error) {
     throw new UsageError(usageProblem(error as Error & { code?: string }, Object.keys(options)), { cause: error });
   }
+}
+
+/** `--motion -3,5` is meant as `--motion=-3,5`: a number may begin with a minus, an option never with a digit behind it. */
+function joinNegatives(args: readonly string[], options: Options): string[] {
+  const joined: string[] = [];
+  for (const arg of args) {
+    const before = joined.at(-1) ?? '';
+    const takesValue = before.startsWith('--') && options[before.slice(2)]?.type === 'string';
+    if (takesValue && /^-[\d.]/.test(arg)) joined[joined.length - 1] = `${before}=${arg}`;
+    else joined.push(arg);
+  }
+  return joined;
 }
 
 function usageProblem(error: Error & { code?: string }, known: readonly string[]): string {

@@ -51,9 +51,9 @@ ${SCREENS_HELP}`,
       take: async (block) => {
         for (const profile of profilesOf(screened(block))) {
           const [jet] = findingOf(profile, criteria, site).jets;
-          const { air } = joinWindAndAir(profile, sources.nearest(profile));
+          const { air, why } = joinWindAndAir(profile, sources.nearest(profile));
           const numbers = stormOf(profile, {
-            ...(air === null ? {} : { air }),
+            ...(air === null ? { noAir: why } : { air }),
             ...(jet === undefined ? {} : { jet }),
             ...(motion === undefined ? {} : { motion }),
           });

@@ -78,6 +78,43 @@ export function parcelTemperatures(start: ParcelStart, pressures: ArrayLike<numb
   );
 }
 
+/** A parcel's way up beside its surroundings, for drawing. Columns by falling pressure, from the start. */
+export interface Trace {
+  /** Pa */
+  readonly pressure: Float64Array;
+  /** K, of the parcel */
+  readonly temperature: Float64Array;
+  /** K, of the parcel; the area between it and `surroundings` is what energies are reckoned from */
+  readonly virtualTemperature: Float64Array;
+  /** K, virtual temperature of the air around */
+  readonly surroundings: Float64Array;
+}
+
+/** Points closer than this in ln p, 20 m, are not drawn apart. */
+const DRAWN_APART = 0.0025;
+
+/** The way up of a parcel through its surroundings, its condensation level among the points. */
+export function parcelTrace(environment: Environment, start: ParcelStart): Trace {
+  const path = new ParcelPath(start);
+  const xs = [-Math.log(start.pressure)];
+  for (let k = firstAbove(environment, xs[0]!); k < environment.count; k++) {
+    const x = environment.x[k]!;
+    if (x <= xs.at(-1)! + (k + 1 < environment.count ? DRAWN_APART : 0)) continue;
+    if (xs.at(-1)! < path.lclX && path.lclX < x) xs.push(path.lclX);
+    xs.push(x);
+  }
+  const column = (): Float64Array => new Float64Array(xs.length);
+  const trace = { pressure: column(), temperature: column(), virtualTemperature: column(), surroundings: column() };
+  // The path is asked by rising x only, so temperature and virtual temperature are taken together.
+  xs.forEach((x, k) => {
+    trace.pressure[k] = Math.exp(-x);
+    trace.temperature[k] = path.temperature(x);
+    trace.virtualTemperature[k] = path.virtualTemperature(x);
+    trace.surroundings[k] = virtualAtX(environment, x);
+  });
+  return trace;
+}
+
 /** A parcel's temperature as it rises; asked by rising x = -ln p. */
 class ParcelPath {
   readonly lclX: number;

@@ -41,7 +41,7 @@ export function ingredientsOf(storm: StormNumbers, others: OtherIngredients = {}
     return { value: known, why: Number.isNaN(known) ? of(name).why : '' };
   };
   // Left-movers turn with negative helicity.
-  const turn = storm.helicity.prevailing === 'left' ? -1 : 1;
+  const turn = storm.prevailing === 'left' ? -1 : 1;
   const helicitySense = turn > 0 ? 'at-least' : 'at-most';
   return [
     row('moisture', 'Mixing ratio of the lowest 100 hPa', 'kg/kg', mixedRatio(of('mixed-layer')), 0.01, PRACTICE),

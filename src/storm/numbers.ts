@@ -1,6 +1,7 @@
 // What a storm assessment holds.
 
 import type { LayerAdvection } from './advection.ts';
+import type { AloftSource } from './aloft.ts';
 import type { Figure, VectorFigure } from './figure.ts';
 import type { Inflow } from './inflow.ts';
 import type { ClusterMotion, StormMotion } from './motion.ts';
@@ -17,6 +18,10 @@ export interface StormNumbers {
   readonly notes: readonly string[];
   /** The profile temperature and humidity came from, and how much older than the wind, s. */
   readonly airFrom: { readonly station: string; readonly timeMs: number; readonly ageS: number };
+  /** Whose wind stands above the top of the profile's own; null where none does. */
+  readonly windAloft: AloftSource | null;
+  /** Whose temperature and humidity stand above the top of the air's own; null where none do. */
+  readonly airAloft: AloftSource | null;
   /** Surface-based, mixed-layer, most-unstable, jet-fed, in this order. */
   readonly parcels: readonly Parcel[];
   readonly inflow: Inflow;
@@ -27,11 +32,12 @@ export interface StormNumbers {
     readonly to6km: Figure;
     readonly effective: Figure;
   };
+  /** For which motion helicity and inflow are told. */
+  readonly mover: Mover;
+  /** The mover that prevails in this hemisphere: left-movers thrive on negative helicity. */
+  readonly prevailing: 'right' | 'left' | 'unknown';
   /** Storm-relative helicity, m2/s2, for `mover`; `effective` through the inflow layer. */
   readonly helicity: {
-    readonly mover: Mover;
-    /** The mover that prevails in this hemisphere: left-movers thrive on negative helicity. */
-    readonly prevailing: 'right' | 'left' | 'unknown';
     readonly to1km: Figure;
     readonly to3km: Figure;
     readonly effective: Figure;

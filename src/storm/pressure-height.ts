@@ -1,11 +1,12 @@
 // At what height a pressure lies, by the levels that report both; temperature is not asked for.
 
-import { REJECTING, type Profile } from '../profile/index.ts';
+import { REJECTING } from '../profile/index.ts';
+import type { AirLevels } from './air-levels.ts';
 import { figure, hectopascals, type Figure } from './figure.ts';
 
-/** Height above the profile's own ground, m, of each pressure (Pa); linear in ln p between levels. */
-export function heightsOfPressures(profile: Profile, wanted: readonly number[]): Figure[] {
-  const { pressure, heightAgl, mark, levelCount } = profile;
+/** Height above the levels' own ground, m, of each pressure (Pa); linear in ln p between levels. */
+export function heightsOfPressures(levels: AirLevels, wanted: readonly number[]): Figure[] {
+  const { pressure, heightAgl, mark, levelCount } = levels;
   const heights: number[] = [];
   const logarithms: number[] = [];
   for (let k = 0; k < levelCount && pressure !== null; k++) {

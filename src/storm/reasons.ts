@@ -10,7 +10,9 @@ export interface Reasons {
 }
 
 /** Each reason once, with what it keeps from being known. */
-export function reasonsOf(numbers: Omit<StormNumbers, 'status' | 'why' | 'notes' | 'airFrom'>): Reasons {
+export function reasonsOf(
+  numbers: Omit<StormNumbers, 'status' | 'why' | 'notes' | 'airFrom' | 'windAloft' | 'airAloft'>,
+): Reasons {
   const { parcels, inflow, shear, helicity, motion, clusters } = numbers;
   const { cloudLayer, upwind } = clusters;
   const told: [what: string, why: string][] = [

@@ -2,6 +2,7 @@
 
 import { dewPointOf, KAPPA } from '../air/index.ts';
 import { REJECTING_AIR, type Profile } from '../profile/index.ts';
+import { airLevelsOf, type AirLevels } from './air-levels.ts';
 import { hectopascals, metres } from './figure.ts';
 
 /** A lowest level higher than this above ground, m, is no surface observation (common practice, without source). */
@@ -12,6 +13,8 @@ const WIDEST_GAP = 20_000;
 const DRY_ABOVE = 50_000;
 /** A dew point more than this above the temperature, K, is no dew point; less is taken as saturation. */
 const SUPERSATURATION = 2;
+/** Humidity below this, kg/kg, is below what instruments tell, and would have no dew point. */
+const DRIEST = 1e-6;
 /** Fall of potential temperature within the lowest 100 m, K, above which the surface value is doubted. */
 const SUPERADIABATIC = 2;
 
@@ -29,6 +32,8 @@ export interface Sounding {
   /** K; NaN from `moistCount` on, where the air counts as dry */
   readonly dewPoint: Float64Array;
   readonly moistCount: number;
+  /** How pressure was had where it was not measured, in words; empty where it was. */
+  readonly pressureFrom: string;
   /** Why nothing can be lifted from the surface; empty when the lowest level is one. */
   readonly noSurface: string;
   /** Why nothing can be lifted at all; empty when something can. */
@@ -38,13 +43,15 @@ export interface Sounding {
 }
 
 /**
- * Gathers the levels of a profile for parcel work. Levels without pressure or temperature, with a mark that rejects
- * them, or at which pressure does not fall are passed over; missing dew points are joined over at most 200 hPa.
+ * Gathers the levels of a profile for parcel work. Levels without temperature, with a mark that rejects them, or at
+ * which pressure does not fall are passed over; missing dew points are joined over at most 200 hPa; where pressure was not
+ * measured it is worked out from the heights.
  * @returns an empty sounding with `noAir` told when fewer than two levels are left
  */
 export function soundingOf(profile: Profile): Sounding {
   const notes: string[] = [];
-  const gathered = gather(profile, notes);
+  const levels = airLevelsOf(profile);
+  const gathered = gather(levels, notes);
   const moistCount = joinDewPoints(gathered, notes);
   let count = gathered.count;
   if (moistCount > 0 && moistCount < count) {
@@ -65,9 +72,11 @@ export function soundingOf(profile: Profile): Sounding {
     temperature: take(gathered.temperature),
     dewPoint: take(gathered.dewPoint),
     moistCount,
-    noAir: whyNoAir(profile, gathered.count, moistCount),
+    pressureFrom: levels.pressureFrom,
+    noAir: whyNoAir(levels, gathered.count, moistCount),
     notes,
   };
+  if (levels.pressureFrom !== '' && sounding.noAir === '') notes.push(levels.pressureFrom);
   noteSuperadiabatic(sounding, notes);
   return { ...sounding, noSurface: whyNoSurface(sounding) };
 }
@@ -80,8 +89,8 @@ interface Gathered {
   readonly dewPoint: Float64Array;
 }
 
-function gather(profile: Profile, notes: string[]): Gathered {
-  const { levelCount, heightAgl, pressure, temperature, specificHumidity, mark } = profile;
+function gather(from: AirLevels, notes: string[]): Gathered {
+  const { levelCount, heightAgl, pressure, temperature, specificHumidity, mark } = from;
   const column = (): Float64Array => new Float64Array(levelCount);
   const out: Gathered = {
     count: 0,
@@ -93,6 +102,7 @@ function gather(profile: Profile, notes: string[]): Gathered {
   if (pressure === null || temperature === null) return out;
   let saturated = 0;
   let impossible = 0;
+  let dry = 0;
   let count = 0;
   for (let k = 0; k < levelCount; k++) {
     const below = count > 0 ? out.pressure[count - 1]! : Infinity;
@@ -104,7 +114,9 @@ function gather(profile: Profile, notes: string[]): Gathered {
       );
       break;
     }
-    let dewPoint = specificHumidity === null ? NaN : dewPointOf(specificHumidity[k]!, pressure[k]!);
+    const humidity = specificHumidity === null ? NaN : specificHumidity[k]!;
+    if (humidity >= 0 && humidity < DRIEST) dry++;
+    let dewPoint = dewPointOf(humidity >= 0 ? Math.max(humidity, DRIEST) : NaN, pressure[k]!);
     if (dewPoint > temperature[k]! + SUPERSATURATION) {
       impossible++;
       dewPoint = NaN;
@@ -120,6 +132,7 @@ function gather(profile: Profile, notes: string[]): Gathered {
     count++;
   }
   out.count = count;
+  if (dry > 0) notes.push(`${levels(dry)} without any vapour: taken as ${1e6 * DRIEST} mg/kg.`);
   if (saturated > 0) notes.push(`${levels(saturated)} had a dew point above the temperature: taken as saturated.`);
   if (impossible > 0) {
     notes.push(`${levels(impossible)} had a dew point more than ${SUPERSATURATION} K above the temperature: left out.`);
@@ -165,9 +178,9 @@ function levels(count: number): string {
   return count === 1 ? 'One level' : `${count} levels`;
 }
 
-function whyNoAir(profile: Profile, count: number, moistCount: number): string {
+function whyNoAir(profile: AirLevels, count: number, moistCount: number): string {
   if (profile.temperature === null) return 'The profile has no temperature.';
-  if (profile.pressure === null) return 'The profile has no pressure.';
+  if (profile.noPressure !== '') return profile.noPressure;
   if (count < 2) return 'Fewer than two levels have both pressure and temperature.';
   if (profile.specificHumidity === null || moistCount === 0) return 'The profile has no humidity.';
   if (moistCount < 2) return 'Humidity was measured at one level only.';
@@ -194,6 +207,24 @@ function noteSuperadiabatic(sounding: Omit<Sounding, 'noSurface'>, notes: string
     `The lowest level is ${excess.toFixed(1)} K warmer than air brought down from ${metres(heightAgl[above]!)}: ` +
       'the surface-based parcel may be too warm, the mixed-layer one is safer.',
   );
+}
+
+/** Nothing to lift, and why. */
+export function noSounding(why: string): Sounding {
+  const none = new Float64Array(0);
+  return {
+    count: 0,
+    pressure: none,
+    lnPressure: none,
+    heightAgl: none,
+    temperature: none,
+    dewPoint: none,
+    moistCount: 0,
+    pressureFrom: '',
+    noSurface: why,
+    noAir: why,
+    notes: [],
+  };
 }
 
 /** Where a pressure lies among the levels: index of the level below it, from 0 to count - 2. */

@@ -4,16 +4,18 @@
 import type { Profile } from '../profile/index.ts';
 import { advectionByLayers } from './advection.ts';
 import { effectiveShear, inflowHelicity } from './effective.ts';
+import { airLevelsOf } from './air-levels.ts';
+import { continueAir, continueWind, type AloftSource } from './aloft.ts';
 import { figure, metres, noVector, vectorFigure, type VectorFigure } from './figure.ts';
 import { hodographOf, windAt, type Hodograph } from './hodograph.ts';
-import { inflowOf } from './inflow.ts';
+import { inflowOf, type Inflow } from './inflow.ts';
 import { jetInflow, jetOf, type JetWind } from './jet-wind.ts';
 import { CLOUD_LEVELS, clusterMotion, stormMotion, type StormMotion } from './motion.ts';
 import type { Mover, StormNumbers } from './numbers.ts';
 import { liftParcels } from './parcel.ts';
 import { heightsOfPressures } from './pressure-height.ts';
 import { reasonsOf } from './reasons.ts';
-import { soundingOf, type Sounding } from './sounding.ts';
+import { atLnPressure, noSounding, soundingOf, type Sounding } from './sounding.ts';
 import { equivalentTemperatures, parcelStarts } from './start.ts';
 import { bulkShear, helicity } from './wind-layers.ts';
 
@@ -23,6 +25,10 @@ const WIND_NEAR_GROUND = 50;
 export interface StormOptions {
   /** Where temperature and humidity come from; the profile itself when left out. */
   readonly air?: Profile;
+  /** Why there is no air to go with the wind: then nothing is lifted, and this is told. */
+  readonly noAir?: string;
+  /** A sounding that goes on above the tops of wind and air. */
+  readonly aloft?: Profile;
   /** Storm motion set by hand, m/s eastward and northward: used for helicity and inflow in place of the mover. */
   readonly motion?: { readonly u: number; readonly v: number };
   /** The jet; without one the strongest wind below 1500 m stands for it in the cluster vectors, as Corfidi has it. */
@@ -34,16 +40,35 @@ export interface StormOptions {
  * @param profile the wind; also temperature and humidity unless `options.air` gives another profile
  */
 export function stormOf(profile: Profile, options: StormOptions = {}): StormNumbers {
+  return assessStorm(profile, options).numbers;
+}
+
+/** The numbers with the columns they were reckoned from, for drawing and for trying other motions. */
+export interface StormAssessment {
+  readonly numbers: StormNumbers;
+  /** Wind by height, continued aloft where that was asked for. */
+  readonly hodograph: Hodograph;
+  /** The air that parcels rose through, heights above its own station's ground. */
+  readonly sounding: Sounding;
+}
+
+/** The same as `stormOf`, with the columns. */
+export function assessStorm(profile: Profile, options: StormOptions = {}): StormAssessment {
   const air = options.air ?? profile;
-  const sounding = soundingOf(air);
-  const hodograph = hodographOf(profile);
+  const airAloft = continueAir(
+    air,
+    options.noAir === undefined || options.noAir === '' ? soundingOf(air) : noSounding(options.noAir),
+    options.aloft,
+  );
+  const windAloft = continueWind(profile, hodographOf(profile), options.aloft);
+  const sounding = airAloft.column;
+  const hodograph = windAloft.column;
   const parcels = liftParcels(sounding, parcelStarts(sounding, equivalentTemperatures(sounding)));
   const inflow = inflowOf(sounding);
   const motion = stormMotion(hodograph);
   const prevailing = prevailingAt(profile.station.latitude);
   const { mover, vector } = moverOf(prevailing, motion, options.motion);
   const jet = jetOf(hodograph, options.jet);
-  const inflowWhy = Number.isNaN(inflow.bottom) ? inflow.why : '';
 
   const numbers = {
     parcels,
@@ -54,30 +79,53 @@ export function stormOf(profile: Profile, options: StormOptions = {}): StormNumb
       to6km: bulkShear(hodograph, 6000),
       effective: effectiveShear(hodograph, inflow, parcels),
     },
-    helicity: {
-      mover,
-      prevailing,
-      to1km: helicity(hodograph, 1000, vector),
-      to3km: helicity(hodograph, 3000, vector),
-      effective: inflowWhy === '' ? inflowHelicity(hodograph, inflow, vector) : figure(NaN, inflowWhy),
-    },
+    ...relativeTo(vector, { hodograph, inflow, jet: options.jet }),
+    mover,
+    prevailing,
     motion,
     clusters: {
-      ...clusterMotion(cloudWinds(hodograph, profile, air), jet.wind),
+      ...clusterMotion(cloudWinds(hodograph, profile, air, sounding), jet.wind),
       jet: jet.wind,
       jetFrom: jet.from,
     },
-    jetInflow: jetInflow(hodograph, options.jet, vector),
     advection: advectionByLayers(hodograph, sounding, profile.station.latitude),
   };
   const reasons = reasonsOf(numbers);
   const nothing = hodograph.count === 0 && sounding.noAir !== '';
   return {
-    status: nothing ? 'not-assessable' : reasons.wanting ? 'partly' : 'assessed',
-    why: reasons.why,
-    notes: notesOf(sounding, hodograph),
-    airFrom: { station: air.station.id, timeMs: air.timeMs, ageS: (profile.timeMs - air.timeMs) / 1000 },
-    ...numbers,
+    hodograph,
+    sounding,
+    numbers: {
+      status: nothing ? 'not-assessable' : reasons.wanting ? 'partly' : 'assessed',
+      why: [reasons.why, windAloft.why].filter((why) => why !== '').join(' '),
+      notes: notesOf(sounding, hodograph, airAloft.from, windAloft.from),
+      airFrom: { station: air.station.id, timeMs: air.timeMs, ageS: (profile.timeMs - air.timeMs) / 1000 },
+      windAloft: windAloft.from,
+      airAloft: airAloft.from,
+      ...numbers,
+    },
+  };
+}
+
+/** What helicity and inflow are reckoned from, whatever the motion. */
+export interface RelativeWind {
+  readonly hodograph: Hodograph;
+  readonly inflow: Inflow;
+  readonly jet: JetWind | undefined;
+}
+
+/** Helicity and inflow for a storm that moves so: fast enough to follow a hand that drags the motion. */
+export function relativeTo(
+  motion: VectorFigure,
+  { hodograph, inflow, jet }: RelativeWind,
+): Pick<StormNumbers, 'helicity' | 'jetInflow'> {
+  return {
+    helicity: {
+      to1km: helicity(hodograph, 1000, motion),
+      to3km: helicity(hodograph, 3000, motion),
+      effective: Number.isNaN(inflow.bottom) ? figure(NaN, inflow.why) : inflowHelicity(hodograph, inflow, motion),
+    },
+    jetInflow: jetInflow(hodograph, jet, motion),
   };
 }
 
@@ -98,16 +146,33 @@ function moverOf(
   return { mover: 'unknown', vector: noVector(why) };
 }
 
-function cloudWinds(hodograph: Hodograph, wind: Profile, air: Profile): VectorFigure[] {
+function cloudWinds(hodograph: Hodograph, wind: Profile, air: Profile, sounding: Sounding): VectorFigure[] {
   // Heights above the one station's ground become heights above the other's where both elevations are known.
   const shift = air.station.elevation - wind.station.elevation;
-  return heightsOfPressures(air, CLOUD_LEVELS).map(({ value, why }) =>
-    why === '' ? windAt(hodograph, value + (Number.isNaN(shift) ? 0 : shift)) : noVector(why),
-  );
+  const measured = airLevelsOf(air);
+  // Above the air's own top the sounding that continues it knows the heights.
+  const known = heightsOfPressures(measured, CLOUD_LEVELS);
+  return CLOUD_LEVELS.map((pressure, k) => {
+    const own = known[k]!;
+    const height = own.why === '' ? own.value : atLnPressure(sounding, sounding.heightAgl, Math.log(pressure));
+    return Number.isNaN(height) ? noVector(own.why) : windAt(hodograph, height + (Number.isNaN(shift) ? 0 : shift));
+  });
 }
 
-function notesOf(sounding: Sounding, hodograph: Hodograph): string[] {
+function notesOf(
+  sounding: Sounding,
+  hodograph: Hodograph,
+  airAloft: AloftSource | null,
+  windAloft: AloftSource | null,
+): string[] {
+  const notes = [...sounding.notes];
   const lowest = hodograph.heightAgl[0] ?? 0;
-  if (hodograph.count === 0 || lowest <= WIND_NEAR_GROUND) return [...sounding.notes];
-  return [...sounding.notes, `Shear and helicity reckon from the lowest wind level, ${metres(lowest)} above ground.`];
+  if (hodograph.count > 0 && lowest > WIND_NEAR_GROUND) {
+    notes.push(`Shear and helicity reckon from the lowest wind level, ${metres(lowest)} above ground.`);
+  }
+  const told = (what: string, { above, name, ageS }: AloftSource): string =>
+    `${what} above ${metres(above)} come${what === 'Wind' ? 's' : ''} from ${name}, ${(ageS / 3600).toFixed(1)} h older.`;
+  if (airAloft !== null) notes.push(told('Temperature and humidity', airAloft));
+  if (windAloft !== null) notes.push(told('Wind', windAloft));
+  return notes;
 }

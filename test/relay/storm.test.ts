@@ -46,6 +46,8 @@ describe('storm', () => {
       (await duskveer(['storm', ...options, demo('storm/dry-fork.nc')])).lines()[50]!.srh_0_1km_m2_per_s2;
     expect(await helicity()).toBeNull();
     expect(await helicity('--motion', '10,5')).toEqual(expect.any(Number));
+    // A storm that moves westward: its first number begins like an option.
+    expect(await helicity('--motion', '-3,5')).toEqual(await helicity('--motion=-3,5'));
   });
 
   it.each(['fast', '10,'])('refuses the motion "%s"', async (motion) => {

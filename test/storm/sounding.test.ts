@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { specificHumidityOfDewPoint } from '../../src/air/index.ts';
 import { MARK } from '../../src/profile/index.ts';
 import { soundingOf, stormOf } from '../../src/storm/index.ts';
-import { airLevels, EVENING, profileOf, upTo } from './soundings.ts';
+import { airLevels, EVENING, PLAINS, profileOf, upTo } from './soundings.ts';
 
 const evening = airLevels(EVENING);
 const withColumn = (
@@ -16,7 +16,8 @@ describe('soundingOf with bad input', () => {
   it('says what is missing altogether', () => {
     const wind = profileOf({ heightAgl: [10, 100], u: [1, 2], v: [1, 2] });
     expect(soundingOf(wind).noAir).toMatch(/no temperature/);
-    expect(soundingOf(profileOf({ ...evening, pressure: undefined })).noAir).toMatch(/no pressure/);
+    const nowhere = { ...PLAINS, elevation: NaN };
+    expect(soundingOf(profileOf({ ...evening, pressure: undefined }, nowhere)).noAir).toMatch(/no elevation/);
     expect(soundingOf(profileOf({ ...evening, specificHumidity: undefined })).noAir).toMatch(/no humidity/);
     expect(soundingOf(withColumn('specificHumidity', (q, k) => (k === 0 ? q : NaN))).noAir).toMatch(/one level/);
     expect(soundingOf(withColumn('temperature', (t, k) => (k === 3 ? t : NaN))).noAir).toMatch(/Fewer than two/);
@@ -99,6 +100,35 @@ describe('soundingOf with bad input', () => {
     expect(parcel(profile, 'mixed-layer').cape).toBeNaN();
     expect(parcel(profile, 'most-unstable').cape).toBeGreaterThan(0);
     expect(stormOf(profile).status).toBe('partly');
+  });
+
+  it('works pressure up from the station’s elevation where none was measured, and says so', () => {
+    const measured = stormOf(profileOf(evening));
+    const worked = stormOf(profileOf({ ...evening, pressure: undefined }));
+    expect(worked.notes.join()).toMatch(/standard atmosphere’s at the station’s elevation, 400 m/);
+    // US Standard Atmosphere 1976 at 400 m: 966.1 hPa; the report begins at 960.
+    expect(soundingOf(profileOf({ ...evening, pressure: undefined })).pressure[0]! / 100).toBeCloseTo(966.1, 0);
+    worked.parcels.forEach((one, k) => {
+      expect(one.lclHeight).toBeCloseTo(measured.parcels[k]!.lclHeight, -2);
+      expect(Math.abs(one.cape / measured.parcels[k]!.cape - 1)).toBeLessThan(0.05);
+    });
+    expect(stormOf(profileOf({ ...evening, pressure: undefined })).clusters.cloudLayer.why).toMatch(/No level has/);
+  });
+
+  it('keeps energies within a twentieth when weather has moved the surface pressure by 2 %', () => {
+    const cape = (factor: number): number => {
+      const one = Array.from(evening.pressure!, (p, k) => (k === 0 ? p * factor : NaN));
+      return stormOf(profileOf({ ...evening, pressure: one })).parcels[2]!.cape;
+    };
+    for (const factor of [0.98, 1.02]) expect(Math.abs(cape(factor) / cape(1) - 1)).toBeLessThan(0.05);
+  });
+
+  it('takes a layer without any vapour as dry, not as missing', () => {
+    const profile = withColumn('specificHumidity', (q, k) => (k === 6 || k === 7 ? 0 : q));
+    const sounding = soundingOf(profile);
+    expect(sounding.notes.join()).toMatch(/2 levels without any vapour/);
+    expect(sounding.dewPoint[6]! - 273.15).toBeLessThan(-60);
+    expect(stormOf(profile).parcels.every((one) => Number.isFinite(one.cape))).toBe(true);
   });
 
   it('begins where humidity begins', () => {

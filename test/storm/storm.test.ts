@@ -122,12 +122,12 @@ describe('stormOf', () => {
   it('takes the right mover in the north, the left one in the south, and the motion given above both', () => {
     const north = stormOf(profileOf(fullLevels(MIDNIGHT)));
     const south = stormOf(profileOf(fullLevels(MIDNIGHT, -1), SOUTH));
-    expect(north.helicity.mover).toBe('right');
-    expect(south.helicity.mover).toBe('left');
+    expect(north.mover).toBe('right');
+    expect(south.mover).toBe('left');
     expect(north.helicity.to3km.value).toBeGreaterThan(0);
     expect(south.helicity.to3km.value).toBeLessThan(0);
     const given = stormOf(profileOf(fullLevels(MIDNIGHT)), { motion: { u: 0, v: 0 } });
-    expect(given.helicity.mover).toBe('given');
+    expect(given.mover).toBe('given');
     expect(given.helicity.to3km.value).not.toBeCloseTo(north.helicity.to3km.value, 0);
   });
 
