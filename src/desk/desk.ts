@@ -31,6 +31,7 @@ import { archiveOf, type ArchiveView } from './archive/view.ts';
 import { farmThrough, type DiscSeries, type FarmState } from './farm.ts';
 import type { FeedName } from './feed-name.ts';
 import { FeedStore, type Acceptance } from './feed-store.ts';
+import { inflowState, windTooOld, type InflowQuestion, type InflowState, type NoInflow } from './inflow.ts';
 import { nightWindow, type NightWindow } from './night-window.ts';
 import { siteDiscWind } from './site-disc.ts';
 
@@ -85,6 +86,8 @@ interface Screened {
 
 /** Screens look at neighbours: so much of the time before a night is given to them, ms. */
 const LEAD_MS = 3 * 3_600_000;
+/** Air older than this is never lent, ms: soundings are twelve hours apart, and a day says whether one was missed. */
+const LENT_MS = 24 * 3_600_000;
 
 export class Desk {
   readonly site: Site;
@@ -178,6 +181,23 @@ export class Desk {
       farm: farmThrough({ site: this.site, timeMs, profiles, discs, tracks, sunriseMs }),
       moisture: profiles.map((profile, k) => moistureOf(profile, { jetLayer: coreOf(findings[k]!) })),
     };
+  }
+
+  /** What storms get of the air at a moment, of nothing later; null where there is no such feed or no profile yet. */
+  inflow(atMs: number, { feed: key, criteria, oldestAirS }: InflowQuestion): InflowState | NoInflow | null {
+    const raw = this.#store.block(key);
+    const feed = this.#store.names().find((name) => name.key === key);
+    const newest = raw === null ? 0 : countUntil(raw.timeMs, atMs);
+    if (raw === null || feed === undefined || newest === 0) return null;
+    const { startMs } = nightWindow(atMs, feed.station, raw.timeMs);
+    const screened = this.#screenedNight(key, raw, Math.min(startMs, raw.timeMs[newest - 1]!), atMs);
+    const index = screened.block.profileCount - 1;
+    const wind = profileAt(screened.block, index);
+    const why = windTooOld(wind, atMs);
+    if (why !== '') return { atMs, feed, why };
+    const finding = this.#finding(screened, index, criteriaOf(criteria ?? this.site.criteria));
+    const sources = this.airSources(wind.timeMs - LENT_MS, wind.timeMs);
+    return inflowState(atMs, { feed, wind, finding, sources, oldestAirS });
   }
 
   /**

@@ -45,3 +45,4 @@ export {
   type ArchiveTableKind,
   type TableCell,
 } from './archive/read-tables.ts';
+export type { AirColumns, AirUse, DrawnTrace, InflowQuestion, InflowState, NoInflow } from './inflow.ts';

@@ -1,13 +1,11 @@
 // Wind from one instrument, temperature and humidity from another: the profiler now, the sounding of the evening.
 
+import { OLDEST_HUMIDITY_S } from '../moisture/index.ts';
 import type { Profile } from '../profile/index.ts';
 import { soundingOf } from './sounding.ts';
 
-/** Older air than this says little of the air now, s: soundings are flown every 12 hours. */
-const OLDEST_S = 12 * 3600;
-
 export interface JoinOptions {
-  /** s; air measured longer ago is not used. */
+  /** s; air measured longer ago is not used. Unless told, as for the moisture it carries: 13 h. */
   readonly oldestS: number;
 }
 
@@ -30,7 +28,7 @@ export function joinWindAndAir(
   candidates: Iterable<Profile>,
   options: Partial<JoinOptions> = {},
 ): WindAndAir {
-  const oldestS = options.oldestS ?? OLDEST_S;
+  const oldestS = options.oldestS ?? OLDEST_HUMIDITY_S;
   if (isAir(wind)) return { wind, air: wind, airAgeS: 0, why: '' };
   const earlier = [...candidates]
     .filter((profile) => profile.timeMs <= wind.timeMs)
