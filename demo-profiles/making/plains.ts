@@ -3,6 +3,7 @@
 import { columnWinds, windFrom, type Wind } from './air-column.ts';
 import type { AtmospherePlan } from './atmosphere.ts';
 import { at, everyMinutes, ramp, spell } from './clock.ts';
+import { farmOutputCsv } from './farm-output.ts';
 import { mastCsv } from './mast.ts';
 import { demoNight, siteFileStation, type DemoNight } from './night.ts';
 import { profilerFile } from './profiler-file.ts';
@@ -19,20 +20,44 @@ const SECOND_DUSK = at('2024-05-23T00:45Z');
 const SECOND_DAWN = at('2024-05-23T11:23Z');
 const HOUR = 3_600_000;
 
+/** Height of the jet's core in the pressure wind, and the scale of the friction layer below it, m. */
+const CORE = 260;
+const FRICTION = 165;
+/** After midnight the air over the ridge sinks by so much aloft, m, between these times. */
+const SINKING = 390;
+const SINKS_FROM = at('2024-05-22T07:10Z');
+const SINKS_UNTIL = at('2024-05-22T08:40Z');
+
 /** A south-south-westerly with its core a few hundred metres up, as over ground that slopes; it dies on the second day. */
 function pressureWind(heightAgl: number, timeMs: number): Wind {
-  const aboveCore = Math.max(0, heightAgl - 320) / 680;
-  const belowCore = Math.max(0, 320 - heightAgl) / 900;
-  const shape = 7.2 + 7.8 * Math.exp(-Math.pow(aboveCore, 1.6)) - 2 * belowCore + 1.6 * ramp(heightAgl, 1800, 4000);
-  const strength = 1 - 0.86 * ramp(timeMs, FIRST_DAWN + 2 * HOUR, SECOND_DUSK - 3 * HOUR);
-  return windFrom(shape * strength, 196 + 16 * Math.min(2.5, heightAgl / 1000));
+  const aboveCore = Math.max(0, heightAgl - CORE) / 620;
+  const belowCore = Math.max(0, CORE - heightAgl) / 900;
+  const shape = 4.4 + 12 * Math.exp(-Math.pow(aboveCore, 1.6)) - 2 * belowCore + 1.6 * ramp(heightAgl, 1800, 4000);
+  const strength = 0.53 * (1 - 0.78 * ramp(timeMs, FIRST_DAWN + 2 * HOUR, SECOND_DUSK - 3 * HOUR));
+  return windFrom(shape * strength, 202 + 6 * Math.min(2.5, heightAgl / 1000));
 }
 
 function mixedDepth(timeMs: number): number {
   if (timeMs < FIRST_DUSK) return 1750;
   if (timeMs < FIRST_DAWN + HOUR) return 0;
-  if (timeMs < SECOND_DUSK) return 1800 * ramp(timeMs, FIRST_DAWN, FIRST_DAWN + 8 * HOUR);
+  if (timeMs < SECOND_DUSK) return 1800 * ramp(timeMs, FIRST_DAWN, FIRST_DAWN + 6 * HOUR);
   return 0;
+}
+
+/** What blows at a height after the sinking blew at the height returned; the lowest air stays where it is. */
+function heightBefore(heightAgl: number, timeMs: number): number {
+  const stirred = ramp(timeMs, FIRST_DAWN + HOUR, FIRST_DAWN + 4 * HOUR);
+  const sunk = SINKING * ramp(timeMs, SINKS_FROM, SINKS_UNTIL) * (1 - stirred);
+  return heightAgl + sunk * (1 - Math.exp(-Math.pow(heightAgl / 150, 2.4)));
+}
+
+function* winds(timesMs: readonly number[]): Generator<(heightAgl: number) => Wind> {
+  const column = columnWinds({ latitude: PLACE.latitude, pressureWind, mixedDepth, frictionDepth: FRICTION }, timesMs);
+  let index = 0;
+  for (const windAt of column) {
+    const timeMs = timesMs[index++]!;
+    yield (heightAgl) => windAt(heightBefore(heightAgl, timeMs));
+  }
 }
 
 /** Hours since dusk, while it is night. */
@@ -48,7 +73,7 @@ function stillCool(timeMs: number): number {
 
 const ATMOSPHERE: AtmospherePlan = {
   seed: 862001,
-  winds: (timesMs) => columnWinds({ latitude: PLACE.latitude, pressureWind, mixedDepth, frictionDepth: 105 }, timesMs),
+  winds,
   convection: (timeMs) => Math.min(1, mixedDepth(timeMs) / 500),
   surfacePressure: 93_900,
   mixedTheta: 305.5,
@@ -93,14 +118,14 @@ const SITE = {
       },
     },
     {
-      name: 'Dunlin 112',
-      count: 20,
-      hub_height_m: 88,
-      rotor_diameter_m: 112,
+      name: 'Curlew 164',
+      count: 16,
+      hub_height_m: 125,
+      rotor_diameter_m: 164,
       power_curve: {
         air_density_kg_per_m3: 1.225,
         speed_mps: [3, 4, 5, 6, 7, 8, 9, 10, 11, 12, 13, 25],
-        power_kw: [20, 95, 235, 445, 735, 1115, 1560, 1990, 2310, 2450, 2500, 2500],
+        power_kw: [70, 270, 610, 1110, 1800, 2720, 3850, 4950, 5650, 5930, 6000, 6000],
       },
     },
   ],
@@ -108,7 +133,10 @@ const SITE = {
     { name: 'Blade lifts', kind: 'lifting', height_m: 105, speed_mps: 10 },
     { name: 'Climbing', kind: 'climbing', height_m: 105, speed_mps: 15 },
   ],
-  ramps: [{ name: '30 % within an hour', share: 0.3, within_minutes: 60 }],
+  ramps: [
+    { name: '30 % within an hour', share: 0.3, within_minutes: 60 },
+    { name: '20 % within half an hour', share: 0.2, within_minutes: 30 },
+  ],
   units: { speed: 'm/s', height: 'm' },
 };
 
@@ -133,7 +161,7 @@ export function plains(): DemoNight {
     {
       id: 'plains',
       title: 'Larkmoor Ridge: a jet over the plains, and a calm night after it',
-      now: '2024-05-22T08:40:00Z',
+      now: '2024-05-22T09:06:00Z',
     },
     SITE,
     {
@@ -153,6 +181,16 @@ export function plains(): DemoNight {
       }),
       'tern-hollow-evening.csv': sounding(862004, '2024-05-21T23:30Z'),
       'tern-hollow-midnight.csv': sounding(862005, '2024-05-22T05:30Z'),
+    },
+    {
+      'larkmoor-output.csv': farmOutputCsv(ATMOSPHERE, {
+        seed: 862006,
+        types: SITE.turbines,
+        timesMs: everyMinutes(10, START, END),
+        share: 0.91,
+        standing: { count: 4, during: spell('2024-05-22T05:10Z', '2024-05-22T06:40Z') },
+        gaps: [spell('2024-05-22T02:30Z', '2024-05-22T02:50Z')],
+      }),
     },
   );
 }

@@ -28,8 +28,10 @@ export { joinProfiles, type Join, type JoinedProfile, type KnownDisagreement } f
 export { LOADS_CAUTION, timeInState, watchLoads, type LoadState, type TimeInState } from './loads.ts';
 export { normalisePower, normaliseSpeed, powerFromCurve } from './power.ts';
 export {
+  causeInWords,
   causesOfRamp,
   rampInWords,
+  type ClockWords,
   type NoseTrack,
   type RampCause,
   type RampCauseName,

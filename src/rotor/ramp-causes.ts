@@ -22,8 +22,12 @@ export interface RampCause {
   readonly cause: RampCauseName;
   /** 0 to 1: how firmly the evidence speaks for it. Our own ordering, no probability. */
   readonly weight: number;
-  readonly words: string;
+  /** For people, in pieces: a number is a moment, UTC ms, to be put on the reader's clock. */
+  readonly pieces: readonly (string | number)[];
 }
+
+/** A moment on somebody's clock, in words. */
+export type ClockWords = (timeMs: number) => string;
 
 /** The nose of one jet through time, as the tracks of the jet room tell it. */
 export type NoseTrack = Pick<JetTrack, 'beganMs' | 'endedMs'> & {
@@ -45,6 +49,8 @@ const MINUTE = 60_000;
 /** The forming of a jet and sunrise are felt at the hub with delay: looked for so long before a ramp. Our own choices. */
 const ONSET_BEFORE = 90 * MINUTE;
 const SUNRISE_BEFORE = 240 * MINUTE;
+/** The end of a jet aloft is felt at the hub as mixing reaches down: looked for so long before a ramp. */
+const END_BEFORE = 60 * MINUTE;
 /** The nose is compared from so long before the ramp's begin. */
 const NOSE_BEFORE = 20 * MINUTE;
 /** A turn of the hub's wind this large, degrees, is a shift; twice this speaks for it fully. */
@@ -54,7 +60,7 @@ const DECAY = 2;
 
 /**
  * Causes of a ramp, the firmest first; `unknown` alone where no evidence speaks.
- * @example causesOfRamp(ramp, evidence)[0].words
+ * @example causeInWords(causesOfRamp(ramp, evidence)[0])
  */
 export function causesOfRamp(ramp: Ramp, evidence: RampEvidence): RampCause[] {
   const found = [
@@ -67,15 +73,20 @@ export function causesOfRamp(ramp: Ramp, evidence: RampEvidence): RampCause[] {
     ...shift(ramp, evidence),
     ...change(ramp, evidence),
   ].sort((a, b) => b.weight - a.weight);
-  return found.length > 0 ? found : [{ cause: 'unknown', weight: 0, words: 'nothing measured here explains it' }];
+  return found.length > 0 ? found : [{ cause: 'unknown', weight: 0, pieces: ['nothing measured here explains it'] }];
+}
+
+/** `the jet formed at 21:40 UTC` */
+export function causeInWords({ pieces }: RampCause, clock: ClockWords = utcClock): string {
+  return pieces.map((piece) => (typeof piece === 'number' ? clock(piece) : piece)).join('');
 }
 
 /** The ramp and its firmest cause in one sentence. */
-export function rampInWords(ramp: Ramp, causes: readonly RampCause[]): string {
+export function rampInWords(ramp: Ramp, causes: readonly RampCause[], clock: ClockWords = utcClock): string {
   const minutes = Math.round((ramp.endMs - ramp.startMs) / MINUTE);
   const moved = ramp.sense === 'up' ? 'rose' : 'fell';
   const size = `${Math.abs(ramp.changeKw / 1000).toFixed(1)} MW (${Math.round(100 * Math.abs(ramp.changeShare))} % of capacity)`;
-  return `Output ${moved} by ${size} in ${minutes} min from ${clock(ramp.startMs)}: ${causes[0]!.words}.`;
+  return `Output ${moved} by ${size} in ${minutes} min from ${clock(ramp.startMs)}: ${causeInWords(causes[0]!, clock)}.`;
 }
 
 function stops(ramp: Ramp, { timeMs, state }: RampEvidence): RampCause[] {
@@ -84,10 +95,10 @@ function stops(ramp: Ramp, { timeMs, state }: RampEvidence): RampCause[] {
   const stopped = (k: number): boolean => state[k] === wanted;
   for (let k = from + 1; k <= to; k++) {
     if (ramp.sense === 'down' && stopped(k) && !stopped(k - 1)) {
-      return [{ cause: 'shutdown', weight: 1, words: `high-wind shutdown at ${clock(timeMs[k]!)}` }];
+      return [{ cause: 'shutdown', weight: 1, pieces: ['high-wind shutdown at ', timeMs[k]!] }];
     }
     if (ramp.sense === 'up' && !stopped(k) && stopped(k - 1)) {
-      return [{ cause: 'restart', weight: 1, words: `restart after high wind at ${clock(timeMs[k]!)}` }];
+      return [{ cause: 'restart', weight: 1, pieces: ['restart after high wind at ', timeMs[k]!] }];
     }
   }
   return [];
@@ -95,7 +106,7 @@ function stops(ramp: Ramp, { timeMs, state }: RampEvidence): RampCause[] {
 
 function onset(ramp: Ramp, track: NoseTrack): RampCause[] {
   if (ramp.sense !== 'up' || track.beganMs < ramp.startMs - ONSET_BEFORE || track.beganMs > ramp.endMs) return [];
-  return [{ cause: 'jet-onset', weight: 0.8, words: `the jet formed at ${clock(track.beganMs)}` }];
+  return [{ cause: 'jet-onset', weight: 0.8, pieces: ['the jet formed at ', track.beganMs] }];
 }
 
 /** The nose moving through a tip or through the hub between shortly before the ramp and its end. */
@@ -115,7 +126,7 @@ function crossing(ramp: Ramp, track: NoseTrack, disc: Disc): RampCause[] {
     {
       cause: descends ? 'nose-descends' : 'nose-rises',
       weight: 0.9,
-      words: `the nose ${descends ? 'came down' : 'rose'} through ${through} (${heights})`,
+      pieces: [`the nose ${descends ? 'came down' : 'rose'} through ${through} (${heights})`],
     },
   ];
 }
@@ -125,20 +136,20 @@ function decay(ramp: Ramp, track: NoseTrack, sunrisesMs: readonly number[]): Ram
   const before = pointBefore(track, ramp.startMs);
   const lost = before === undefined ? 0 : before.noseSpeed - pointBefore(track, ramp.endMs)!.noseSpeed;
   const endedMs = track.endedMs ?? Infinity;
-  const ended = endedMs >= ramp.startMs - NOSE_BEFORE && endedMs <= ramp.endMs + NOSE_BEFORE;
+  const ended = endedMs >= ramp.startMs - END_BEFORE && endedMs <= ramp.endMs + NOSE_BEFORE;
   if (!ended && !(lost >= DECAY)) return [];
-  const how = ended ? `the jet ended at ${clock(endedMs)}` : `the jet's nose lost ${lost.toFixed(1)} m/s`;
+  const how = ended ? ['the jet ended at ', endedMs] : [`the jet's nose lost ${lost.toFixed(1)} m/s`];
   const sunrise = sunrisesMs.find((at) => at <= ramp.endMs && at >= ramp.startMs - SUNRISE_BEFORE);
-  if (sunrise === undefined) return [{ cause: 'jet-decay', weight: 0.7, words: how }];
-  return [{ cause: 'jet-decay', weight: 0.85, words: `${how}, after sunrise at ${clock(sunrise)}` }];
+  if (sunrise === undefined) return [{ cause: 'jet-decay', weight: 0.7, pieces: how }];
+  return [{ cause: 'jet-decay', weight: 0.85, pieces: [...how, ', after sunrise at ', sunrise] }];
 }
 
 function shift(ramp: Ramp, { timeMs, hubDirection }: RampEvidence): RampCause[] {
   const [from, to] = [indexBefore(timeMs, ramp.startMs), indexBefore(timeMs, ramp.endMs)];
   const turn = from < 0 ? NaN : veerBetween(hubDirection[from]!, hubDirection[to]!);
   if (!(Math.abs(turn) >= SHIFT)) return [];
-  const words = `the wind at hub height ${turn > 0 ? 'veered' : 'backed'} by ${Math.round(Math.abs(turn))}°`;
-  return [{ cause: 'wind-shift', weight: Math.min(0.95, Math.abs(turn) / (2 * SHIFT)), words }];
+  const pieces = [`the wind at hub height ${turn > 0 ? 'veered' : 'backed'} by ${Math.round(Math.abs(turn))}°`];
+  return [{ cause: 'wind-shift', weight: Math.min(0.95, Math.abs(turn) / (2 * SHIFT)), pieces }];
 }
 
 function change(ramp: Ramp, { timeMs, hubSpeed }: RampEvidence): RampCause[] {
@@ -146,8 +157,8 @@ function change(ramp: Ramp, { timeMs, hubSpeed }: RampEvidence): RampCause[] {
   const gained = from < 0 ? NaN : hubSpeed[to]! - hubSpeed[from]!;
   const rises = ramp.sense === 'up';
   if (!(rises ? gained > 0 : gained < 0)) return [];
-  const words = `the wind at hub height ${rises ? 'rose' : 'fell'} by ${Math.abs(gained).toFixed(1)} m/s`;
-  return [{ cause: rises ? 'wind-rises' : 'wind-falls', weight: 0.3, words }];
+  const pieces = [`the wind at hub height ${rises ? 'rose' : 'fell'} by ${Math.abs(gained).toFixed(1)} m/s`];
+  return [{ cause: rises ? 'wind-rises' : 'wind-falls', weight: 0.3, pieces }];
 }
 
 function pointBefore(track: NoseTrack, atMs: number): NoseTrack['points'][number] | undefined {
@@ -161,6 +172,6 @@ function indexBefore(timeMs: ArrayLike<number>, atMs: number): number {
   return index;
 }
 
-function clock(timeMs: number): string {
+function utcClock(timeMs: number): string {
   return `${new Date(timeMs).toISOString().slice(11, 16)} UTC`;
 }

@@ -3,7 +3,7 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { describe, expect, it } from 'vitest';
 import { demoFiles } from '../../demo-profiles/generate.ts';
-import { bytesSource, readProfiles } from '../../src/ingest/index.ts';
+import { bytesSource, readOutputSeries, readProfiles } from '../../src/ingest/index.ts';
 import { readSite, siteStation } from '../../src/site/index.ts';
 
 const folder = fileURLToPath(new URL('../../demo-profiles/', import.meta.url));
@@ -31,7 +31,7 @@ describe('the demo', () => {
 
   interface Manifest {
     readonly opens: string;
-    readonly nights: { id: string; site: string; files: string[]; now: string }[];
+    readonly nights: { id: string; site: string; files: string[]; outputs?: string[]; now: string }[];
   }
   const text = (path: string): string => new TextDecoder().decode(made.get(path));
   const manifest = JSON.parse(text('manifest.json')) as Manifest;
@@ -51,6 +51,12 @@ describe('the demo', () => {
         for (const station of reading.block.stations) expect(siteStation(site!, station.id), path).toBeDefined();
       }
       expect(profiles, path).toBeGreaterThan(0);
+    }
+    for (const path of night.outputs ?? []) {
+      const { timeMs, powerKw, problems, notes } = readOutputSeries(path, text(path));
+      expect([...problems, ...notes], path).toEqual([]);
+      expect(timeMs.length, path).toBeGreaterThan(100);
+      expect(Math.max(...powerKw), path).toBeGreaterThan(10_000);
     }
     expect(Date.parse(night.now)).not.toBeNaN();
   });

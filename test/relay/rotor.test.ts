@@ -12,8 +12,10 @@ describe('rotor', () => {
       'station time turbine status why coverage hub_speed_mps hub_direction_deg rews_mps rews_veer_mps shear_exponent ' +
         'veer_deg nose_in_rotor air_density_kg_per_m3 power_kw power_equivalent_kw',
     );
-    // Lowest gate 30 m, lower tip 35 m: the disc is covered whole; the nose stands above it.
-    expect(line).toMatchObject({ status: 'ok', why: '', coverage: 1, nose_in_rotor: false, power_kw: null });
+    // Lowest gate 30 m, lower tip 35 m: the disc is covered whole; the nose has come down into it (demo-profiles/README.md).
+    expect(line).toMatchObject({ status: 'ok', why: '', coverage: 1, nose_in_rotor: true, power_kw: null });
+    const before = ran.lines().find((candidate) => candidate.time === '2024-05-22T06:00:00Z')!;
+    expect(before).toMatchObject({ status: 'ok', nose_in_rotor: false });
     expect(line.veer_deg).toEqual(expect.any(Number));
   });
 

@@ -1,5 +1,12 @@
 import { describe, expect, it } from 'vitest';
-import { causesOfRamp, rampInWords, type NoseTrack, type Ramp, type RampEvidence } from '../../src/rotor/index.ts';
+import {
+  causeInWords,
+  causesOfRamp,
+  rampInWords,
+  type NoseTrack,
+  type Ramp,
+  type RampEvidence,
+} from '../../src/rotor/index.ts';
 
 const MINUTE = 60_000;
 const START = Date.UTC(2031, 6, 14, 22, 0);
@@ -32,8 +39,10 @@ const track = (
   points: times.map((timeMs, k) => ({ timeMs, noseHeight: noseHeight(k), noseSpeed: noseSpeed(k) })),
   ...more,
 });
-const firmest = (sense: 'up' | 'down', evidence: Partial<RampEvidence>) =>
-  causesOfRamp(ramp(sense), { ...still, ...evidence })[0]!;
+const firmest = (sense: 'up' | 'down', evidence: Partial<RampEvidence>): { cause: string; words: string } => {
+  const [first] = causesOfRamp(ramp(sense), { ...still, ...evidence });
+  return { cause: first!.cause, words: causeInWords(first!) };
+};
 
 describe('causesOfRamp', () => {
   it('names a high-wind shutdown and a restart before all else', () => {
@@ -85,6 +94,11 @@ describe('causesOfRamp', () => {
       { endedMs: START + 30 * MINUTE },
     );
     expect(firmest('down', { tracks: [ended], sunrisesMs }).words).toContain('the jet ended at 22:30 UTC');
+    // Mixing takes a while from the nose down to the hub.
+    const gone = { ...ended, endedMs: START - 40 * MINUTE };
+    expect(firmest('down', { tracks: [gone], sunrisesMs }).words).toContain('the jet ended at 21:20 UTC');
+    const longGone = { ...ended, endedMs: START - 80 * MINUTE };
+    expect(firmest('down', { tracks: [longGone], sunrisesMs }).cause).toBe('unknown');
   });
 
   it('names a wind shift through north, and a plain change of wind', () => {
@@ -101,16 +115,18 @@ describe('causesOfRamp', () => {
 
   it('says so when nothing explains it', () => {
     expect(causesOfRamp(ramp('up'), still)).toEqual([
-      { cause: 'unknown', weight: 0, words: 'nothing measured here explains it' },
+      { cause: 'unknown', weight: 0, pieces: ['nothing measured here explains it'] },
     ]);
   });
 });
 
 describe('rampInWords', () => {
   it('is one sentence with size, share, time and cause', () => {
-    const causes = [{ cause: 'jet-onset', weight: 0.8, words: 'the jet formed at 21:40 UTC' } as const];
+    const causes = [{ cause: 'jet-onset', weight: 0.8, pieces: ['the jet formed at ', START - 20 * MINUTE] } as const];
     expect(rampInWords(ramp('up'), causes)).toBe(
       'Output rose by 12.3 MW (41 % of capacity) in 60 min from 22:00 UTC: the jet formed at 21:40 UTC.',
     );
+    const site = (timeMs: number): string => new Date(timeMs - 360 * MINUTE).toISOString().slice(11, 16);
+    expect(rampInWords(ramp('up'), causes, site)).toMatch(/from 16:00: the jet formed at 15:40\.$/);
   });
 });

@@ -8,6 +8,8 @@ export interface DemoNight {
   /** Paths below the demo's folder. */
   readonly site: string;
   readonly files: readonly string[];
+  /** Files with a farm's actual output. */
+  readonly outputs?: readonly string[];
   /** The moment at which the night opens, ISO 8601. */
   readonly now: string;
 }
