@@ -7,6 +7,7 @@ import { csvTable } from './csv/format.ts';
 import type { FileFormat } from './format.ts';
 import { igra } from './igra/format.ts';
 import { netcdf4, netcdfClassic } from './netcdf/formats.ts';
+import { stationListFormat } from './stations/format.ts';
 import { tempPilot } from './temp-pilot/format.ts';
 
 export const FORMATS: readonly FileFormat[] = [
@@ -16,6 +17,7 @@ export const FORMATS: readonly FileFormat[] = [
   coverageJson,
   tempPilot,
   igra,
+  stationListFormat,
   // Whatever looks like a table and is nothing else.
   csvTable,
 ];

@@ -109,7 +109,7 @@ class MessageReader {
     if (header.reports === 0) throw damaged('The message says that it holds no report.');
     const context = {
       source: this.#source,
-      site: this.#options.site,
+      known: this.#options,
       headerTimeMs: header.timeMs,
       revision: header.revision,
     };

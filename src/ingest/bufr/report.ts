@@ -1,7 +1,7 @@
 // What a report says of itself: where, when and with what it was measured.
 
-import { unplacedStation, type Instrument, type Station } from '../../profile/index.ts';
-import { siteStation, type Site } from '../../site/index.ts';
+import type { Instrument, Station } from '../../profile/index.ts';
+import { firstKnown, stationBySite, type KnownStations } from '../site-station.ts';
 import type { Program } from './program.ts';
 import { FIRST_OF_LEVEL, ROLE } from './roles.ts';
 
@@ -70,20 +70,20 @@ export class ReportHeader {
   }
 
   /**
-   * The station, as the site file knows it where it does.
+   * The station, as the site file or the station list knows it where they do.
    * @param surfaceHeight stands in for an elevation that nobody states, m; NaN: none
    */
-  station(site: Site, surfaceHeight: number): Station {
+  station(known: KnownStations, surfaceHeight: number): Station {
     const ids = this.#identifiers();
-    const told = unplacedStation(ids[0] ?? 'unnamed');
-    const name = this.#text(ROLE.stationName) || ids.find((id) => id.includes('-')) || told.name;
-    const known = ids.map((id) => siteStation(site, id)).find((station) => station !== undefined);
+    const id = ids[0] ?? 'unnamed';
+    const [latitude, longitude] = [this.#value[ROLE.latitude]!, this.#value[ROLE.longitude]!];
+    const told = { id, name: this.#text(ROLE.stationName) || id, latitude, longitude, elevation: this.elevation };
+    const station = stationBySite(known, told, ids);
+    const wigos = ids.find((each) => each.includes('-'));
     return {
-      id: known?.id ?? told.id,
-      name: known?.name ?? name,
-      latitude: firstKnown(known?.latitude, this.#value[ROLE.latitude]),
-      longitude: firstKnown(known?.longitude, this.#value[ROLE.longitude]),
-      elevation: firstKnown(known?.elevation, this.elevation, surfaceHeight),
+      ...station,
+      name: station.name === id && wigos !== undefined ? wigos : station.name,
+      elevation: firstKnown(station.elevation, surfaceHeight),
     };
   }
 
@@ -143,9 +143,4 @@ export class ReportHeader {
     if (flight !== '') ids.push(flight);
     return ids;
   }
-}
-
-function firstKnown(...values: readonly (number | undefined)[]): number {
-  for (const value of values) if (value !== undefined && !Number.isNaN(value)) return value;
-  return NaN;
 }

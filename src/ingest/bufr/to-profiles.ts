@@ -2,7 +2,7 @@
 // measured values is said of the report, what stands inside is said of a level.
 
 import type { BlockBuilder } from '../../profile/index.ts';
-import type { Site } from '../../site/index.ts';
+import type { KnownStations } from '../site-station.ts';
 import { SAID, type Elements } from './elements.ts';
 import { LevelGatherer } from './levels.ts';
 import type { Program } from './program.ts';
@@ -11,7 +11,7 @@ import { FIRST_OF_LEVEL, LAST_COORDINATE, ROLE } from './roles.ts';
 
 export interface MessageContext {
   readonly source: string;
-  readonly site: Site;
+  readonly known: KnownStations;
   /** Header time of the message, UTC ms: used where the report gives none. */
   readonly headerTimeMs: number;
   readonly revision: number;
@@ -64,7 +64,7 @@ export class ProfileMaker {
   #finish(program: Program, context: MessageContext, builder: BlockBuilder): void {
     const levels = this.#levels;
     const header = this.#header;
-    const station = header.station(context.site, levels.surfaceHeight);
+    const station = header.station(context.known, levels.surfaceHeight);
     const { timeMs, periodS } = header.time();
     const notes: string[] = [];
     if (Number.isNaN(timeMs))

@@ -3,7 +3,7 @@
 import { parseUnit, type ParsedUnit, type Problem } from '../../air/index.ts';
 import { INSTRUMENTS, type Instrument, type ProfileBlock, type Station } from '../../profile/index.ts';
 import { siteStation, type Site } from '../../site/index.ts';
-import { stationBySite } from '../site-station.ts';
+import { stationBySite, type KnownStations } from '../site-station.ts';
 import { assumedUnit } from './assumed-units.ts';
 import { isFill, numberIn, saysMissing } from './cells.ts';
 import type { LevelMeaning } from './headings.ts';
@@ -25,7 +25,7 @@ export class Collector {
   readonly #table: Table;
   readonly #plan: Plan;
   readonly #time: RowTime;
-  readonly #site: Site;
+  readonly #known: KnownStations;
   readonly #source: string;
   readonly #fileStation: string;
   readonly #store: LevelStore;
@@ -45,11 +45,11 @@ export class Collector {
   #rows = 0;
   readonly #stations = new Map<string, Station>();
 
-  constructor(table: Table, plan: Plan, time: RowTime, site: Site, source: string, fileStation: string) {
+  constructor(table: Table, plan: Plan, time: RowTime, known: KnownStations, source: string, fileStation: string) {
     this.#table = table;
     this.#plan = plan;
     this.#time = time;
-    this.#site = site;
+    this.#known = known;
     this.#source = source;
     this.#fileStation = fileStation;
     this.#store = new LevelStore([
@@ -166,7 +166,7 @@ export class Collector {
         !(Math.abs(latitude) <= 90 || Number.isNaN(latitude)) ||
         !(Math.abs(longitude) <= 360 || Number.isNaN(longitude));
       if (wrong) this.#unreadable.position(id);
-      station = stationBySite(this.#site, {
+      station = stationBySite(this.#known, {
         id,
         name: text('name') || id,
         latitude: wrong ? NaN : latitude,
@@ -182,7 +182,7 @@ export class Collector {
     const cell = this.#plan.once.instrument;
     const said = ((cell === undefined ? this.#table.stated.instrument : row[cell]) ?? '').trim().toLowerCase();
     const named = INSTRUMENTS.find((instrument) => instrument === said.replace(/[\s_]/gu, '-'));
-    return siteStation(this.#site, station.id)?.instrument ?? named ?? 'unknown';
+    return siteStation(this.#known.site, station.id)?.instrument ?? named ?? 'unknown';
   }
 
   /** A number that stands once a profile, in its unit or the common one; NaN where there is none. */
@@ -226,7 +226,7 @@ export class Collector {
       if (words !== '') taken.push(words);
     }
     if (this.#plan.layout === 'wide') units.set('heightAgl', parseUnit('m')!);
-    const notes = [...this.#plan.notes, ...timeNotes(this.#time, this.#plan, this.#site)];
+    const notes = [...this.#plan.notes, ...timeNotes(this.#time, this.#plan, this.#known.site)];
     if (taken.length > 0) notes.push(`Units not stated, taken from the values: ${taken.join(', ')}.`);
     this.#notes = notes;
     return units;

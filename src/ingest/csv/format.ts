@@ -31,7 +31,7 @@ async function* readTable(
   const problems: Problem[] = [];
   const plan = planOf(table, source.name, problems);
   const time = new RowTime(plan.once, site.fileTimeZone, monthFirst(table, plan.once.date ?? plan.once.time));
-  const collector = new Collector(table, plan, time, site, source.name, stationOfFileName(source.name));
+  const collector = new Collector(table, plan, time, options, source.name, stationOfFileName(source.name));
   let any = false;
   try {
     for await (const rows of rowsOf(source, table, options.signal, problems)) {

@@ -71,7 +71,8 @@ const SPELLINGS: Readonly<Record<Meaning, string>> = {
   minute: 'minute min_',
   second: 'second',
   period: 'period averagingperiod averagingtime',
-  station: 'station stationid site siteid stationname sitename stn id location wmo wmoid platform station_',
+  station:
+    'station stationid site siteid stationname sitename stn id identifier stationidentifier location wmo wmoid wmonumber wigos wigosid wigosstationidentifier callsign platform station_',
   name: 'name',
   latitude: 'latitude lat stationlatitude',
   longitude: 'longitude lon long lng stationlongitude',

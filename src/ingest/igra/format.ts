@@ -3,7 +3,6 @@
 
 import { throwIfCancelled, type Problem } from '../../air/index.ts';
 import { concatBlocks, type Station } from '../../profile/index.ts';
-import { siteStation } from '../../site/index.ts';
 import type { FileFormat, Reading, ReadOptions } from '../format.ts';
 import { stationBySite } from '../site-station.ts';
 import type { ByteSource } from '../source.ts';
@@ -154,18 +153,9 @@ class ArchiveReader {
   }
 
   #stationOf({ id, latitude, longitude }: SoundingHeader): Station {
-    const { site, stationList } = this.#options;
     // Stations of the WMO are known by the last five figures.
     const number = /^..M.*(\d{5})$/u.exec(id)?.[1] ?? id;
-    const known = siteStation(site, id) ?? siteStation(site, number);
-    const listed = stationList.find((station) => station.id === id || station.id === number);
-    return stationBySite(site, {
-      id: known?.id ?? id,
-      name: listed?.name ?? id,
-      latitude: Number.isNaN(latitude) ? (listed?.latitude ?? NaN) : latitude,
-      longitude: Number.isNaN(longitude) ? (listed?.longitude ?? NaN) : longitude,
-      elevation: listed?.elevation ?? NaN,
-    });
+    return stationBySite(this.#options, { id, name: id, latitude, longitude, elevation: NaN }, [number]);
   }
 
   #tally(kind: string, station = '', line = this.#line): void {

@@ -2,8 +2,7 @@
 
 import type { Quantity } from '../../air/index.ts';
 import type { Instrument, Station } from '../../profile/index.ts';
-import type { Site } from '../../site/index.ts';
-import { stationBySite, stationOfFileName } from '../site-station.ts';
+import { stationBySite, stationOfFileName, type KnownStations } from '../site-station.ts';
 import { numbersOf, textOf, type Attributes, type Dataset, type Variable } from './dataset.ts';
 import type { Piece } from './gather.ts';
 import { unitIn } from './roles.ts';
@@ -25,7 +24,12 @@ const NAMES = 'station_name site_name location site platform_name platform facil
 const AS_IT_IS = { scale: 1, offset: 0 };
 
 /** @param heightName name of the variable that holds the levels' heights: it is not the station's */
-export function stationsOf(dataset: Dataset, piece: Piece, heightName: string | undefined, site: Site): FileStations {
+export function stationsOf(
+  dataset: Dataset,
+  piece: Piece,
+  heightName: string | undefined,
+  known: KnownStations,
+): FileStations {
   const latitude = column(dataset, piece, LATITUDES, 'latitude', 'angle');
   const longitude = column(dataset, piece, LONGITUDES, 'longitude', 'angle');
   const elevation = column(dataset, piece, ELEVATIONS, 'surface_altitude', 'length', heightName);
@@ -33,16 +37,16 @@ export function stationsOf(dataset: Dataset, piece: Piece, heightName: string | 
   const identifiers = textsByProfile(dataset, piece, stationNames(dataset));
   const titles = textsByProfile(dataset, piece, stationTitles(dataset));
   const stations: Station[] = [];
-  const known = new Map<string, number>();
+  const places = new Map<string, number>();
   const stationIndex = new Uint16Array(piece.profileCount);
   for (let index = 0; index < piece.profileCount; index++) {
     const own = identifiers?.[index] ?? id;
     const key = [own, latitude[index], longitude[index], elevation[index]].join(' ');
-    let place = known.get(key);
+    let place = places.get(key);
     if (place === undefined) {
       place = stations.length;
-      known.set(key, place);
-      const found = stationBySite(site, {
+      places.set(key, place);
+      const found = stationBySite(known, {
         id: own,
         name: titles?.[index] ?? (name === '' || identifiers !== null ? own : name),
         latitude: latitude[index]!,

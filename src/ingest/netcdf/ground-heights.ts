@@ -101,7 +101,7 @@ function noElevation({ dataset, height }: Plan, stations: readonly Station[]): P
   return {
     code: 'ingest/no-elevation',
     what: `${height.variable.name} is above sea level and the file does not say how high the station ${station.name} stands, so heights above ground are not known.`,
-    mend: `Give the station ${station.id} and its elevation_m in the site file.`,
+    mend: `Give the station ${station.id} and its elevation in a site file or a station list.`,
     where: { source: dataset.source, key: height.variable.name },
   };
 }

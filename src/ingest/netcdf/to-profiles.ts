@@ -95,7 +95,7 @@ function* profilesFromGroups(groups: readonly Dataset[], options: ReadOptions, e
 function blockOf(plan: Plan, piece: Piece, options: ReadOptions, problems: Problem[]): ProfileBlock {
   const { dataset, launched, time } = plan;
   const notes: string[] = [];
-  const found = stationsOf(dataset, piece, plan.height.variable.name, options.site);
+  const found = stationsOf(dataset, piece, plan.height.variable.name, options);
   const ground = groundHeights(plan, piece, found, notes, problems);
   const read = (role: LevelRole): Float32Array | null => columnOf(plan, piece, role, ground.downward, notes, problems);
   const { speed, direction } = windOf(read);

@@ -124,7 +124,7 @@ function openScan(
       blindRange = range[0]! + ((blindRange - range[0]!) / doubt.likelySpacing) * spacing;
     }
   }
-  const { stations } = stationsOf(dataset, piece, undefined, options.site);
+  const { stations } = stationsOf(dataset, piece, undefined, options);
   const scan: Scan = {
     dataset,
     variables,

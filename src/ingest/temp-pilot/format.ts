@@ -109,19 +109,12 @@ function addProfile(
   builder: BlockBuilder,
   ascent: Ascent,
   source: string,
-  { site, stationList }: ReadOptions,
+  options: ReadOptions,
   common: readonly string[],
 ): void {
   const { head } = ascent;
-  const wanted = head.id.toLowerCase();
-  const listed = stationList.find((station) => station.id.toLowerCase() === wanted);
-  const station: Station = stationBySite(site, {
-    id: head.id,
-    name: listed?.name ?? head.id,
-    latitude: orElse(head.latitude, listed?.latitude),
-    longitude: orElse(head.longitude, listed?.longitude),
-    elevation: orElse(head.elevation, listed?.elevation),
-  });
+  const { id, latitude, longitude, elevation } = head;
+  const station = stationBySite(options, { id, name: id, latitude, longitude, elevation });
   const placed = placeLevels(ascent.levels(), station.elevation);
   builder.add({
     station,
@@ -155,10 +148,6 @@ function notesOf(ascent: Ascent, station: Station, placed: PlacedLevels): string
     notes.push('Levels with a pressure and no temperatures around were placed by the standard atmosphere.');
   }
   return notes;
-}
-
-function orElse(value: number, otherwise: number | undefined): number {
-  return Number.isNaN(value) ? (otherwise ?? NaN) : value;
 }
 
 function noDate(source: ByteSource): DuskveerError {
