@@ -1,7 +1,7 @@
 // The profiles of all paths, block after block, with whatever was wrong told on stderr.
 
 import type { ProfileBlock } from '../profile/index.ts';
-import { readProfiles } from '../ingest/index.ts';
+import { readProfiles, type ReadOptions, type StationList } from '../ingest/index.ts';
 import type { Site } from '../site/index.ts';
 import { EXIT, UsageError } from './command.ts';
 import { openInputs, type Input } from './inputs.ts';
@@ -13,6 +13,8 @@ export interface Reading {
   readonly take: (block: ProfileBlock) => Promise<void>;
   /** Sees every block of every path before the first is taken: then all is read twice. */
   readonly survey?: (block: ProfileBlock) => void;
+  /** The user's own list of stations; what is wrong with it is told first. */
+  readonly stations?: StationList;
 }
 
 /**
@@ -20,15 +22,21 @@ export interface Reading {
  * @returns exit code: well, or someUnread when something in a path could not be read
  * @throws UsageError when there is no path
  */
-export async function readPaths(paths: readonly string[], site: Site, { take, survey }: Reading): Promise<number> {
+export async function readPaths(
+  paths: readonly string[],
+  site: Site,
+  { take, survey, stations }: Reading,
+): Promise<number> {
   if (paths.length === 0) throw new UsageError('It needs at least one file or folder, or - for stdin.');
-  const { inputs, problems, close } = await openInputs(paths);
+  const { inputs, problems: unopened, close } = await openInputs(paths);
+  const problems = [...(stations?.problems ?? []), ...unopened];
   const reporter = new Reporter();
+  const known = { site, stationList: stations?.stations ?? [] };
   try {
     for (const problem of problems) reporter.problem(problem);
-    if (survey !== undefined) await surveyInputs(inputs, site, survey);
+    if (survey !== undefined) await surveyInputs(inputs, known, survey);
     let unread = problems.length > 0;
-    for (const input of inputs) if (await readInput(input, site, reporter, take)) unread = true;
+    for (const input of inputs) if (await readInput(input, known, reporter, take)) unread = true;
     return unread ? EXIT.someUnread : EXIT.well;
   } catch (error) {
     if (error instanceof OutputClosed) return EXIT.well;
@@ -41,11 +49,11 @@ export async function readPaths(paths: readonly string[], site: Site, { take, su
 
 async function surveyInputs(
   inputs: readonly Input[],
-  site: Site,
+  known: Partial<ReadOptions>,
   survey: (block: ProfileBlock) => void,
 ): Promise<void> {
   for (const { source, writtenMs } of inputs) {
-    const options = { site, referenceTimeMs: writtenMs };
+    const options = { ...known, referenceTimeMs: writtenMs };
     for await (const { block } of readProfiles(source, options)) if (block.profileCount > 0) survey(block);
   }
 }
@@ -53,12 +61,12 @@ async function surveyInputs(
 /** @returns whether something in it could not be read */
 async function readInput(
   input: Input,
-  site: Site,
+  known: Partial<ReadOptions>,
   reporter: Reporter,
   take: (block: ProfileBlock) => Promise<void>,
 ): Promise<boolean> {
   let unread = false;
-  const options = { site, referenceTimeMs: input.writtenMs, onProgress: reporter.progress.bind(reporter) };
+  const options = { ...known, referenceTimeMs: input.writtenMs, onProgress: reporter.progress.bind(reporter) };
   for await (const { block, problems } of readProfiles(input.source, options)) {
     for (const problem of problems) {
       // A folder may hold a README and a site file beside the data: those are passed over, not unread.

@@ -74,7 +74,8 @@ export function writtenMs({ mtimeMs }: { readonly mtimeMs: number }): number | u
   return mtimeMs >= EARLIEST_FILE_MS ? mtimeMs : undefined;
 }
 
-function fileSource(name: string, path: string, size: number | undefined): ByteSource {
+/** The file's bytes, by whatever name messages shall call it. */
+export function fileSource(name: string, path: string, size: number | undefined): ByteSource {
   return { name, size, stream: () => createReadStream(path, { highWaterMark: 1 << 18 }) };
 }
 

@@ -10,6 +10,7 @@ import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
 import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
+import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
 
 export const command: Command = {
   help: `duskveer jets PATH... [--criteria NAME] [--site FILE]
@@ -27,18 +28,22 @@ Prints a JSON line a profile:
   --criteria NAME    one of these; without it the site's, else duskveer
 ${CRITERIA_NAMES.map((name) => `                     ${name.padEnd(24)} ${CRITERIA[name].title}`).join('\n')}
   --site FILE        stations with their uncertainty, the site's own criteria
+${STATIONS_HELP}
 ${SCREENS_HELP}`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
       ...SITE_OPTION,
+      ...STATIONS_OPTION,
       ...SCREENS_OPTION,
       criteria: { type: 'string' },
     });
     const site = await siteOf(values.site);
+    const stations = await stationsOf(values.stations);
     const criteria = chosenCriteria(site, values.criteria);
     const screened = screener(site, values.screens, criteria.decides === 'levels' ? 'gross' : 'all');
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
+      stations,
       take: async (block) => {
         for (const profile of profilesOf(screened(block))) {
           await out.write(jetLine(profile, findingOf(profile, criteria, site)));

@@ -11,6 +11,7 @@ import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
 import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
+import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
 
 export const command: Command = {
   help: `duskveer moisture PATH... [--site FILE] [--bottom-pa P] [--top-pa P]
@@ -32,15 +33,18 @@ Prints a JSON line a profile:
   --site FILE      stations, criteria of the jet
   --bottom-pa P    limits of the layer, Pa; without them all that was measured
   --top-pa P
+${STATIONS_HELP}
 ${SCREENS_HELP}`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
       ...SITE_OPTION,
+      ...STATIONS_OPTION,
       ...SCREENS_OPTION,
       'bottom-pa': { type: 'string' },
       'top-pa': { type: 'string' },
     });
     const site = await siteOf(values.site);
+    const stations = await stationsOf(values.stations);
     const screened = screener(site, values.screens);
     const bottomPressure = pressureOption('bottom-pa', values['bottom-pa']);
     const topPressure = pressureOption('top-pa', values['top-pa']);
@@ -51,6 +55,7 @@ ${SCREENS_HELP}`,
     const sources = new AirSources(site);
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
+      stations,
       survey: (block) => sources.gather(screened(block)),
       take: async (block) => {
         for (const profile of profilesOf(screened(block))) {

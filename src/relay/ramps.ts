@@ -22,6 +22,7 @@ import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
 import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
+import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
 
 export const command: Command = {
   help: `duskveer ramps PATH... --site FILE
@@ -39,17 +40,20 @@ Prints a JSON line a ramp:
   words                    the same in a sentence
 
   --site FILE    turbines with power curves, definitions of ramps
+${STATIONS_HELP}
 ${SCREENS_HELP}`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, ...SCREENS_OPTION });
+    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, ...STATIONS_OPTION, ...SCREENS_OPTION });
     if (values.site === undefined) throw new UsageError('It needs --site with a file that lists turbines.');
     const site = await siteOf(values.site);
+    const listed = await stationsOf(values.stations);
     const screened = screener(site, values.screens);
     const turbines = site.turbines.filter((turbine) => turbine.powerCurve !== null && turbine.count > 0);
     if (turbines.length === 0) throw new UsageError(`${values.site} lists no turbine with a power curve.`);
     const criteria = chosenCriteria(site, undefined);
     const stations = new Map<string, ProfileFacts[]>();
     const code = await readPaths(positionals, site, {
+      stations: listed,
       take: (block) => {
         for (const profile of profilesOf(screened(block))) {
           const facts = factsOf(profile, findingOf(profile, criteria, site), turbines, site);

@@ -1,6 +1,7 @@
 // `read`: what is in the files, a JSON line a profile.
 
 import { dewPointOf, toJsonNumber, toJsonNumbers } from '../air/index.ts';
+import type { StationList } from '../ingest/index.ts';
 import { markNames, profilesOf, type Profile } from '../profile/index.ts';
 import type { Site } from '../site/index.ts';
 import { readPaths } from './blocks.ts';
@@ -8,6 +9,7 @@ import { parseOptions, UsageError, type Command } from './command.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
+import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
 import { formatWriter, type FormatWriter } from './write-as.ts';
 
 export const command: Command = {
@@ -26,20 +28,24 @@ Prints a JSON line a profile, unless --to asks for another form:
   notes                                   what the reader has to say
 
   --site FILE    positions of stations, headings of your own tables, time zone of files without one
+${STATIONS_HELP}
   --to FORMAT    writes the profiles for other software: csv (a line a level), netcdf (CF, classic format) or
                  coveragejson (OGC CoverageJSON); all but csv hold every profile until the last is read
   --out FILE     where to; without it to stdout`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
       ...SITE_OPTION,
+      ...STATIONS_OPTION,
       to: { type: 'string' },
       out: { type: 'string' },
     });
     if (values.out !== undefined && values.to === undefined) throw new UsageError('--out goes with --to.');
     const site = await siteOf(values.site);
-    if (values.to !== undefined) return convert(positionals, site, formatWriter(values.to, values.out));
+    const stations = await stationsOf(values.stations);
+    if (values.to !== undefined) return convert(positionals, site, stations, formatWriter(values.to, values.out));
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
+      stations,
       take: async (block) => {
         for (const profile of profilesOf(block)) await out.write(profileLine(profile));
         await out.flush();
@@ -48,9 +54,14 @@ Prints a JSON line a profile, unless --to asks for another form:
   },
 };
 
-async function convert(paths: readonly string[], site: Site, writer: FormatWriter): Promise<number> {
+async function convert(
+  paths: readonly string[],
+  site: Site,
+  stations: StationList,
+  writer: FormatWriter,
+): Promise<number> {
   try {
-    const code = await readPaths(paths, site, { take: writer.take });
+    const code = await readPaths(paths, site, { take: writer.take, stations });
     await writer.finish();
     return code;
   } catch (error) {

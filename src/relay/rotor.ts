@@ -12,6 +12,7 @@ import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
 import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
+import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
 
 export const command: Command = {
   help: `duskveer rotor PATH... (--hub M --diameter M | --site FILE)
@@ -36,20 +37,24 @@ Prints a JSON line a profile and turbine type:
   --hub M         hub height above ground
   --diameter M    rotor diameter
   --site FILE     takes the turbine types of a site instead
+${STATIONS_HELP}
 ${SCREENS_HELP}`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
       ...SITE_OPTION,
+      ...STATIONS_OPTION,
       ...SCREENS_OPTION,
       hub: { type: 'string' },
       diameter: { type: 'string' },
     });
     const site = await siteOf(values.site);
+    const stations = await stationsOf(values.stations);
     const screened = screener(site, values.screens);
     const turbines = chosenTurbines(site, values.hub, values.diameter);
     const criteria = chosenCriteria(site, undefined);
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
+      stations,
       take: async (block) => {
         for (const profile of profilesOf(screened(block))) {
           const nose = findingOf(profile, criteria, site).jets[0]?.noseHeight ?? NaN;

@@ -22,8 +22,7 @@ export async function stationsOf(path: string | undefined): Promise<StationList>
   try {
     return await readStationList(fileSource(path, path, (await stat(path)).size));
   } catch (error) {
-    const problem =
-      error instanceof DuskveerError ? error.problem : pathProblem(path, error as NodeJS.ErrnoException);
+    const problem = error instanceof DuskveerError ? error.problem : pathProblem(path, error as NodeJS.ErrnoException);
     throw new UsageError(problemInWords(problem), { cause: error });
   }
 }

@@ -11,6 +11,7 @@ import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
 import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
+import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
 
 export const command: Command = {
   help: `duskveer storm PATH... [--site FILE] [--motion U,V]
@@ -33,20 +34,24 @@ Prints a JSON line a profile:
 
   --site FILE     stations, criteria of the jet
   --motion U,V    storm motion in m/s eastward and northward, for the helicity in place of the mover
+${STATIONS_HELP}
 ${SCREENS_HELP}`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
       ...SITE_OPTION,
+      ...STATIONS_OPTION,
       ...SCREENS_OPTION,
       motion: { type: 'string' },
     });
     const site = await siteOf(values.site);
+    const stations = await stationsOf(values.stations);
     const screened = screener(site, values.screens);
     const motion = motionOption(values.motion);
     const criteria = chosenCriteria(site, undefined);
     const sources = new AirSources(site);
     const out = new LineWriter(process.stdout);
     return readPaths(positionals, site, {
+      stations,
       survey: (block) => sources.gather(screened(block)),
       take: async (block) => {
         for (const profile of profilesOf(screened(block))) {

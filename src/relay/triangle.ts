@@ -10,6 +10,7 @@ import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
 import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
+import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
 
 /** Instruments no further apart than this stand at one place, m. */
 const SAME_PLACE = 2000;
@@ -32,14 +33,17 @@ Prints a JSON line a time and layer: levels that the stations share where those 
                            of q V with q in kg/kg; negative where moisture gathers; null where a humidity is missing
 
   --site FILE    positions of stations
+${STATIONS_HELP}
 ${SCREENS_HELP}`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, ...SCREENS_OPTION });
+    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, ...STATIONS_OPTION, ...SCREENS_OPTION });
     const site = await siteOf(values.site);
+    const listed = await stationsOf(values.stations);
     const screened = screener(site, values.screens);
     const stations = new Map<string, Profile[]>();
     const sources = new AirSources(site);
     const code = await readPaths(positionals, site, {
+      stations: listed,
       take: (block) => {
         const checked = screened(block);
         sources.gather(checked);

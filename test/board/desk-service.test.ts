@@ -84,6 +84,28 @@ describe('DeskService', () => {
     expect(csvText.trim().split('\n')).toHaveLength(1 + 3 * 25);
   });
 
+  it('places bulletins by a list of stations, whichever of the two comes first among the files', async () => {
+    const bulletin = 'TTAA 15121 10999 99995 14656 18005 00088 ///// ///// 92745 10620 19511 85455 06850 20514=';
+    const files = [
+      { name: 'feed.txt', blob: new Blob([bulletin]), writtenMs: Date.UTC(2024, 5, 16) },
+      { name: 'ours.csv', blob: new Blob(['id,name,lat,lon,elevation\n10999,Fenmoor,52.5,8.25,130\n,,1,2,3\n']) },
+    ];
+    const service = new DeskService();
+    service.open(NO_SITE);
+    expect(await service.stationLists(files)).toEqual([false, true]);
+    const report = await service.read(1, files, () => undefined);
+    expect(report.files.map(({ profiles, stations }) => [profiles, stations])).toEqual([
+      [1, 0],
+      [0, 1],
+    ]);
+    expect(report.files[1]!.problems[0]!.where).toMatchObject({ source: 'ours.csv', line: 3 });
+    const place = { id: '10999', name: 'Fenmoor', latitude: 52.5, longitude: 8.25, elevation: 130 };
+    expect(service.feeds()[0]).toMatchObject({ station: place, lastMs: Date.UTC(2024, 5, 15, 12) });
+    service.open(NO_SITE);
+    await service.read(2, files.slice(0, 1), () => undefined);
+    expect(service.feeds()[0]!.station.latitude).toBeNaN();
+  });
+
   it('stops reading when told, and keeps what it had', async () => {
     const service = new DeskService();
     service.open(NO_SITE);

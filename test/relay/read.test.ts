@@ -64,6 +64,27 @@ describe('read', () => {
     expect(ran.err).toContain(broken);
   });
 
+  it('places stations by the list that is named, and says which of its rows it cannot use', async () => {
+    const bulletin = 'TTAA 15121 10999 99995 14656 18005 00088 ///// ///// 92745 10620 19511 85455 06850 20514=';
+    const list = join(folder, 'stations.csv');
+    writeFileSync(list, 'identifier,name,latitude,longitude,elevation_ft\n10999,Fenmoor,52.5,8.25,1000\n');
+    const placed = await duskveer(['read', '-', '--stations', list], bulletin);
+    expect(placed).toMatchObject({ code: 0, err: '' });
+    // 1000 ft are 304.8 m.
+    const place = { station: '10999', name: 'Fenmoor', lat: 52.5, lon: 8.25, elevation_m: 304.8 };
+    expect(placed.lines()).toMatchObject([place]);
+
+    writeFileSync(list, 'identifier,name,latitude,longitude\n10999,Fenmoor,north,8.25\n10998,Highfen,52,8\n');
+    const partly = await duskveer(['read', '-', '--stations', list], bulletin);
+    expect(partly.code).toBe(3);
+    expect(partly.err).toContain(`${list}, line 2`);
+    expect(partly.lines()).toMatchObject([{ station: '10999', lat: null }]);
+
+    const none = await duskveer(['jets', LIDAR, '--stations', LIDAR]);
+    expect(none.code).toBe(2);
+    expect(none.err).toContain('no list of stations');
+  });
+
   it('takes all files of a folder and passes over those that are no data', async () => {
     const night = join(folder, 'night');
     mkdirSync(join(night, 'deeper'), { recursive: true });

@@ -12,6 +12,7 @@ import type { Preferences } from './preferences.svelte.ts';
 export interface OpenedFile extends OpenFile {
   readonly formats: readonly string[];
   readonly profiles: number;
+  readonly stations: number;
   readonly problems: readonly Problem[];
 }
 
@@ -112,24 +113,28 @@ export class Board {
     if (chosen.length === 0) return;
     const before = this.#kept();
     const sites: { text: string; name: string }[] = [];
-    const profiles: OpenFile[] = [];
+    const others: OpenFile[] = [];
     for (const file of chosen) {
       const text = await siteText(file);
-      if (text === null) profiles.push({ name: file.name, blob: file });
+      if (text === null) others.push({ name: file.name, blob: file, writtenMs: file.lastModified });
       else sites.push({ text, name: file.name });
     }
     this.notice = null;
     // The demo gives way to files of one's own; more of these join those already open.
-    const leaveDemo = before.demo !== '' && profiles.length > 0;
+    const lists = await this.worker.stationLists(others);
+    const hasProfiles = lists.includes(false);
+    const leaveDemo = before.demo !== '' && hasProfiles;
     const site = sites.at(-1) ?? (leaveDemo ? null : before.site);
-    const kept = leaveDemo ? [] : before.files;
-    if (site !== before.site || kept !== before.files) {
+    const kept = leaveDemo ? this.files.filter(({ stations }) => stations > 0) : before.files;
+    // A list of stations may place what was read before it came.
+    if (site !== before.site || kept !== before.files || lists.includes(true)) {
       await this.#openSite(site);
       this.files = [];
       this.demo = kept === before.files ? before.demo : '';
-      await this.#read([...kept, ...profiles]);
-    } else await this.#read(profiles);
-    if (profiles.length > 0) this.lookAtNewest();
+      const replaced = new Set(others.map(({ name }) => name));
+      await this.#read([...kept.filter(({ name }) => !replaced.has(name)), ...others]);
+    } else await this.#read(others);
+    if (hasProfiles || this.feed === undefined) this.lookAtNewest();
     this.notice = {
       words: `Opened ${chosen.map((file) => file.name).join(', ')}.`,
       undo: () => void this.#goBack(before),
@@ -242,7 +247,7 @@ export class Board {
       };
       try {
         const report = await this.worker.read(number, [...files], proxy(tell));
-        const opened = report.files.map((file, index) => ({ ...file, blob: files[index]!.blob }));
+        const opened = report.files.map((file, index) => ({ ...files[index]!, ...file }));
         this.files = [...this.files.filter((file) => !opened.some((other) => other.name === file.name)), ...opened];
         this.problems = [...this.problems, ...opened.flatMap((file) => file.problems)];
         if (report.cancelled) this.problems = [...this.problems, stopped(files.length - report.files.length)];

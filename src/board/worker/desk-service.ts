@@ -12,11 +12,12 @@ import {
   SectionPainter,
   type SectionView,
 } from '../../plot/index.ts';
-import { pickProfiles, type ProfileBlock } from '../../profile/index.ts';
+import { pickProfiles, type ProfileBlock, type Station } from '../../profile/index.ts';
 import { PLAIN_SITE, readSite, type DisplayUnits, type Site, type TurbineType } from '../../site/index.ts';
 import { archiveFileOf, breath, readArchiveTables } from './archive-tables.ts';
 import { blobSource } from './blob-source.ts';
 import { sectionTable } from './section-table.ts';
+import { areStationLists, readStationLists } from './station-lists.ts';
 import type {
   ArchiveProgress,
   ArchiveReport,
@@ -50,6 +51,7 @@ interface PreparedSection {
 export class DeskService implements BoardWorker {
   #desk = new Desk(PLAIN_SITE);
   #section: PreparedSection | null = null;
+  #stationList: readonly Station[] = [];
   readonly #jobs = new Map<number, AbortController>();
 
   open({ file, disc }: OpenSite): SiteReport {
@@ -57,6 +59,7 @@ export class DeskService implements BoardWorker {
     const site = withDisc(read.site ?? PLAIN_SITE, disc);
     this.#desk = new Desk(site);
     this.#section = null;
+    this.#stationList = [];
     return { site, problems: read.problems };
   }
 
@@ -79,13 +82,25 @@ export class DeskService implements BoardWorker {
       onProgress({ current, done: reports.length, bytesRead, bytesTotal, profiles: accepted.added });
     };
     try {
+      const lists = await readStationLists(files, control.signal);
+      const listed = [...lists.values()].flatMap(({ stations }) => stations);
+      if (listed.length > 0) this.#stationList = [...this.#stationList, ...listed];
       for (const file of files) {
         tell(file.name, bytesBefore);
+        const list = lists.get(file);
+        if (list !== undefined) {
+          const { stations, problems } = list;
+          bytesBefore += file.blob.size;
+          reports.push({ name: file.name, formats: [], profiles: 0, stations: stations.length, problems });
+          continue;
+        }
         const formats = new Set<string>();
         const problems: Problem[] = [];
         let profiles = 0;
         const readings = readProfiles(blobSource(file), {
           site: desk.site,
+          stationList: this.#stationList,
+          referenceTimeMs: file.writtenMs,
           signal: control.signal,
           onProgress: ({ bytesRead }) => tell(file.name, bytesBefore + bytesRead),
         });
@@ -99,7 +114,7 @@ export class DeskService implements BoardWorker {
           accepted.replaced += replaced;
         }
         bytesBefore += file.blob.size;
-        reports.push({ name: file.name, formats: [...formats], profiles, problems });
+        reports.push({ name: file.name, formats: [...formats], profiles, stations: 0, problems });
       }
       return { files: reports, accepted, cancelled: false };
     } catch (error) {
@@ -112,6 +127,10 @@ export class DeskService implements BoardWorker {
 
   cancel(job: number): void {
     this.#jobs.get(job)?.abort();
+  }
+
+  stationLists(files: readonly OpenFile[]): Promise<boolean[]> {
+    return areStationLists(files);
   }
 
   feeds(): FeedState[] {

@@ -10,6 +10,8 @@ import type { DisplayUnits, Site } from '../../site/index.ts';
 export interface OpenFile {
   readonly name: string;
   readonly blob: Blob;
+  /** UTC, ms, when it was last written: tells the month of bulletins that give only the day. Undefined: not known. */
+  readonly writtenMs?: number | undefined;
 }
 
 /** How far reading has come. */
@@ -28,6 +30,8 @@ export interface FileReport {
   readonly name: string;
   readonly formats: readonly string[];
   readonly profiles: number;
+  /** Of a list of stations; zero for any other file. */
+  readonly stations: number;
   readonly problems: readonly Problem[];
 }
 
@@ -101,6 +105,8 @@ export interface BoardWorker {
     onProgress: (progress: ReadingProgress) => void,
   ): Promise<ReadingReport>;
   cancel(job: number): void;
+  /** Which of the files are lists of stations; what was read before them does not know of them yet. */
+  stationLists(files: readonly OpenFile[]): Promise<boolean[]>;
   feeds(): FeedState[];
   night(atMs: number, feed: string, criteria: string): NightState | null;
   /** Builds the section's grid and makes it ready to be painted at any zoom. */

@@ -3,10 +3,13 @@
 import { createHash } from 'node:crypto';
 import type { NamedDisc } from '../../desk/index.ts';
 import type { Criteria } from '../../jet/index.ts';
+import type { Station } from '../../profile/index.ts';
 import type { Site } from '../../site/index.ts';
 
 export interface ScanQuestion {
   readonly site: Site;
+  /** The user's own list of stations. */
+  readonly stationList: readonly Station[];
   readonly criteria: Criteria;
   readonly discs: readonly NamedDisc[];
 }

@@ -16,16 +16,21 @@ import { writeResult, type FileProblem, type Totals } from './write-result.ts';
 /** How often a part that lost bytes on disk is made again before the disk is given up. */
 const MOST_ATTEMPTS = 3;
 
-/** @returns the exit code */
+/**
+ * @param alreadyFound problems that stand in the tables with those of the files
+ * @returns the exit code
+ */
 export async function runScan(
   paths: readonly string[],
   out: string,
   question: ScanQuestion,
   workers: number,
+  alreadyFound: readonly Problem[],
 ): Promise<number> {
   const beganMs = performance.now();
   const journal = await openJournal(out, question);
-  const { files, problems } = await findFiles(paths, out);
+  const { files, problems: unopened } = await findFiles(paths, out);
+  const problems = [...alreadyFound, ...unopened];
   for (const problem of problems) say(problemInWords(problem));
   say(countInWords(files.length, files.filter((file) => journal.entryOf(file) === undefined).length));
 

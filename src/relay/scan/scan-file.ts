@@ -43,6 +43,7 @@ export async function scanFile(
   };
   const readings = readProfiles(source, {
     site: question.site,
+    stationList: question.stationList,
     // When a report tells only the day of the month, its file's age tells the rest.
     referenceTimeMs: writtenMs(file),
     onProgress: ({ bytesRead }) => onBytes(bytesRead),

@@ -2,11 +2,13 @@
 
 import { availableParallelism } from 'node:os';
 import { CRITERIA, CRITERIA_NAMES } from '../../jet/index.ts';
+import type { Station } from '../../profile/index.ts';
 import type { Site } from '../../site/index.ts';
 import { numberOption, parseOptions, UsageError, type Command } from '../command.ts';
 import { chosenCriteria } from '../jets.ts';
 import { turbinesOf } from '../rotor.ts';
 import { SITE_OPTION, siteOf } from '../site-option.ts';
+import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from '../stations-option.ts';
 import type { ScanQuestion } from './question.ts';
 import { runScan } from './run-scan.ts';
 
@@ -33,10 +35,12 @@ Prints a JSON line with what was found. Exit 3 when some input could not be read
 ${CRITERIA_NAMES.map((name) => `                     ${name.padEnd(24)} ${CRITERIA[name].title}`).join('\n')}
   --hub M            hub height above ground and
   --diameter M       rotor diameter of a disc, instead of the site's turbine types
+${STATIONS_HELP}
   --workers N        threads; without it one for each core`,
   async run(args) {
     const { values, positionals } = parseOptions(args, {
       ...SITE_OPTION,
+      ...STATIONS_OPTION,
       out: { type: 'string' },
       criteria: { type: 'string' },
       hub: { type: 'string' },
@@ -49,13 +53,15 @@ ${CRITERIA_NAMES.map((name) => `                     ${name.padEnd(24)} ${CRITER
     const workers = numberOption('workers', values.workers, 1, MOST_WORKERS);
     if (!Number.isInteger(workers)) throw new UsageError(`--workers needs a whole number, not "${values.workers}".`);
     const site = await siteOf(values.site);
-    const question = questionOf(site, values.criteria, values.hub, values.diameter);
-    return runScan(positionals, values.out, question, workers);
+    const stations = await stationsOf(values.stations);
+    const question = questionOf(site, stations.stations, values.criteria, values.hub, values.diameter);
+    return runScan(positionals, values.out, question, workers, stations.problems);
   },
 };
 
 function questionOf(
   site: Site,
+  stationList: readonly Station[],
   criteria: string | undefined,
   hub: string | undefined,
   diameter: string | undefined,
@@ -66,5 +72,5 @@ function questionOf(
     rotorDiameter,
     groundElevation,
   }));
-  return { site, criteria: chosenCriteria(site, criteria), discs };
+  return { site, stationList, criteria: chosenCriteria(site, criteria), discs };
 }
