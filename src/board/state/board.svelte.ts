@@ -131,8 +131,8 @@ export class Board {
       await this.#openSite(site);
       this.files = [];
       this.demo = kept === before.files ? before.demo : '';
-      const replaced = new Set(others.map(({ name }) => name));
-      await this.#read([...kept.filter(({ name }) => !replaced.has(name)), ...others]);
+      const remaining = kept.filter((file) => !others.some(({ name }) => name === file.name));
+      await this.#read([...remaining, ...others]);
     } else await this.#read(others);
     if (hasProfiles || this.feed === undefined) this.lookAtNewest();
     this.notice = {
