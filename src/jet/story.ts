@@ -31,6 +31,8 @@ export interface JetStory extends KindFinding {
   readonly layer: JetLayer | null;
   /** At the usual height of the nose, since dusk and up to the track's last point. */
   readonly turning: Turning;
+  /** The same at fixed heights, upward as far as winds are known. */
+  readonly turnings: readonly Turning[];
   /** Above the core in the last profile of the track. */
   readonly thermal: ThermalTurn | null;
   /** One plain sentence or two. */
@@ -39,6 +41,9 @@ export interface JetStory extends KindFinding {
 
 /** Heights of a turning around the nose, as shares of its height: the first that can be told is taken. */
 const AROUND = [1, 1.25, 0.8];
+
+/** m above ground */
+const FIXED_HEIGHTS = [50, 100, 150, 200, 300, 400, 600, 800, 1000, 1500];
 
 /** Tells the story of a track. */
 export function storyOf(track: JetTrack, setting: StorySetting, format: WordFormat): JetStory {
@@ -50,22 +55,24 @@ export function storyOf(track: JetTrack, setting: StorySetting, format: WordForm
   const { sunsetMs } = nightOf(track.beganMs, station.latitude, station.longitude);
   const heights = track.points.map(({ noseHeight }) => noseHeight).sort((a, b) => a - b);
   const usual = heights[heights.length >> 1]!;
-  const turnings = turningAt(
+  const options = {
+    latitude: station.latitude,
+    sinceMs: Number.isNaN(sunsetMs) ? track.beganMs : Math.min(sunsetMs, track.beganMs),
+    geostrophicSpeed: setting.geostrophicSpeed,
+  };
+  const aroundNose = turningAt(
     profiles,
     AROUND.map((share) => share * usual),
-    {
-      latitude: station.latitude,
-      sinceMs: Number.isNaN(sunsetMs) ? track.beganMs : Math.min(sunsetMs, track.beganMs),
-      geostrophicSpeed: setting.geostrophicSpeed,
-    },
+    options,
   );
-  const turning = turnings.find(({ status }) => status === 'told') ?? turnings[0]!;
+  const turning = aroundNose.find(({ status }) => status === 'told') ?? aroundNose[0]!;
   const kind = kindOf({ ...setting, track, profiles, turning });
   return {
     track,
     ...kind,
     layer: profile === undefined || jet === undefined ? null : jetLayer(profile, jet, discs),
     turning,
+    turnings: turningAt(profiles, FIXED_HEIGHTS, options).filter(({ fit }) => fit.used > 0),
     thermal: profile === undefined ? null : thermalTurn(profile, jet?.core.top ?? last.noseHeight, station.latitude),
     words: storyInWords(track, kind.kind, turning, format),
   };

@@ -31,20 +31,11 @@ export function story(night: NightState, stepMs: number, units: DisplayUnits, ti
   if (night.migrants[last] === true) {
     pieces.push({ text: 'Migrating birds may carry the signal: check with another instrument. ', weight: 'call' });
   }
-  const track = currentTrack(night);
-  if (track !== undefined)
-    pieces.push(
-      ...trackPieces(night.stories[night.tracks.indexOf(track)]!, noseNow(night, track), units, times, stale),
-    );
-  else pieces.push(...noTrackPieces(night, times));
+  const [first] = storiesInOrder(night);
+  if (first?.track.endedMs === null) {
+    pieces.push(...trackPieces(first, noseNow(night, first.track), units, times, stale));
+  } else pieces.push(...noTrackPieces(night, times));
   return pieces;
-}
-
-/** The strongest of the jets that last as far as data go. */
-function currentTrack(night: NightState): JetTrack | undefined {
-  return night.tracks
-    .filter(({ endedMs }) => endedMs === null)
-    .sort((a, b) => b.points.at(-1)!.noseSpeed - a.points.at(-1)!.noseSpeed)[0];
 }
 
 type Nose = Pick<TrackPoint, 'noseHeight' | 'noseSpeed' | 'noseDirection'>;
@@ -56,6 +47,19 @@ function noseNow(night: NightState, track: JetTrack): Nose {
   const same = point.timeMs === night.timeMs.at(-1) && jet !== undefined;
   const near = same && Math.abs(jet.noseHeight - point.noseHeight) < Math.max(LEAST_NEARNESS, 3 * point.heightSpread);
   return near ? jet : point;
+}
+
+/** The jets of the night, as a list would name them: those that last first, strongest first, then the newest ended. */
+export function storiesInOrder({ stories }: NightState): JetStory[] {
+  const rank = ({ track }: JetStory): number =>
+    track.endedMs === null ? track.points.at(-1)!.noseSpeed : track.endedMs - 1e15;
+  return [...stories].sort((a, b) => rank(b) - rank(a));
+}
+
+/** Name of a story among others: `The jet since 21:10`, `The jet from 21:10 to 04:30`. */
+export function storyTitle({ track }: JetStory, times: TimeWords): string {
+  const began = times.clock(track.beganMs);
+  return track.endedMs === null ? `The jet since ${began}` : `The jet from ${began} to ${times.clock(track.endedMs)}`;
 }
 
 const KIND_WORDS: Readonly<Record<JetKind | 'undecided', string>> = {
