@@ -11,8 +11,12 @@ const FEWEST_PAIRS = 40;
 const QUANTILE = 0.35;
 /** That quantile of the length of the difference of two vectors whose components have standard deviation 1 (Rayleigh). */
 const OF_UNIT = 2 * Math.sqrt(-Math.log(1 - QUANTILE));
-/** Bounds of the standard deviation of a component, m/s: no instrument is better, none worth reading worse. */
-const LEAST = 0.35;
+/**
+ * Bounds of the standard deviation of a component, m/s: none is worth reading if worse, and no two ten-minute means a gate
+ * apart agree better, however exact the instrument: the air is gusty, merged instruments do not see the same air, and
+ * sources that fill every other time from its neighbours look smoother than they are.
+ */
+const LEAST = 0.6;
 const MOST = 2;
 
 /** Standard deviation of a wind component, m/s, as a function of height above ground, m. */

@@ -21,6 +21,8 @@ const STRONGEST_SHEAR = 0.12;
 /** A gate fits its prediction within so many standard deviations, and this at least, m/s. */
 const FITTING = 3.2;
 const LEAST_FIT = 2;
+/** Nothing this near its prediction is called wrong, however little fits, m/s: the wind itself wavers so much. */
+const LEAST_WRONG = 3;
 /** What still fits while the region grows, in steps: the best fitting first. */
 const LIMITS = [0.5, 0.7, 0.9];
 /** A region that fills this share of its profiles is weather, a front, not a patch. */
@@ -94,9 +96,7 @@ class Continuity {
       open = this.#grow(open, verdicts);
     });
     for (let n = 0; n < count; n++) {
-      if (verdicts[n] === VERDICT.fits && this.#member[n] === 0 && this.#misses(n) > 1) {
-        verdicts[n] = VERDICT.contradicts;
-      }
+      if (verdicts[n] === VERDICT.fits && this.#member[n] === 0 && this.#isWrong(n)) verdicts[n] = VERDICT.contradicts;
     }
     this.#spareTheNewest(verdicts);
     return verdicts;
@@ -237,11 +237,22 @@ class Continuity {
     }
   }
 
+  /** Whether a node lies too far from its prediction; never where the region is too far away to tell. */
+  #isWrong(n: number): boolean {
+    const misses = this.#misses(n);
+    return misses > 1 && misses * this.#fitting(n) > LEAST_WRONG;
+  }
+
+  /** Distance from its prediction at which a node still fits, m/s. */
+  #fitting(n: number): number {
+    return Math.max(LEAST_FIT, FITTING * this.#noise[n]!);
+  }
+
   /** Distance of a node from its prediction as a multiple of what still fits; NaN where the region is too far away. */
   #misses(n: number): number {
     if (this.#isOld[n] === 1) {
       predict(this.#nodes, this.#member, n, this.#prediction);
-      this.#missed[n] = this.#prediction.distance / Math.max(LEAST_FIT, FITTING * this.#noise[n]!);
+      this.#missed[n] = this.#prediction.distance / this.#fitting(n);
       this.#isOld[n] = 0;
     }
     return this.#missed[n]!;
