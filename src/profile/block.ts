@@ -27,6 +27,10 @@ export interface Levels {
   readonly signal: Float32Array | null;
   /** Standard uncertainty of the speed, m/s, where source or reader can state it. */
   readonly speedUncertainty: Float32Array | null;
+  /** Share of the soundings of the period that agree on the wind, 0 to 1: of a wind profiler's consensus average. */
+  readonly consensus: Float32Array | null;
+  /** Width of the Doppler spectrum, m/s. */
+  readonly spectralWidth: Float32Array | null;
   /** Quality marks, bits as in `marks.ts`. */
   readonly mark: Uint32Array;
 }
@@ -42,6 +46,8 @@ export const VALUE_COLUMNS = [
   'specificHumidity',
   'signal',
   'speedUncertainty',
+  'consensus',
+  'spectralWidth',
 ] as const;
 export type ValueColumn = (typeof VALUE_COLUMNS)[number];
 /** Columns that every block has; the others may be null. */
@@ -106,6 +112,8 @@ export function profileAt(block: ProfileBlock, index: number): Profile {
     specificHumidity: view(block.specificHumidity),
     signal: view(block.signal),
     speedUncertainty: view(block.speedUncertainty),
+    consensus: view(block.consensus),
+    spectralWidth: view(block.spectralWidth),
     mark: block.mark.subarray(start, end),
   };
 }

@@ -21,6 +21,8 @@ export interface LevelInput {
   readonly specificHumidity?: ArrayLike<number> | undefined;
   readonly signal?: ArrayLike<number> | undefined;
   readonly speedUncertainty?: ArrayLike<number> | undefined;
+  readonly consensus?: ArrayLike<number> | undefined;
+  readonly spectralWidth?: ArrayLike<number> | undefined;
   readonly mark?: ArrayLike<number> | undefined;
 }
 
@@ -149,6 +151,8 @@ export class BlockBuilder {
       specificHumidity: takeIfFilled('specificHumidity'),
       signal: takeIfFilled('signal'),
       speedUncertainty: takeIfFilled('speedUncertainty'),
+      consensus: takeIfFilled('consensus'),
+      spectralWidth: takeIfFilled('spectralWidth'),
       mark: this.#mark.slice(0, this.#levelCount),
     };
   }

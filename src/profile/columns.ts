@@ -47,6 +47,8 @@ export function blockOfColumns(input: ColumnsInput): ProfileBlock {
     specificHumidity: optional('specificHumidity'),
     signal: optional('signal'),
     speedUncertainty: optional('speedUncertainty'),
+    consensus: optional('consensus'),
+    spectralWidth: optional('spectralWidth'),
     mark,
   };
 }

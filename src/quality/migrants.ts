@@ -6,7 +6,7 @@
 import { directionOf, eastward, nightOf, northward, signedAngle, speedOf } from '../air/index.ts';
 import { INSTRUMENTS, MARK, REJECTING, type ProfileBlock } from '../profile/index.ts';
 import type { Site } from '../site/index.ts';
-import type { Screened } from './series.ts';
+import { median, type Screened } from './series.ts';
 
 /** Months of the usual passage in either hemisphere, where the site file names none; common practice, without source. */
 const PASSAGE_MONTHS: readonly number[] = [3, 4, 5, 8, 9, 10, 11];
@@ -25,6 +25,8 @@ const AGREEMENT = 0.75;
 /** A flock lasts: so many profiles within NEAR_MS must tell the same heading within so many degrees. */
 const FEWEST_PROFILES = 3;
 const SAME_HEADING = 45;
+/** Birds are wide and strong echoes: their gates' median width is so many times that of sound ones, their signal no weaker. */
+const BROADER = 1.5;
 /** Another instrument within so long, ms, that differs by so much, m/s, settles it. */
 const BESIDE_MS = 20 * 60_000;
 const BESIDE_DIFFERENCE = 4;
@@ -39,7 +41,8 @@ interface Flight {
 
 /**
  * Adds `migrants-likely` to the band of heights in which birds fly, and `migrants-certain` to its suspect gates where the
- * heading is one that the site file names for the month, or another instrument at the station contradicts them.
+ * heading is one that the site file names for the month, their spectra are as wide as those of birds, or another instrument at
+ * the station contradicts them.
  */
 export function migrants({ block, series, site }: Screened, marks: Uint32Array): void {
   for (const { instrument, profiles } of series) {
@@ -51,6 +54,7 @@ export function migrants({ block, series, site }: Screened, marks: Uint32Array):
       if (!lasts(block, flight, flights)) continue;
       const certain =
         isNamedHeading(block, flight, site) ||
+        echoesLikeBirds(block, flight, marks) ||
         isContradicted(block, flight, marks, series.map((s) => s.profiles).flat());
       markBand(block, marks, flight, certain);
     }
@@ -133,6 +137,22 @@ function isNamedHeading({ timeMs }: ProfileBlock, { profile, toward }: Flight, s
   return site.migration.some(
     (named) => named.months.includes(month) && Math.abs(signedAngle(toward - named.toward)) <= named.spread,
   );
+}
+
+/** Whether the suspect gates have the wide spectra of birds beside the sound gates of their profile; never where none is told. */
+function echoesLikeBirds(block: ProfileBlock, { profile, gates }: Flight, marks: Uint32Array): boolean {
+  const { spectralWidth, signal, offsets, heightAgl, speed } = block;
+  if (spectralWidth === null) return false;
+  const sound: number[] = [];
+  for (let k = offsets[profile]!; k < offsets[profile + 1]!; k++) {
+    const isSound = !isSuspect(marks, k) && (marks[k]! & REJECTING) === 0 && !Number.isNaN(speed[k]!);
+    if (isSound && heightAgl[k]! <= HIGHEST) sound.push(k);
+  }
+  const middle = (column: Float32Array, levels: readonly number[]): number =>
+    median(levels.map((k) => column[k]!).filter((value) => !Number.isNaN(value)));
+  const isBroad = middle(spectralWidth, gates) >= BROADER * middle(spectralWidth, sound);
+  const isWeak = signal !== null && middle(signal, gates) < middle(signal, sound);
+  return isBroad && !isWeak;
 }
 
 /** Whether most of the flight's gates are contradicted by another instrument of the station at the same time. */

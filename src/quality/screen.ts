@@ -72,7 +72,7 @@ export const SCREENS: readonly Screen[] = [
   },
   {
     name: 'signal',
-    words: 'rejects echoes as weak as those out of which the source took no wind',
+    words: 'rejects echoes as weak as those out of which the source took no wind, and averages without a consensus',
     source: 'common practice, without source',
     apply: weakSignal,
   },

@@ -1,5 +1,6 @@
-// Signal: an echo no stronger than those out of which the source itself could take no wind carries none. Common practice,
-// without source; thresholds in absolute terms differ from one instrument to the next.
+// Signal and consensus: an echo no stronger than those out of which the source itself could take no wind carries none, nor does
+// an average on which the soundings disagree. Common practice, without source; thresholds of signal in absolute
+// terms differ from one instrument to the next. (Consensus averaging of profilers: Strauch et al. 1984, from memory.)
 
 import { MARK } from '../profile/index.ts';
 import { quantile, type Screened } from './series.ts';
@@ -11,9 +12,22 @@ const NOISE_SHARE = 0.75;
 /** Where more winds than this would fall, the signal does not tell wind from noise, and the screen stays silent. */
 const MOST_LOST = 0.2;
 
-/** Adds `low-signal` to levels whose echo is as weak as that of gates without wind in the same series. */
+/** On fewer than the first share of the soundings rests no wind; fewer than the second make it doubtful. */
+const LEAST_CONSENSUS = 0.35;
+const SOUND_CONSENSUS = 0.6;
+
+/**
+ * Adds `low-signal` to levels whose echo is as weak as that of gates without wind in the same series, and to those on which
+ * hardly a third of the soundings agree; `few-beams` where they are not many.
+ */
 export function weakSignal({ block, series }: Screened, marks: Uint32Array): void {
-  const { signal, speed, offsets } = block;
+  const { signal, speed, offsets, consensus } = block;
+  if (consensus !== null) {
+    for (let k = 0; k < marks.length; k++) {
+      if (consensus[k]! < LEAST_CONSENSUS) marks[k]! |= MARK['low-signal'];
+      else if (consensus[k]! < SOUND_CONSENSUS) marks[k]! |= MARK['few-beams'];
+    }
+  }
   if (signal === null) return;
   for (const { profiles } of series) {
     const windless: number[] = [];

@@ -15,13 +15,17 @@ interface Told {
   instrument: Instrument;
   /** degrees that the birds fly toward, 11 m/s through the air, from 400 to 900 m in profiles 8 to 15; null: no birds */
   toward: number | null;
+  /** m/s: spectral width where birds fly; 1 elsewhere. */
+  width?: number;
+  /** dB: signal where birds fly; 10 elsewhere. */
+  signal?: number;
 }
 
 /** Scatter of a gate, m/s, the same at every run. */
 const scatter = (n: number): number => 0.8 * (((Math.abs(Math.sin(n * 12.9898)) * 43758.5453) % 1) - 0.5);
 
 /** A night of 10 m/s from 200 degrees with some scatter, with or without birds. */
-function night({ startMs, instrument, toward }: Told, builder = new BlockBuilder()): BlockBuilder {
+function night({ startMs, instrument, toward, width, signal }: Told, builder = new BlockBuilder()): BlockBuilder {
   for (let i = 0; i < 30; i++) {
     const birds = (z: number): boolean => toward !== null && i >= 8 && i < 16 && z >= 400 && z <= 900;
     const wind = heights.map((z, k) => {
@@ -39,6 +43,8 @@ function night({ startMs, instrument, toward }: Told, builder = new BlockBuilder
         heightAgl: heights,
         speed: wind.map(({ u, v }) => speedOf(u, v)),
         direction: wind.map(({ u, v }) => directionOf(u, v)),
+        ...(width === undefined ? {} : { spectralWidth: heights.map((z) => (birds(z) ? width : 1)) }),
+        ...(signal === undefined ? {} : { signal: heights.map((z) => (birds(z) ? signal : 10)) }),
       },
     });
   }
@@ -80,6 +86,14 @@ describe('migrants', () => {
     expect(count(screened(birds, named(310, [4])), certain)).toBeGreaterThan(0);
     expect(count(screened(birds, named(120, [4])), certain)).toBe(0);
     expect(count(screened(birds, named(310, [9])), likely)).toBe(0);
+  });
+
+  it('is certain where the spectra are as wide as those of birds, and the echo no weaker than that of the air', () => {
+    expect(count(screened({ ...birds, width: 2.5 }), certain)).toBeGreaterThan(30);
+    expect(count(screened({ ...birds, width: 2.5, signal: 18 }), certain)).toBeGreaterThan(30);
+    expect(count(screened({ ...birds, width: 2.5, signal: 4 }), certain)).toBe(0);
+    expect(count(screened({ ...birds, width: 1.1 }), certain)).toBe(0);
+    expect(count(screened({ ...birds, width: 1.1 }), likely)).toBeGreaterThan(30);
   });
 
   it('is certain where another instrument at the station contradicts the band', () => {

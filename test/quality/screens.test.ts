@@ -81,6 +81,16 @@ describe('signal', () => {
     expect(has(block, 0, 'low-signal').lastIndexOf(true)).toBe(11);
   });
 
+  it('rejects winds without a consensus, and doubts those of a poor one', () => {
+    const profile = levels(() => NaN);
+    const consensus = heightAgl.map((_, k) => (k === 5 ? 0.3 : k === 6 ? NaN : k === 7 ? 0.5 : 0.8));
+    const { block } = screen(blockOf([{ ...profile, levels: { ...profile.levels, consensus } }]));
+    expect(has(block, 0, 'low-signal').indexOf(true)).toBe(5);
+    expect(has(block, 0, 'low-signal').lastIndexOf(true)).toBe(5);
+    expect(has(block, 0, 'few-beams').indexOf(true)).toBe(7);
+    expect(has(block, 0, 'few-beams').lastIndexOf(true)).toBe(7);
+  });
+
   it('is silent where the signal does not tell wind from noise', () => {
     const { feeds } = screen(blockOf([levels(() => -20)]));
     expect(feeds[0]!.byMark['low-signal']).toBeUndefined();

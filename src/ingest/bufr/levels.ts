@@ -14,6 +14,9 @@ const COARSENESS = 2;
 const TEST_FAILED = 8 | 4;
 const TEST_INCONCLUSIVE = 2;
 
+/** A consensus of fewer soundings says nothing in shares. */
+const FEWEST_OF_CONSENSUS = 4;
+
 /** Roles whose doubted or rejected values make the level's wind doubtful or rejected. */
 const BEARS_ON_WIND: ReadonlySet<number> = new Set([
   ROLE.pressure,
@@ -58,6 +61,8 @@ const COLUMNS = [
   'temperature',
   'specificHumidity',
   'speedUncertainty',
+  'consensus',
+  'spectralWidth',
 ] as const;
 type Columns = Record<(typeof COLUMNS)[number], number[]>;
 
@@ -137,6 +142,8 @@ export class LevelGatherer {
     columns.temperature.push(value[ROLE.temperature]!);
     columns.specificHumidity.push(this.#humidity(pressure));
     columns.speedUncertainty.push(this.#uncertainty());
+    columns.consensus.push(value[ROLE.agreeing]!);
+    columns.spectralWidth.push(value[ROLE.spectralWidth]!);
     this.#marks.push(this.#mark());
   }
 
@@ -215,8 +222,17 @@ export class LevelGatherer {
         marks[k]! |= MARK['below-ground'];
       }
     }
-    return { heightAgl, pressure, ...rest, mark: marks };
+    return { heightAgl, pressure, ...rest, consensus: sharesOf(rest.consensus), mark: marks };
   }
+}
+
+/**
+ * Shares out of how many soundings agree on each level's wind. The code gives the number alone, so the level on which the
+ * most agree stands for all of them.
+ */
+function sharesOf(agreeing: readonly number[]): number[] {
+  const most = agreeing.reduce((greatest, count) => (count > greatest ? count : greatest), 0);
+  return agreeing.map((count) => (most >= FEWEST_OF_CONSENSUS ? count / most : NaN));
 }
 
 function firstKnown(...values: readonly number[]): number {

@@ -36,6 +36,8 @@ const LEVEL_ROLES = [
   'mixingRatio',
   'signal',
   'speedUncertainty',
+  'consensus',
+  'spectralWidth',
 ] as const satisfies readonly Role[];
 /** What a level can have beside its height. */
 export type LevelRole = (typeof LEVEL_ROLES)[number];

@@ -17,6 +17,8 @@ export type Role =
   | 'mixingRatio'
   | 'signal'
   | 'speedUncertainty'
+  | 'consensus'
+  | 'spectralWidth'
   | 'height';
 
 interface Meaning {
@@ -25,6 +27,8 @@ interface Meaning {
   /** Names in common use, lower case, in order of preference. */
   readonly names: string;
   readonly quantities: readonly Quantity[];
+  /** What the long name says where neither name tells. */
+  readonly longName?: RegExp;
 }
 
 const MEANINGS: Readonly<Record<Role, Meaning>> = {
@@ -96,6 +100,18 @@ const MEANINGS: Readonly<Record<Role, Meaning>> = {
     names: 'wind_speed_uncertainty speed_uncertainty wspd_uncertainty',
     quantities: ['speed'],
   },
+  consensus: {
+    standardNames: '',
+    names: 'consensus consensus_fraction consensus_percent consensus_percentage wind_consensus horizontal_consensus',
+    quantities: ['fraction'],
+    longName: /\bconsensus\b(?!.*\b(?:number|count|flag|window|minimum|threshold)\b)/iu,
+  },
+  spectralWidth: {
+    standardNames: '',
+    names: 'spectral_width spectrum_width doppler_spectral_width doppler_spectrum_width spectralwidth spectrumwidth',
+    quantities: ['speed'],
+    longName: /\bspectr(?:al|um) width\b/iu,
+  },
   height: {
     standardNames:
       'height height_above_ground_level altitude height_above_mean_sea_level geopotential_height height_above_geopotential_datum height_above_reference_ellipsoid geopotential',
@@ -127,7 +143,7 @@ export interface UnknownUnit {
  * @param unknown gathers variables left out because of their unit
  */
 export function candidates(dataset: Dataset, role: Role, unknown: UnknownUnit[] = []): Finding[] {
-  const { standardNames, names, quantities } = MEANINGS[role];
+  const { standardNames, names, quantities, longName } = MEANINGS[role];
   const byStandard = standardNames.split(' ');
   const byName = names.split(' ');
   const found: { finding: Finding; rank: number }[] = [];
@@ -137,7 +153,9 @@ export function candidates(dataset: Dataset, role: Role, unknown: UnknownUnit[] 
     const standardRank = standardName === '' ? -1 : byStandard.indexOf(standardName.replace(' ', '|'));
     const nameRank = byName.indexOf(variable.name.toLowerCase());
     // A standard name for something else outweighs a likely name.
-    const rank = standardRank >= 0 ? standardRank : standardName === '' && nameRank >= 0 ? 100 + nameRank : -1;
+    const byWords = longName?.test(textOf(variable.attributes, 'long_name')) === true && variable.dimensions.length > 0;
+    const likelyRank = nameRank >= 0 ? 100 + nameRank : byWords ? 200 : -1;
+    const rank = standardRank >= 0 ? standardRank : standardName === '' ? likelyRank : -1;
     if (rank < 0) continue;
     const units = textOf(variable.attributes, 'units');
     const unit = unitIn(units);

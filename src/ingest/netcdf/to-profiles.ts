@@ -144,6 +144,8 @@ function blockOf(plan: Plan, piece: Piece, options: ReadOptions, problems: Probl
     specificHumidity: humidity.specificHumidity,
     signal: read('signal'),
     speedUncertainty: read('speedUncertainty'),
+    consensus: read('consensus'),
+    spectralWidth: read('spectralWidth'),
     mark: marksOf(plan, piece, ground.downward) ?? new Uint32Array(ground.heightAgl.length),
   };
   // Heights common to all profiles pad nothing.
@@ -188,7 +190,8 @@ function columnOf(
     return null;
   }
   if (values === null) return null;
-  if (unit === null && role !== 'signal') {
+  if (role === 'consensus') inShares(values);
+  else if (unit === null && role !== 'signal' && role !== 'spectralWidth') {
     const assumed = assumedUnit(role, sampleOf(values));
     notes.push(`${variable.name} has no unit: taken as ${assumed.words}`);
     const { scale, offset } = assumed.unit;
@@ -201,6 +204,11 @@ function columnOf(
     for (let k = 0; k < values.length; k++) values[k] = -values[k]!;
   }
   return values;
+}
+
+/** Shares written as per cent without saying so become shares. */
+function inShares(values: Float32Array): void {
+  if (values.some((value) => value > 1.5)) for (let k = 0; k < values.length; k++) values[k]! /= 100;
 }
 
 /** Enough values to judge their range by. */

@@ -80,4 +80,20 @@ export const OUT_QUANTITIES: readonly OutQuantity[] = [
     ucum: 'm/s',
     title: 'Standard uncertainty of the wind speed',
   },
+  {
+    column: 'consensus',
+    name: 'consensus',
+    standardName: '',
+    units: '1',
+    ucum: '1',
+    title: 'Share of soundings in the consensus',
+  },
+  {
+    column: 'spectralWidth',
+    name: 'spectral_width',
+    standardName: '',
+    units: 'm s-1',
+    ucum: 'm/s',
+    title: 'Doppler spectral width',
+  },
 ];

@@ -244,6 +244,22 @@ describe('wind profilers', () => {
     expect([...profile!.mark].map((bit) => (bit & MARK['source-doubts']) !== 0)).toEqual([false, true, false]);
   });
 
+  it('consensus, as a share of the most that agree, and spectral width', async () => {
+    const bits = start().coded(8, 3);
+    for (const [k, agreeing] of [8, 10, 4].entries()) {
+      bits.value(220 + 100 * k, 0, -1000, 17).coded(16, agreeing);
+      bits.value(3, 1, -4096, 13).value(4, 1, -4096, 13);
+      bits.coded(16, 2).value(1.5, 1, 0, 8);
+    }
+    const [profile] = await read({
+      descriptors: [...HEADER, '106000', '031001', '007007', '008022', '011003', '011004', '008022', '021017'],
+      data: bits,
+    });
+    // The count before the wind is the wind's.
+    expect([...profile!.consensus!].map((share) => Number(share.toFixed(3)))).toEqual([0.8, 1, 0.4]);
+    expect([...profile!.spectralWidth!]).toEqual([1.5, 1.5, 1.5]);
+  });
+
   it('levels spelled out one after the other, heights above the station, tests of the sender', async () => {
     const levels = [
       [100, 0],

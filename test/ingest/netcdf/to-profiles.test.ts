@@ -203,6 +203,20 @@ describe('grids of times and heights', () => {
     expect([...profiles[0]!.verticalSpeed!]).toEqual([-1, -2, -3]);
   });
 
+  it('reads consensus and spectral width by name or by what the long name says', async () => {
+    const { profiles, codes } = await read(
+      grid({
+        spectral_width: floats(['time', 'height'], [50, 60, 70, 80, 90, 100], { units: 'cm/s' }),
+        c_h: floats(['time', 'height'], [90, 80, 70, 60, 50, 40], { long_name: 'Consensus of the horizontal wind' }),
+        n_h: floats(['time', 'height'], [9, 8, 7, 6, 5, 4], { long_name: 'Consensus number of beams' }),
+      }),
+    );
+    expect(codes).toEqual([]);
+    expect(profiles[1]!.spectralWidth![2]).toBeCloseTo(1, 6);
+    expect(profiles[1]!.consensus![2]).toBeCloseTo(0.4, 6);
+    expect((await read(grid())).profiles[0]!).toMatchObject({ consensus: null, spectralWidth: null });
+  });
+
   it('names the variables of a file without wind, the unit it could not use, and a calendar that is not real', async () => {
     const unit = await read(
       grid({ wind_speed: floats(['time', 'height'], [1, 2, 3, 4, 5, 6], { units: 'furlongs per fortnight' }) }),
