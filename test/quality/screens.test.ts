@@ -10,6 +10,37 @@ import { blockOf, jetNight, marksOf, MINUTE_MS, START_MS, type Made } from './su
 const has = (block: ProfileBlock, i: number, mark: keyof typeof MARK): boolean[] =>
   marksOf(block, i).map((bits) => (bits & MARK[mark]) !== 0);
 
+describe('gross limits', () => {
+  it('marks pressures that grossly contradict their heights, and lets cyclones, cold and unknown ground pass', () => {
+    const levels = (heightAgl: number[], hectopascals: number[]): ProfileBlock =>
+      blockOf([
+        {
+          timeMs: START_MS,
+          levels: {
+            heightAgl,
+            pressure: hectopascals.map((value) => value * 100),
+            speed: heightAgl.map(() => 5),
+            direction: heightAgl.map(() => 200),
+          },
+        },
+      ]);
+    const impossible = (block: ProfileBlock): number[] =>
+      [...screen(block, { without: ['vertical-continuity'] }).block.mark].map((bits) =>
+        Number(bits === MARK.impossible),
+      );
+    // The station stands at 120 m. 5574 m is the standard height of 500 hPa, 16180 m that of 100 hPa.
+    expect(impossible(levels([0, 5450, 16_060], [1000, 500, 100]))).toEqual([0, 0, 0]);
+    expect(impossible(levels([0, 4800, 15_000], [1065, 500, 100]))).toEqual([0, 0, 0]);
+    expect(impossible(levels([0, 5100, 5450], [880, 500, 850]))).toEqual([0, 0, 1]);
+    // Feet taken for metres.
+    expect(impossible(levels([100, 5450 / 0.3048], [988, 500]))).toEqual([0, 1]);
+    const block = levels([10, 1500, 9000], [560, 470, 850]);
+    const unplaced = { ...block, stations: block.stations.map((station) => ({ ...station, elevation: NaN })) };
+    expect(impossible(block)).toEqual([1, 1, 1]);
+    expect(impossible(unplaced)).toEqual([0, 0, 1]);
+  });
+});
+
 describe('duplicates', () => {
   const levels = { heightAgl: [100, 200, 300], speed: [5, 6, 7], direction: [200, 200, 200] };
   const at = (more: Partial<Made> & { levels?: Made['levels'] }): Made => ({ levels, timeMs: START_MS, ...more });

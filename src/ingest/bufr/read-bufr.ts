@@ -9,6 +9,7 @@ import { compile } from './compile.ts';
 import { compressedCoding } from './compressed.ts';
 import { Elements } from './elements.ts';
 import { findMessages, type Found, type FoundMessage } from './find-messages.ts';
+import { joinModes } from './join-modes.ts';
 import { plainCoding } from './plain.ts';
 import type { Program } from './program.ts';
 import { run, type RunState } from './run.ts';
@@ -61,7 +62,7 @@ class MessageReader {
   }
 
   take(): Part {
-    const part = { block: this.#builder.finish(), problems: this.#problems };
+    const part = { block: joinModes(this.#builder.finish()), problems: this.#problems };
     this.#builder = new BlockBuilder();
     this.#problems = [];
     return part;

@@ -4,7 +4,7 @@ import { describe, expect, it } from 'vitest';
 import { dewPointOf, saturationVapourPressure } from '../../../src/air/index.ts';
 import { MARK, type Profile } from '../../../src/profile/index.ts';
 import { PLAIN_SITE, type Site } from '../../../src/site/index.ts';
-import { BitWriter, message, type MessageParts } from '../../support/bufr-writer.ts';
+import { BitWriter, joined, message, type MessageParts } from '../../support/bufr-writer.ts';
 import { readBytes } from './support.ts';
 import { HEADER, header, report, WIND } from './templates.ts';
 
@@ -277,6 +277,34 @@ describe('wind profilers', () => {
     expect(profile!.instrument).toBe('wind-profiler');
     expect((profile!.mark[1]! & MARK['source-rejects']) !== 0).toBe(true);
     expect((profile!.mark[2]! & MARK['source-doubts']) !== 0).toBe(true);
+  });
+
+  it('reports of two modes become one profile, in which the finer gates count where both reach', async () => {
+    const mode = (gates: number[], speed: number): Uint8Array => {
+      const bits = start().coded(4, 6).coded(8, gates.length);
+      for (const gate of gates) bits.value(gate, 0, -1000, 17).value(200, 0, 0, 9).value(speed, 1, 0, 12);
+      return message({
+        descriptors: [...HEADER, '002003', '103000', '031001', '007007', '011001', '011002'],
+        data: bits,
+      });
+    };
+    const low = mode([220, 320, 420, 520], 8);
+    const high = mode([470, 770, 1070], 12);
+    for (const order of [
+      [low, high],
+      [high, low],
+    ]) {
+      const { profiles, problems } = await readBytes('x', joined(...order));
+      expect(problems).toEqual([]);
+      expect(profiles).toHaveLength(1);
+      expect([...profiles[0]!.heightAgl]).toEqual([100, 200, 300, 350, 400, 650, 950]);
+      expect([...profiles[0]!.speed]).toEqual([8, 8, 8, 12, 8, 12, 12]);
+      expect([...profiles[0]!.mark].map((bits) => (bits & MARK.doubled) !== 0).indexOf(true)).toBe(3);
+      expect([...profiles[0]!.mark].map((bits) => (bits & MARK.doubled) !== 0).lastIndexOf(true)).toBe(3);
+      expect(profiles[0]!.notes.join(' ')).toContain('several modes');
+    }
+    // The same report twice stays two reports: the screens keep the better one.
+    expect((await readBytes('x', joined(low, low))).profiles).toHaveLength(2);
   });
 
   it('two times in the header are a period; a time after levels begins another profile', async () => {
