@@ -260,7 +260,7 @@ export class Board {
     this.feeds = await this.worker.feeds();
     this.dataVersion++;
     this.phase = this.feeds.length > 0 ? 'ready' : 'empty';
-    if (this.feed === undefined) this.feedKey = fullest(this.feeds)?.key ?? '';
+    if (this.feed === undefined) this.feedKey = mainFeed(this.feeds, this.site)?.key ?? '';
   }
 
   lookAtNewest(): void {
@@ -281,6 +281,12 @@ async function siteText(file: File): Promise<string | null> {
   if (!file.name.toLowerCase().endsWith('.json') || file.size > LARGEST_SITE) return null;
   const text = await file.text();
   return /"(stations|turbines|time_zone)"\s*:/.test(text) ? text : null;
+}
+
+/** The fullest feed of the first station in the site file that sends any, else the fullest of all. */
+function mainFeed(feeds: readonly FeedState[], site: Site): FeedState | undefined {
+  const first = site.stations.find(({ id }) => feeds.some(({ station }) => station.id === id));
+  return fullest(first === undefined ? feeds : feeds.filter(({ station }) => station.id === first.id));
 }
 
 /** The feed that shows most of a night: many profiles, each of a fair number of levels. */

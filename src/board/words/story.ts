@@ -83,10 +83,18 @@ function trackPieces(story: JetStory, nose: Nose, units: DisplayUnits, times: Ti
     { text: ', ' },
     { text: `${speedText(noseSpeed, units)} ${units.speed}`, weight: 'strong' },
     {
-      text: `${from === '' ? '' : ` from the ${from}`}, ${track.phase}${heightWords(track, units)}${turningWords(story)}; ${inHundred(confidence)} sure.`,
+      text: `${from === '' ? '' : ` from the ${from}`}, ${PHASE_WORDS[track.phase]}${heightWords(track, units)}${turningWords(story)}; ${inHundred(confidence)} sure.`,
     },
   ];
 }
+
+/** A jet that is steady in strength may yet rise or sink. */
+const PHASE_WORDS: Readonly<Record<JetTrack['phase'], string>> = {
+  building: 'building',
+  steady: 'steady in strength',
+  easing: 'easing',
+  ended: 'ended',
+};
 
 const TURNING_WORDS: Readonly<Record<TurningVerdict, string>> = {
   inertial: 'at the inertial rate',
