@@ -65,3 +65,7 @@ export {
 } from './section-extent.ts';
 export { sectionCells, sectionCsv, type SectionCell } from './section-rows.ts';
 export { drawSectionSheet, sectionPng, sheetFrame, type SectionSheet, type SheetSize } from './section-sheet.ts';
+export { drawFigureSheet, type Area, type FigureSheet } from './figure.ts';
+export { drawMonthMatrix, MONTH_NAMES, type MonthMatrix } from './month-matrix.ts';
+export { drawHistogram, type HistogramChart, type HistogramSeries } from './histogram.ts';
+export { drawRose, type Rose } from './rose.ts';

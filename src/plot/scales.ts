@@ -5,10 +5,10 @@ import { bytesOf, oklabOf, oklchOf, type Bytes, type Oklab, type Oklch } from '.
 import type { ThemeName } from './theme.ts';
 
 /**
- * `speed`, `moisture`, `warmth`: rise from weak to strong. `signed`: two hues about a neutral middle. `compass`: once
+ * `speed`, `moisture`, `warmth`: rise from weak to strong. `share`: the same for how often, in one hue. `signed`: two hues about a neutral middle. `compass`: once
  * round the compass without a seam.
  */
-export type ScaleName = 'speed' | 'moisture' | 'warmth' | 'signed' | 'compass';
+export type ScaleName = 'speed' | 'moisture' | 'warmth' | 'share' | 'signed' | 'compass';
 export type ScaleKind = 'rising' | 'two-sided' | 'cyclic';
 
 export const SCALE_STEPS = 256;
@@ -72,6 +72,14 @@ const WARMTH_LIGHT: readonly Oklch[] = [
   [0.4, 0.13, 15],
   [0.22, 0.07, 35],
 ];
+const SHARE_DARK: readonly Oklch[] = [
+  [0.25, 0.03, 255],
+  [0.95, 0.03, 220],
+];
+const SHARE_LIGHT: readonly Oklch[] = [
+  [0.92, 0.025, 220],
+  [0.22, 0.06, 255],
+];
 // One hue, lightness only, for the deep-red theme: there a signed value rises from most negative to most positive.
 const RED: readonly Oklch[] = [
   [0.2, 0.08, 27],
@@ -106,14 +114,18 @@ const KINDS: Readonly<Record<ScaleName, ScaleKind>> = {
   speed: 'rising',
   moisture: 'rising',
   warmth: 'rising',
+  share: 'rising',
   signed: 'two-sided',
   compass: 'cyclic',
 };
 
-const RISING: Readonly<Record<'speed' | 'moisture' | 'warmth', Readonly<Record<ThemeName, readonly Oklch[]>>>> = {
+const RISING: Readonly<
+  Record<'speed' | 'moisture' | 'warmth' | 'share', Readonly<Record<ThemeName, readonly Oklch[]>>>
+> = {
   speed: { dark: SPEED_DARK, light: SPEED_LIGHT, red: RED },
   moisture: { dark: MOISTURE_DARK, light: MOISTURE_LIGHT, red: RED },
   warmth: { dark: WARMTH_DARK, light: WARMTH_LIGHT, red: RED },
+  share: { dark: SHARE_DARK, light: SHARE_LIGHT, red: RED },
 };
 
 const made = new Map<string, ColourScale>();

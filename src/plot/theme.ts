@@ -24,11 +24,12 @@ export interface Theme {
   readonly day: string;
   readonly dusk: string;
   readonly night: string;
-  /** Bytes of `ground`, for painting pixels. */
+  /** Bytes of `ground`, for painting pixels, and of `ink`. */
   readonly groundBytes: Bytes;
+  readonly inkBytes: Bytes;
 }
 
-type Token = Exclude<keyof Theme, 'name' | 'groundBytes'>;
+type Token = Exclude<keyof Theme, 'name' | 'groundBytes' | 'inkBytes'>;
 
 const TOKENS: Readonly<Record<ThemeName, Readonly<Record<Token, Oklch>>>> = {
   dark: {
@@ -78,5 +79,5 @@ function themeOf(name: ThemeName): Theme {
   const colours = Object.fromEntries(
     Object.entries(tokens).map(([token, colour]) => [token, hexOf(bytesOf(colour))]),
   ) as Record<Token, string>;
-  return { name, ...colours, groundBytes: bytesOf(tokens.ground) };
+  return { name, ...colours, groundBytes: bytesOf(tokens.ground), inkBytes: bytesOf(tokens.ink) };
 }

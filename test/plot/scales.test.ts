@@ -11,7 +11,7 @@ import {
 } from '../../src/plot/index.ts';
 import { DEFICIENCIES, greyOf, lightnessOf, seenWith } from './colour-vision.ts';
 
-const RISING: ScaleName[] = ['speed', 'moisture', 'warmth'];
+const RISING: ScaleName[] = ['speed', 'moisture', 'warmth', 'share'];
 const THEME_NAMES: ThemeName[] = ['dark', 'light', 'red'];
 const COLOURED: ThemeName[] = ['dark', 'light'];
 
