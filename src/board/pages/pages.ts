@@ -23,5 +23,6 @@ export interface Page {
 export const PAGES: readonly Page[] = [
   { path: 'tonight', title: 'Tonight', load: () => Promise.resolve({ default: Tonight }) },
   { path: 'rotor', title: 'Rotor', load: () => import('./Rotor.svelte') },
+  { path: 'nights', title: 'Nights', load: () => import('./Nights.svelte') },
   { path: 'feeds', title: 'Feeds', load: () => import('./Feeds.svelte') },
 ];

@@ -24,6 +24,7 @@ export interface ReadingJob extends ReadingProgress {
 /** What was open and looked at, to come back to. */
 interface Kept {
   readonly files: readonly OpenFile[];
+  readonly tables: readonly OpenFile[];
   readonly site: { readonly text: string; readonly name: string } | null;
   readonly demo: string;
   readonly feedKey: string;
@@ -48,6 +49,8 @@ export class Board {
   demo = $state('');
   demoList = $state.raw<DemoList>({ opens: '', nights: [] });
   files = $state.raw<readonly OpenedFile[]>([]);
+  /** Tables that a scan wrote, for the page of nights. */
+  tables = $state.raw<readonly OpenFile[]>([]);
   feeds = $state.raw<readonly FeedState[]>([]);
   feedKey = $state('');
   /** UTC ms: the moment looked at; nothing later is shown. */
@@ -114,16 +117,19 @@ export class Board {
     const before = this.#kept();
     const sites: { text: string; name: string }[] = [];
     const others: OpenFile[] = [];
-    for (const file of chosen) {
-      const text = await siteText(file);
-      if (text === null) others.push({ name: file.name, blob: file, writtenMs: file.lastModified });
-      else sites.push({ text, name: file.name });
+    const tables: OpenFile[] = [];
+    const files = chosen.map((file) => ({ name: file.name, blob: file, writtenMs: file.lastModified }));
+    const areTables = await this.worker.areArchiveFiles(files);
+    for (const [k, file] of files.entries()) {
+      const text = areTables[k] === true ? null : await siteText(file.blob);
+      if (text !== null) sites.push({ text, name: file.name });
+      else (areTables[k] === true ? tables : others).push(file);
     }
     this.notice = null;
     // The demo gives way to files of one's own; more of these join those already open.
     const lists = await this.worker.stationLists(others);
     const hasProfiles = lists.includes(false);
-    const leaveDemo = before.demo !== '' && hasProfiles;
+    const leaveDemo = before.demo !== '' && (hasProfiles || tables.length > 0);
     const site = sites.at(-1) ?? (leaveDemo ? null : before.site);
     const kept = leaveDemo ? this.files.filter(({ stations }) => stations > 0) : before.files;
     // A list of stations may place what was read before it came.
@@ -133,8 +139,15 @@ export class Board {
       this.demo = kept === before.files ? before.demo : '';
       const remaining = kept.filter((file) => !others.some(({ name }) => name === file.name));
       await this.#read([...remaining, ...others]);
-    } else await this.#read(others);
+    } else if (others.length > 0) await this.#read(others);
     if (hasProfiles || this.feed === undefined) this.lookAtNewest();
+    if (tables.length > 0) {
+      this.tables = [
+        ...this.tables.filter(({ name }) => !tables.some((table) => stemOf(table.name) === stemOf(name))),
+        ...tables,
+      ];
+      location.hash = '#/nights';
+    }
     this.notice = {
       words: `Opened ${chosen.map((file) => file.name).join(', ')}.`,
       undo: () => void this.#goBack(before),
@@ -145,13 +158,19 @@ export class Board {
   /** Closes one file; the others stay. */
   async closeFile(name: string): Promise<void> {
     const before = this.#kept();
-    await this.#goBack({ ...before, files: before.files.filter((file) => file.name !== name) });
+    const others = ({ name: other }: OpenFile): boolean => other !== name;
+    await this.#goBack({ ...before, files: before.files.filter(others), tables: before.tables.filter(others) });
     this.notice = { words: `Closed ${name}.`, undo: () => void this.#goBack(before) };
   }
 
   /** Reads everything anew, after a change of what the reckoning rests on. */
   async reopen(): Promise<void> {
     await this.#goBack(this.#kept());
+  }
+
+  /** A number for a piece of work of the worker, to cancel it by. */
+  nextJob(): number {
+    return ++this.#jobs;
   }
 
   cancelReading(): void {
@@ -213,15 +232,16 @@ export class Board {
   }
 
   #kept(): Kept {
-    const { files, demo, feedKey, atMs } = this;
-    return { files, site: this.#siteFile, demo, feedKey, atMs };
+    const { files, tables, demo, feedKey, atMs } = this;
+    return { files, tables, site: this.#siteFile, demo, feedKey, atMs };
   }
 
   /** Reads what was open again and looks where the reader looked. */
-  async #goBack({ files, site, demo, feedKey, atMs }: Kept): Promise<void> {
+  async #goBack({ files, tables, site, demo, feedKey, atMs }: Kept): Promise<void> {
     this.notice = null;
     await this.#openSite(site);
     this.files = [];
+    this.tables = tables;
     this.demo = demo;
     this.feedKey = feedKey;
     await this.#read(files);
@@ -241,7 +261,7 @@ export class Board {
 
   async #read(files: readonly OpenFile[]): Promise<void> {
     if (files.length > 0) {
-      const number = ++this.#jobs;
+      const number = this.nextJob();
       const tell = (progress: ReadingProgress): void => {
         this.job = { ...progress, number, files: files.length };
       };
@@ -273,6 +293,11 @@ export class Board {
     this.live = now >= feed.lastMs && now - feed.lastMs < LIVE_MS;
     this.atMs = this.live ? now : feed.lastMs;
   }
+}
+
+/** A scan writes each table under one name with several endings. */
+function stemOf(name: string): string {
+  return name.replace(/\.[^.]*$/u, '');
 }
 
 /** The text of a file that is a site file: JSON with a site's keys. Anything else is a matter for the readers. */

@@ -1,20 +1,11 @@
-import { spawn } from 'node:child_process';
-import {
-  chmodSync,
-  existsSync,
-  mkdtempSync,
-  readdirSync,
-  readFileSync,
-  rmSync,
-  truncateSync,
-  writeFileSync,
-} from 'node:fs';
+import { chmodSync, mkdtempSync, readdirSync, readFileSync, rmSync, truncateSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { parquetReadObjects } from 'hyparquet';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { duskveer } from '../command-line.ts';
+import { killMidway, resultBytes } from './kill-midway.ts';
 import { dayName, dayTable, writeDays } from './made-files.ts';
 
 const folder = mkdtempSync(join(tmpdir(), 'duskveer-scan-'));
@@ -25,16 +16,7 @@ const OPTIONS = ['--criteria', 'whiteman-1997', '--hub', '110', '--diameter', '1
 const scan = (out: string, ...more: string[]): ReturnType<typeof duskveer> =>
   duskveer(['scan', days, '--out', join(folder, out), ...OPTIONS, ...more]);
 
-/** Every file of a result by name, with its bytes. */
-function bytesOf(out: string): Record<string, string> {
-  const names = readdirSync(join(folder, out), { recursive: true, encoding: 'utf8' }).sort();
-  return Object.fromEntries(
-    names.flatMap((name) => {
-      const path = join(folder, out, name);
-      return name === 'parts' ? [] : [[name, readFileSync(path).toString('base64')]];
-    }),
-  );
-}
+const bytesOf = (out: string): Record<string, string> => resultBytes(join(folder, out));
 
 const csv = (out: string, table: string): Record<string, string>[] => {
   const [heading, ...lines] = readFileSync(join(folder, out, `${table}.csv`), 'utf8')
@@ -94,16 +76,9 @@ describe('scan', () => {
   });
 
   it('goes on where it was killed and comes to the same bytes', async () => {
-    const launcher = fileURLToPath(new URL('../../../src/relay/duskveer.mjs', import.meta.url));
-    const args = [launcher, 'scan', days, '--out', join(folder, 'killed'), ...OPTIONS, '--workers', '1'];
-    const child = spawn(process.execPath, args, { stdio: 'ignore' });
+    const args = ['scan', days, '--out', join(folder, 'killed'), ...OPTIONS, '--workers', '1'];
+    expect(await killMidway(args, join(folder, 'killed'), 2)).toBeLessThan(8);
     const parts = join(folder, 'killed/parts');
-    const ended = new Promise((resolve) => child.on('close', resolve));
-    const done = (): number =>
-      existsSync(parts) ? readdirSync(parts).filter((name) => name.endsWith('.part')).length : 0;
-    while (done() < 2 && child.exitCode === null) await new Promise((resolve) => setTimeout(resolve, 5));
-    child.kill('SIGKILL');
-    await ended;
     // As if the journal had been cut in the middle of a line, and a part in the middle of its bytes.
     writeFileSync(join(parts, 'journal.jsonl'), '{"part":"torn', { flag: 'a' });
     const { code, err } = await scan('killed', '--workers', '2');
