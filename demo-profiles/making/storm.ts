@@ -1,9 +1,10 @@
 // Ashwillow Plain, an invented station on invented plains: a summer night in which the jet brings moist air northward under
-// steep lapse rates. Soundings in the evening and at midnight, three profilers around.
+// steep lapse rates, in two surges. Soundings in the evening and at midnight, a tower, three profilers around.
 
 import { columnWinds, windFrom, type Wind } from './air-column.ts';
 import type { AtmospherePlan } from './atmosphere.ts';
 import { at, everyMinutes, ramp } from './clock.ts';
+import { mastCsv } from './mast.ts';
 import { demoNight, siteFileStation, type DemoNight, type Place } from './night.ts';
 import { profilerFile } from './profiler-file.ts';
 import { profilerRecord } from './profiler.ts';
@@ -23,8 +24,8 @@ interface StormStation extends Place {
   /** The jet weakens northward, and the streams of the two southern stations run together. */
   readonly strength: number;
   readonly turned: number;
-  /** When the moist air arrives. */
-  readonly moistMs: number;
+  /** When each surge of moist air begins to arrive. */
+  readonly moistMs: readonly [number, number];
 }
 
 const ASHWILLOW: StormStation = {
@@ -36,18 +37,18 @@ const ASHWILLOW: StormStation = {
   seed: 862301,
   strength: 0.86,
   turned: 0,
-  moistMs: at('2024-06-28T05:00Z'),
+  moistMs: [at('2024-06-28T04:40Z'), at('2024-06-28T07:00Z')],
 };
 const DRY_FORK: StormStation = {
   id: 'dry-fork',
   name: 'Dry Fork',
-  latitude: 38.5,
-  longitude: -97.9,
+  latitude: 38.4,
+  longitude: -97.45,
   elevation: 460,
   seed: 862302,
   strength: 1,
   turned: 7,
-  moistMs: at('2024-06-28T03:10Z'),
+  moistMs: [at('2024-06-28T02:20Z'), at('2024-06-28T05:00Z')],
 };
 const LONG_SLOUGH: StormStation = {
   id: 'long-slough',
@@ -58,7 +59,7 @@ const LONG_SLOUGH: StormStation = {
   seed: 862303,
   strength: 1.02,
   turned: -6,
-  moistMs: at('2024-06-28T02:50Z'),
+  moistMs: [at('2024-06-28T01:50Z'), at('2024-06-28T04:30Z')],
 };
 
 /** Southerly low down, westerly aloft: a wind that turns and freshens with height, with a core below a kilometre. */
@@ -106,11 +107,16 @@ function atmosphere(station: StormStation): AtmospherePlan {
     thetaAbove,
     groundCooling: (timeMs) => 2.6 * Math.sqrt(nightHours(timeMs)),
     coolingDepth: (timeMs) => 90 + 22 * nightHours(timeMs),
-    broughtHumidity: (timeMs) => 0.0026 * ramp(timeMs, station.moistMs, station.moistMs + 1.2 * HOUR),
+    broughtHumidity: (timeMs) =>
+      station.moistMs.reduce((sum, startMs) => sum + SURGE * ramp(timeMs, startMs, startMs + SURGE_TAKES), 0),
     broughtHeight: 650,
     broughtWidth: 600,
   };
 }
+
+/** kg/kg that each surge brings at the height where it is strongest, and how long it takes to come, ms. */
+const SURGE = 0.0021;
+const SURGE_TAKES = 1.1 * HOUR;
 
 const TRIANGLE = [ASHWILLOW, DRY_FORK, LONG_SLOUGH];
 
@@ -121,6 +127,7 @@ const SITE = {
   stations: [
     ...TRIANGLE.map((station) => siteFileStation(station.id, `${station.name} profiler`, 'wind-profiler', station)),
     siteFileStation('ashwillow-sonde', 'Ashwillow Plain soundings', 'radiosonde', ASHWILLOW),
+    siteFileStation('ashwillow-tower', 'Ashwillow Plain tower', 'mast', ASHWILLOW),
   ],
   turbines: [],
   neighbours: [TRIANGLE.map((station) => station.id)],
@@ -170,6 +177,12 @@ export function storm(): DemoNight {
       'long-slough.nc': profiler(LONG_SLOUGH, 862306, true),
       'ashwillow-evening.csv': sounding(862307, '2024-06-27T23:30Z'),
       'ashwillow-midnight.csv': sounding(862308, '2024-06-28T05:30Z'),
+      'ashwillow-tower.csv': mastCsv(atmosphere(ASHWILLOW), {
+        seed: 862309,
+        station: 'ashwillow-tower',
+        heights: [10, 60, 140, 240, 320],
+        timesMs: everyMinutes(20, START, END),
+      }),
     },
   );
 }

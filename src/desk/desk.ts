@@ -1,8 +1,7 @@
 // The engine: takes profiles and a site, gives the state of a night. Pure and deterministic, no clock, no I/O; the same
 // code in a browser's worker and in Node.
 
-import type { LightSpan } from '../air/index.ts';
-import { lightSpans } from '../air/index.ts';
+import { lightSpans, type LightSpan } from '../air/index.ts';
 import {
   criteriaOf,
   findJets,
@@ -14,7 +13,7 @@ import {
   type JetTrack,
   type StorySetting,
 } from '../jet/index.ts';
-import { moistureOf, type MoistureNumbers } from '../moisture/index.ts';
+import type { MoistureNumbers } from '../moisture/index.ts';
 import {
   MARK,
   profileAt,
@@ -32,8 +31,11 @@ import { farmThrough, type DiscSeries, type FarmState } from './farm.ts';
 import type { FeedName } from './feed-name.ts';
 import { FeedStore, type Acceptance } from './feed-store.ts';
 import { inflowState, windTooOld, type InflowQuestion, type InflowState, type NoInflow } from './inflow.ts';
+import { MoistDesk } from './moist-desk.ts';
+import type { MoistureQuestion, MoistureState } from './moist-night.ts';
 import { nightWindow, type NightWindow } from './night-window.ts';
 import { siteDiscWind } from './site-disc.ts';
+import type { TransportHistory } from './usual-transport.ts';
 
 /** A feed with what a reader must know to choose it and to trust it. */
 export interface FeedState extends FeedName {
@@ -65,7 +67,8 @@ export interface NightState {
   readonly stories: readonly JetStory[];
   readonly discs: readonly DiscSeries[];
   readonly farm: FarmState;
-  readonly moisture: readonly MoistureNumbers[];
+  /** Of the newest profile, with its own humidity or that of a station which may lend it; null before the first one. */
+  readonly moisture: MoistureNumbers | null;
 }
 
 export interface NightQuestion {
@@ -96,9 +99,17 @@ export class Desk {
   /** The night last asked for, by feed. */
   readonly #nights = new Map<string, { raw: ProfileBlock; from: number; to: number; screened: Screened }>();
 
+  readonly #moist: MoistDesk;
+
   constructor(site: Site) {
     this.site = site;
     this.#store = new FeedStore(site);
+    this.#moist = new MoistDesk({
+      site,
+      names: () => this.#store.names(),
+      block: (key) => this.block(key)!,
+      airSources: (sinceMs, atMs) => this.airSources(sinceMs, atMs),
+    });
   }
 
   /** Takes profiles in any order, twice or late; ends in the same state as in order and once. */
@@ -179,7 +190,7 @@ export class Desk {
       stories: tracks.map((track) => storyOf(track, setting, { time: utcClock })),
       discs,
       farm: farmThrough({ site: this.site, timeMs, profiles, discs, tracks, sunriseMs }),
-      moisture: profiles.map((profile, k) => moistureOf(profile, { jetLayer: coreOf(findings[k]!) })),
+      moisture: profiles.length === 0 ? null : this.#moist.newest(profiles.at(-1)!, findings.at(-1)!.jets[0]?.core),
     };
   }
 
@@ -198,6 +209,30 @@ export class Desk {
     const finding = this.#finding(screened, index, criteriaOf(criteria ?? this.site.criteria));
     const sources = this.airSources(wind.timeMs - LENT_MS, wind.timeMs);
     return inflowState(atMs, { feed, wind, finding, sources, oldestAirS });
+  }
+
+  /**
+   * What vapour the night carries, as known at a moment; null where there is no such feed.
+   * @param archives transports of other days out of an archive's tables
+   */
+  moisture(atMs: number, question: MoistureQuestion, archives: readonly TransportHistory[] = []): MoistureState | null {
+    const raw = this.#store.block(question.feed);
+    const feed = this.#store.names().find((name) => name.key === question.feed);
+    if (raw === null || feed === undefined) return null;
+    const window = nightWindow(atMs, feed.station, raw.timeMs);
+    const criteria = criteriaOf(question.criteria ?? this.site.criteria);
+    const screened = this.#screenedNight(question.feed, raw, window.startMs, atMs);
+    const indices = [...screened.block.timeMs.keys()].filter((k) => screened.block.timeMs[k]! >= window.startMs);
+    const night = indices.map((index) => ({
+      profile: profileAt(screened.block, index),
+      jetLayer: this.#finding(screened, index, criteria).jets[0]?.core,
+    }));
+    return this.#moist.state({ atMs, feed, window, night, humidityFrom: question.humidityFrom ?? '', archives });
+  }
+
+  /** A feed's profiles with the air that may serve them laid on where they have none of their own; see `block`. */
+  moistBlock(feed: string): ProfileBlock | null {
+    return this.block(feed) === null ? null : this.#moist.block(feed);
   }
 
   /**
@@ -315,10 +350,6 @@ const MIGRANTS = MARK['migrants-likely'] | MARK['migrants-certain'];
 /** `22:40 UTC`: the desk knows no reader's clock. */
 function utcClock(timeMs: number): string {
   return `${new Date(timeMs).toISOString().slice(11, 16)} UTC`;
-}
-
-function coreOf(finding: JetFinding): { bottom: number; top: number } | undefined {
-  return finding.jets[0]?.core;
 }
 
 function medianInterval(times: Float64Array): number {

@@ -46,3 +46,7 @@ export {
   type TableCell,
 } from './archive/read-tables.ts';
 export type { AirColumns, AirUse, DrawnTrace, InflowQuestion, InflowState, NoInflow } from './inflow.ts';
+export type { MoistureQuestion, MoistureState, Growth } from './moist-night.ts';
+export type { ArrivalBoard, KeptScore, UpstreamAir } from './arrivals.ts';
+export type { TriangleMember, TriangleState } from './triangles.ts';
+export type { TransportHistory, UsualTransport } from './usual-transport.ts';

@@ -2,7 +2,7 @@ export { CRITERIA, CRITERIA_NAMES, criteriaOf, hasCategories, type Criteria, typ
 export { findJets, type FindOptions, type Jet, type JetFinding, type SmoothNose } from './find-jets.ts';
 export type { JetCore } from './layer.ts';
 export { NO_JET, NOT_ASSESSABLE, scanNoses, type NoseTable } from './scan.ts';
-export type { Phase, Rate } from './rates.ts';
+export { rateOf, type Phase, type Rate } from './rates.ts';
 export { trackJets, type JetTrack, type TimedFinding, type TrackOptions, type TrackPoint } from './track.ts';
 export { completeUncertainty, type UncertaintyOrigin } from './uncertainty.ts';
 export {

@@ -64,32 +64,50 @@ export interface ArrivalScore {
   readonly withinBounds: number;
 }
 
+/** A told arrival and the surge that came; null where none did. */
+export interface ArrivalMatch {
+  readonly told: Arrival;
+  readonly came: Surge | null;
+}
+
 /**
- * Scores arrivals against surges: each told arrival is matched with the nearest surge not yet matched within the tolerance,
- * the closest pairs first.
+ * Matches each told arrival that is on its way with the nearest surge not yet matched within the tolerance, the closest
+ * pairs first; in the order told.
+ * @param toleranceS s
+ */
+export function matchArrivals(told: readonly Arrival[], came: readonly Surge[], toleranceS: number): ArrivalMatch[] {
+  const due = told.filter((arrival) => arrival.status === 'on-its-way');
+  const pairs = due
+    .flatMap((arrival) => came.map((surge) => ({ arrival, surge, apart: Math.abs(surge.timeMs - arrival.arrivesMs) })))
+    .filter(({ apart }) => apart <= 1000 * toleranceS)
+    .sort((a, b) => a.apart - b.apart);
+  const matched = new Map<Arrival, Surge>();
+  const taken = new Set<Surge>();
+  for (const { arrival, surge } of pairs) {
+    if (matched.has(arrival) || taken.has(surge)) continue;
+    matched.set(arrival, surge);
+    taken.add(surge);
+  }
+  return due.map((arrival) => ({ told: arrival, came: matched.get(arrival) ?? null }));
+}
+
+/**
+ * Scores arrivals against surges as `matchArrivals` pairs them.
  * @param told arrivals of which only those on their way count
  * @param toleranceS s
  */
 export function scoreArrivals(told: readonly Arrival[], came: readonly Surge[], toleranceS: number): ArrivalScore {
-  const due = told.filter((arrival) => arrival.status === 'on-its-way');
-  const pairs = due
-    .flatMap((arrival) => came.map((surge) => ({ arrival, surge, errorS: (surge.timeMs - arrival.arrivesMs) / 1000 })))
-    .filter((pair) => Math.abs(pair.errorS) <= toleranceS)
-    .sort((a, b) => Math.abs(a.errorS) - Math.abs(b.errorS));
-  const matched = new Set<Arrival | Surge>();
-  const hits = pairs.filter(({ arrival, surge }) => {
-    if (matched.has(arrival) || matched.has(surge)) return false;
-    matched.add(arrival).add(surge);
-    return true;
-  });
+  const matches = matchArrivals(told, came, toleranceS);
+  const hits = matches.flatMap(({ told: arrival, came: surge }) => (surge === null ? [] : [{ arrival, surge }]));
   const mean = (of: (hit: (typeof hits)[number]) => number): number =>
     hits.reduce((sum, hit) => sum + of(hit), 0) / hits.length;
+  const errorS = ({ arrival, surge }: (typeof hits)[number]): number => (surge.timeMs - arrival.arrivesMs) / 1000;
   return {
     hits: hits.length,
-    falseAlarms: due.length - hits.length,
+    falseAlarms: matches.length - hits.length,
     misses: came.length - hits.length,
-    meanErrorS: mean((hit) => hit.errorS),
-    meanAbsoluteErrorS: mean((hit) => Math.abs(hit.errorS)),
+    meanErrorS: mean(errorS),
+    meanAbsoluteErrorS: mean((hit) => Math.abs(errorS(hit))),
     withinBounds: mean(({ arrival, surge }) =>
       surge.timeMs >= arrival.earliestMs && surge.timeMs <= arrival.latestMs ? 1 : 0,
     ),

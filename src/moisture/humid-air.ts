@@ -1,7 +1,7 @@
 // Wind without humidity: whose humidity to use, how old and how far it is, and how unsure that makes it.
 
 import { distanceBetween, eastward, northward } from '../air/index.ts';
-import { gatherWind, windColumn, type Profile } from '../profile/index.ts';
+import { gatherWind, profileAt, windColumn, type Profile, type ProfileBlock } from '../profile/index.ts';
 import { airColumn, completeAir, linearHeld, type AirColumn } from './air-column.ts';
 
 /** Humidity that serves a wind profile. */
@@ -78,8 +78,9 @@ export function humidAir(profile: Profile, options: HumidityOptions = {}): Humid
   let tooOld: Profile | undefined;
   for (const source of options.humidity ?? []) {
     const ageS = (profile.timeMs - source.timeMs) / 1000;
-    const air = airColumn(source);
-    if (!(ageS >= 0) || humidLevels(air) < LEAST_LEVELS) continue;
+    if (!(ageS >= 0)) continue;
+    const air = airOfSource(source);
+    if (humidLevels(air) < LEAST_LEVELS) continue;
     if (ageS > (options.oldestHumidityS ?? OLDEST_HUMIDITY_S)) {
       if (tooOld === undefined || source.timeMs > tooOld.timeMs) tooOld = source;
       continue;
@@ -93,6 +94,18 @@ export function humidAir(profile: Profile, options: HumidityOptions = {}): Humid
   }
   if (tooOld !== undefined) return { air: own, use: NO_HUMIDITY, why: sinceWords(tooOld) };
   return { air: own, use: NO_HUMIDITY, why: levels > 0 ? 'humidity at a single level only' : 'no humidity' };
+}
+
+/** Columns of sources, which serve one wind after another. */
+const airOfSources = new WeakMap<Profile, AirColumn>();
+
+function airOfSource(source: Profile): AirColumn {
+  let air = airOfSources.get(source);
+  if (air === undefined) {
+    air = airColumn(source);
+    airOfSources.set(source, air);
+  }
+  return air;
 }
 
 function humidLevels(air: AirColumn): number {
@@ -133,4 +146,36 @@ function layOn(profile: Profile, source: Profile, air: AirColumn, surfacePressur
     },
     { surfacePressure, elevation: profile.station.elevation },
   );
+}
+
+/**
+ * A block with pressure, temperature and humidity laid on its wind levels where a profile has no humidity of its own and
+ * another's may serve it; the block itself where that is nowhere so.
+ */
+export function withLentAir(block: ProfileBlock, lenders: (profile: Profile) => readonly Profile[]): ProfileBlock {
+  const total = block.heightAgl.length;
+  const column = (own: Float32Array | null): Float32Array => own?.slice() ?? new Float32Array(total).fill(NaN);
+  let laid: Record<'pressure' | 'temperature' | 'specificHumidity', Float32Array> | null = null;
+  for (let index = 0; index < block.profileCount; index++) {
+    const profile = profileAt(block, index);
+    if (humidLevels(airColumn(profile)) >= LEAST_LEVELS) continue;
+    const humidity = lenders(profile);
+    if (humidity.length === 0) continue;
+    const { air, why } = humidAir(profile, { humidity });
+    if (why !== '') continue;
+    laid ??= {
+      pressure: column(block.pressure),
+      temperature: column(block.temperature),
+      specificHumidity: column(block.specificHumidity),
+    };
+    let at = 0;
+    for (let k = block.offsets[index]!; k < block.offsets[index + 1]! && at < air.count; k++) {
+      if (block.heightAgl[k] !== air.heightAgl[at]) continue;
+      laid.pressure[k] = air.pressure[at]!;
+      laid.temperature[k] = air.temperature[at]!;
+      laid.specificHumidity[k] = air.specificHumidity[at]!;
+      at++;
+    }
+  }
+  return laid === null ? block : { ...block, ...laid };
 }

@@ -1,9 +1,17 @@
 export { arrivalOf, type Arrival, type WayWind } from './arrival.ts';
-export { findSurges, scoreArrivals, type ArrivalScore, type Surge, type SurgeRule } from './arrival-score.ts';
 export {
-  humidAir,
+  findSurges,
+  matchArrivals,
+  scoreArrivals,
+  type ArrivalMatch,
+  type ArrivalScore,
+  type Surge,
+  type SurgeRule,
+} from './arrival-score.ts';
+export {
   humidityUncertainty,
   OLDEST_HUMIDITY_S,
+  withLentAir,
   type HumidAir,
   type HumidityOptions,
   type HumidityUse,

@@ -37,6 +37,8 @@ export interface MoistureNumbers {
   readonly precipitableWater: number;
   /** Pressure form over the layer, kg/(m s). */
   readonly transport: Transport;
+  /** Height form over all that was measured, kg/(m s): the same integral by another way. */
+  readonly transportInHeight: Transport;
   /** Height form from the lowest level to 3 km above ground or the top of data, which `reaches` gives in m. */
   readonly below3Km: Transport & { readonly reaches: number };
   /** Height form within the jet's layer. */
@@ -78,6 +80,7 @@ export function moistureOf(profile: Profile, options: MoistureOptions = {}): Moi
     humidityUncertainty: use.uncertainty,
     precipitableWater: precipitableWater(air, limits),
     transport,
+    transportInHeight: transportByHeight(air),
     below3Km,
     inJet,
     flux: fluxProfile(air),

@@ -32,6 +32,8 @@ export interface TriangleLayer {
   readonly bottom: number;
   readonly top: number;
   readonly field: WindField;
+  /** What each station gave, in the order of the stations; NaN where it has nothing in the layer. */
+  readonly points: readonly FieldPoint[];
   /** m/s at the layer's top, upward, by continuity from the ground; NaN once a layer below could not be had. */
   readonly verticalMotion: number;
   readonly verticalMotionUncertainty: number;
@@ -93,6 +95,7 @@ export function triangleLayers(
       bottom,
       top,
       field,
+      points,
       verticalMotion: motion,
       verticalMotionUncertainty: Math.sqrt(variance),
     };

@@ -69,3 +69,7 @@ export { drawFigureSheet, type Area, type FigureSheet } from './figure.ts';
 export { drawMonthMatrix, MONTH_NAMES, type MonthMatrix } from './month-matrix.ts';
 export { drawHistogram, type HistogramChart, type HistogramSeries } from './histogram.ts';
 export { drawRose, type Rose } from './rose.ts';
+export { drawHeightPanel, heightPanelRange, type HeightLine, type HeightPanel } from './height-panel.ts';
+export { drawStationMap, type MapPlace, type MapStation, type StationMap } from './station-map.ts';
+export { ROOM_ABOVE } from './section-axes.ts';
+export { ROOM_BELOW } from './section-scene.ts';

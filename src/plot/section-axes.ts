@@ -40,7 +40,7 @@ export interface ProfileAxesOptions extends PanelOptions {
 }
 
 /** CSS pixels above the frame, and from the frame to the right edge: half a number's width. */
-const ROOM_ABOVE = 8;
+export const ROOM_ABOVE = 8;
 const ROOM_RIGHT = 22;
 const NUMBERS_WIDTH = 46;
 const LABEL_WIDTH = 20;

@@ -10,8 +10,8 @@ describe('triangle', () => {
       'time stations height_agl_m status why area_km2 divergence_per_s vorticity_per_s moisture_flux_divergence_per_s',
     );
     expect(lines.map((line) => line.height_agl_m)).toEqual(Array.from({ length: 12 }, (_, k) => 125 + 250 * k));
-    // Half of base times height: 147 km between the southern stations, 117 km northward (111.2 km a degree).
-    expect(lines[0]!.area_km2).toBeCloseTo(8610, -2);
+    // From Dry Fork to the others, km: (30.3, 133.4) and (108.2, 22.2); half of their cross product.
+    expect(lines[0]!.area_km2).toBeCloseTo((108.2 * 133.4 - 30.3 * 22.2) / 2, -2);
     const inJet = lines.filter((line) => (line.height_agl_m as number) > 400 && (line.height_agl_m as number) < 1000);
     for (const line of inJet) {
       expect(line).toMatchObject({ status: 'ok', stations: ['ashwillow', 'dry-fork', 'long-slough'] });

@@ -23,6 +23,7 @@ export interface Page {
 export const PAGES: readonly Page[] = [
   { path: 'tonight', title: 'Tonight', load: () => Promise.resolve({ default: Tonight }) },
   { path: 'rotor', title: 'Rotor', load: () => import('./Rotor.svelte') },
+  { path: 'moisture', title: 'Moisture', load: () => import('./Moisture.svelte') },
   { path: 'nights', title: 'Nights', load: () => import('./Nights.svelte') },
   { path: 'feeds', title: 'Feeds', load: () => import('./Feeds.svelte') },
 ];

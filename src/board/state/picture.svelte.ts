@@ -1,6 +1,6 @@
 // What the picture shows: the stretch of time and height in view, the painted section, the cursor, the table.
 
-import { FIELDS, SectionPicture, type SectionView } from '../../plot/index.ts';
+import { FIELDS, SectionPicture, type FieldName, type SectionView } from '../../plot/index.ts';
 import { profileAt, type Profile, type ProfileBlock } from '../../profile/index.ts';
 import { csvName, pngName, saveBlob } from '../words/files.ts';
 import type {
@@ -55,8 +55,16 @@ export class Picture {
   #wanted: PaintRequest | null = null;
   #profileQuestions = 0;
 
-  constructor(board: Board) {
+  readonly #ownField: FieldName | null;
+
+  /** @param field what the picture shows; null follows the reader's choice */
+  constructor(board: Board, field: FieldName | null = null) {
     this.#board = board;
+    this.#ownField = field;
+  }
+
+  get field(): FieldName {
+    return this.#ownField ?? this.#board.preferences.field;
   }
 
   /** m above ground: as chosen, else as far as the data reach, 3 km at most. */
@@ -76,8 +84,7 @@ export class Picture {
   }
 
   get question(): SectionQuestion {
-    const { feedKey, preferences } = this.#board;
-    return { feed: feedKey, field: preferences.field, ceiling: this.ceiling };
+    return { feed: this.#board.feedKey, field: this.field, ceiling: this.ceiling };
   }
 
   /** What is to be painted now; null while there is nothing to paint or no room for it. */
@@ -85,7 +92,8 @@ export class Picture {
     const { extent, size } = this;
     if (extent === null || !(size.width > 0 && size.height > 0)) return null;
     const { preferences, atMs } = this.#board;
-    const { field, theme } = preferences;
+    const { field } = this;
+    const { theme } = preferences;
     const range = preferences.ranges[field] ?? FIELDS[field].range;
     return { ...this.question, view: { ...extent, ...size }, untilMs: atMs, theme, range };
   }

@@ -142,10 +142,9 @@ function changeAnswer(context: Context): Answer {
 }
 
 function moistureAnswer(context: Context): Answer {
-  const { night, last } = context;
-  const numbers = night.moisture[last];
+  const numbers = context.night.moisture;
   const title = 'Moisture below 3 km';
-  if (numbers === undefined) return context.nothing(title, 'No profile in this night yet.');
+  if (numbers === null) return context.nothing(title, 'No profile in this night yet.');
   const { below3Km, precipitableWater, humidityAgeS, humidityFrom, notes } = numbers;
   if (!Number.isFinite(below3Km.size))
     return { ...context.nothing(title, 'Not assessable'), lines: [{ text: numbers.why }] };

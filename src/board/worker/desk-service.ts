@@ -2,7 +2,7 @@
 // same code runs under test on one thread.
 
 import { Cancelled, type Problem } from '../../air/index.ts';
-import { Desk, type FeedState, type NightState } from '../../desk/index.ts';
+import { Desk, type FeedState, type MoistureState, type NightState } from '../../desk/index.ts';
 import { readProfiles } from '../../ingest/index.ts';
 import {
   buildSectionGrid,
@@ -240,8 +240,12 @@ export class DeskService implements BoardWorker {
     }
   }
 
+  moisture(atMs: number, feed: string, criteria: string, humidityFrom: string): MoistureState | null {
+    return this.#desk.moisture(atMs, { feed, humidityFrom, ...(criteria === '' ? {} : { criteria }) });
+  }
+
   #prepare({ feed, field, ceiling }: SectionQuestion): SectionPainter | null {
-    const block = this.#desk.block(feed);
+    const block = field === 'humidity-flux' ? this.#desk.moistBlock(feed) : this.#desk.block(feed);
     if (block === null) return null;
     const held = this.#section;
     if (

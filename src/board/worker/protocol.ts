@@ -1,7 +1,7 @@
 // The whole vocabulary between the page and its worker: plain data, typed arrays, and the calls.
 
 import type { Problem } from '../../air/index.ts';
-import type { Acceptance, ArchiveView, FeedState, NightState } from '../../desk/index.ts';
+import type { Acceptance, MoistureState, ArchiveView, FeedState, NightState } from '../../desk/index.ts';
 import type { FieldName, SectionView, ThemeName, ValueRange } from '../../plot/index.ts';
 import type { ProfileBlock } from '../../profile/index.ts';
 import type { DisplayUnits, Site } from '../../site/index.ts';
@@ -133,6 +133,8 @@ export interface BoardWorker {
   ): Promise<ArchiveReport>;
   /** Whether each file is one that a scan wrote, not one of profiles. */
   areArchiveFiles(files: readonly OpenFile[]): Promise<boolean[]>;
+  /** The moist night; `criteria` and `humidityFrom` empty: the site's own, and whoever serves best. */
+  moisture(atMs: number, feed: string, criteria: string, humidityFrom: string): MoistureState | null;
 }
 
 /** How far the figures of an archive have come. */
