@@ -51,7 +51,7 @@ export const FIELDS: Readonly<Record<FieldName, Field>> = {
     name: 'humidity-flux',
     title: 'flux of water vapour',
     scale: 'moisture',
-    range: { low: 0, high: 0.3 },
+    range: { low: 0, high: 0.5 },
     pixelRule: 'greatest',
   },
   temperature: {

@@ -1,7 +1,7 @@
 // The moist night in words: the sentence, the answers, where each number comes from.
 
 import type { MoistureState, TriangleState, UpstreamAir } from '../../desk/index.ts';
-import type { MoistureNumbers, Transport } from '../../moisture/index.ts';
+import type { Arrival, MoistureNumbers, Transport } from '../../moisture/index.ts';
 import type { DisplayUnits } from '../../site/index.ts';
 import { STALE_INTERVALS, type Answer } from './answers.ts';
 import { compassWords, directionText, heightText, plain, signed, speedText } from './numbers.ts';
@@ -29,7 +29,7 @@ export function withShare(value: number, share: number, decimals = 0): string {
     : plain(value, decimals);
 }
 
-/** `toward the north-north…, from 190°` in short. */
+/** `toward the north, from 190°`. */
 export function towardWords({ direction }: Transport): string {
   if (!Number.isFinite(direction)) return '';
   return `toward the ${compassWords((direction + 180) % 360)}, from ${directionText(direction)}`;
@@ -43,10 +43,10 @@ export function humidityWords(numbers: MoistureNumbers, nameOf: (id: string) => 
   if (humidityAgeS === 0 && humidityDistance === 0) return `humidity of its own, just measured, ${sure}`;
   const age = humidityAgeS > 0 ? `${durationWords(1000 * humidityAgeS)} old` : 'of the same time';
   const far = Number.isNaN(humidityDistance)
-    ? 'from an unknown distance'
+    ? 'at an unknown distance'
     : humidityDistance < 1000
-      ? 'from the same place'
-      : `from ${plain(humidityDistance / 1000, 0)} km away`;
+      ? 'same place'
+      : `${plain(humidityDistance / 1000, 0)} km away`;
   return `humidity of ${nameOf(humidityFrom)}, ${age}, ${far}, ${sure}`;
 }
 
@@ -90,7 +90,7 @@ function transportPieces({ state, times, nameOf }: MoistContext, numbers: Moistu
     { text: 'The wind carries ' },
     { text: `${plain(below3Km.size, 0)} ${VAPOUR_UNIT}`, weight: 'strong' },
     {
-      text: ` of vapour below 3 km toward the ${compassWords((below3Km.direction + 180) % 360)}${since}${rateWords(rate)}; ${humidityWords(numbers, nameOf)}. `,
+      text: ` of vapour below 3 km toward the ${compassWords((below3Km.direction + 180) % 360)}${since}${rateWords(rate)} (${humidityWords(numbers, nameOf)}). `,
     },
   ];
 }
@@ -117,8 +117,12 @@ export function leadingArrival({ arrivals, atMs }: MoistureState): UpstreamAir |
 }
 
 /** Whether the air of an upstream station goes by, on one side or because the wind blows elsewhere. */
-export function isAside({ now, surge }: UpstreamAir): boolean {
-  const arrival = surge?.arrival ?? now;
+function isAside({ now, surge }: UpstreamAir): boolean {
+  return goesBy(surge?.arrival ?? now);
+}
+
+/** Whether air comes no nearer than half of its way. */
+export function goesBy(arrival: Arrival): boolean {
   return arrival.status !== 'on-its-way' || Math.abs(arrival.missBy) > ASIDE * arrival.distance;
 }
 
