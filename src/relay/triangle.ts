@@ -72,14 +72,16 @@ ${SCREENS_HELP}`,
   },
 };
 
-/** Of the stations at one place the one with the most profiles; those without a position stand alone. */
+/** Of the stations at one place the one with the most profiles; those without a position only where the others are too few. */
 function onePerPlace(stations: readonly (readonly Profile[])[]): (readonly Profile[])[] {
   const places: (readonly Profile[])[] = [];
   for (const profiles of [...stations].sort((a, b) => b.length - a.length)) {
     const here = profiles[0]!.station;
     if (!places.some(([other]) => distanceBetween(other!.station, here) <= SAME_PLACE)) places.push(profiles);
   }
-  return places.sort((a, b) => (a[0]!.station.id < b[0]!.station.id ? -1 : 1));
+  const placed = places.filter(([profile]) => Number.isFinite(profile!.station.latitude + profile!.station.longitude));
+  const taken = placed.length >= 3 ? placed : places;
+  return taken.sort((a, b) => (a[0]!.station.id < b[0]!.station.id ? -1 : 1));
 }
 
 /** A layer as the contract of `triangle` has it. */
