@@ -137,17 +137,10 @@ function drawRings(pen: Pen, rings: readonly number[], { x, y, radius }: Hodogra
   pen.stroke();
   // A wind toward the north comes from the south: the rim says where from, as everything else on the page does.
   const rim = radius - 4 * ratio;
-  const style = { size: 11 } as const;
-  writeText(pen, look, 'from S', x + 4 * ratio, y - rim, { ...style, baseline: 'top' });
-  writeText(pen, look, 'from N', x + 4 * ratio, y + rim, style);
-  writeText(
-    pen,
-    look,
-    String(outer),
-    x + radius * Math.SQRT1_2 + 2 * ratio,
-    y + radius * Math.SQRT1_2 + 9 * ratio,
-    style,
-  );
+  const style = { size: 11, rimmed: true } as const;
+  writeText(pen, look, 'from S', x - 4 * ratio, y - rim, { ...style, align: 'right', baseline: 'top' });
+  writeText(pen, look, 'from N', x - 4 * ratio, y + rim, { ...style, align: 'right' });
+  writeText(pen, look, String(outer), x + rim, y - 3 * ratio, { ...style, align: 'right' });
 }
 
 function strokePath(
