@@ -86,7 +86,7 @@ describe('hodograph', () => {
     const { pen, lines } = recordingPen();
     const profile = profileOf({ heightAgl: [100, 200], speed: [20, 20], direction: [180, 270] });
     drawHodograph(pen, { profile, ceiling: 1000 }, { ...place, outer: 20 }, look);
-    const path = lines.slice(lines.indexOf('fillText 20 172.7 179.7') + 1);
+    const path = lines.slice(lines.indexOf('fillText 20 196 97') + 1);
     expect(named(path, 'moveTo')).toEqual(['moveTo 100 0']);
     expect(named(path, 'lineTo')).toEqual(['lineTo 200 100']);
   });
