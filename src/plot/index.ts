@@ -73,3 +73,39 @@ export { drawHeightPanel, heightPanelRange, type HeightLine, type HeightPanel } 
 export { drawStationMap, type MapPlace, type MapStation, type StationMap } from './station-map.ts';
 export { ROOM_ABOVE } from './section-axes.ts';
 export { ROOM_BELOW } from './section-scene.ts';
+export {
+  inflowFrames,
+  type InflowFrames,
+  type InflowScene,
+  type SceneLayer,
+  type SceneParcel,
+  type SceneWind,
+} from './inflow-scene.ts';
+export {
+  drawInflow,
+  drawInflowCursor,
+  drawInflowSheet,
+  inflowPng,
+  type CursorValues,
+  type InflowSheet,
+} from './inflow-picture.ts';
+export {
+  drawHodographCursor,
+  drawStormHodograph,
+  windAtHeight,
+  windPlane,
+  type NamedVector,
+  type StormHodograph,
+  type WindPlane,
+} from './storm-hodograph.ts';
+export {
+  carriedDown,
+  carriedUp,
+  dryAdiabat,
+  LEAN,
+  mixingRatioLine,
+  pressureAt,
+  pseudoadiabat,
+  thermodynamicPoint,
+  thermodynamicValue,
+} from './thermodynamic.ts';

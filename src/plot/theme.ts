@@ -59,7 +59,7 @@ const TOKENS: Readonly<Record<ThemeName, Readonly<Record<Token, Oklch>>>> = {
     raise: [0.15, 0.04, 27],
     rule: [0.28, 0.1, 27],
     ink: [0.62, 0.2, 27],
-    soft: [0.55, 0.18, 27],
+    soft: [0.59, 0.185, 27],
     call: [0.7, 0.2, 27],
     day: [0.58, 0.18, 27],
     dusk: [0.4, 0.14, 27],

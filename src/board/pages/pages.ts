@@ -24,6 +24,7 @@ export const PAGES: readonly Page[] = [
   { path: 'tonight', title: 'Tonight', load: () => Promise.resolve({ default: Tonight }) },
   { path: 'rotor', title: 'Rotor', load: () => import('./Rotor.svelte') },
   { path: 'moisture', title: 'Moisture', load: () => import('./Moisture.svelte') },
+  { path: 'inflow', title: 'Inflow', load: () => import('./Inflow.svelte') },
   { path: 'nights', title: 'Nights', load: () => import('./Nights.svelte') },
   { path: 'feeds', title: 'Feeds', load: () => import('./Feeds.svelte') },
 ];

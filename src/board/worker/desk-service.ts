@@ -2,7 +2,14 @@
 // same code runs under test on one thread.
 
 import { Cancelled, type Problem } from '../../air/index.ts';
-import { Desk, type FeedState, type MoistureState, type NightState } from '../../desk/index.ts';
+import {
+  Desk,
+  type FeedState,
+  type InflowState,
+  type MoistureState,
+  type NightState,
+  type NoInflow,
+} from '../../desk/index.ts';
 import { readProfiles } from '../../ingest/index.ts';
 import {
   buildSectionGrid,
@@ -242,6 +249,10 @@ export class DeskService implements BoardWorker {
 
   moisture(atMs: number, feed: string, criteria: string, humidityFrom: string): MoistureState | null {
     return this.#desk.moisture(atMs, { feed, humidityFrom, ...(criteria === '' ? {} : { criteria }) });
+  }
+
+  inflow(atMs: number, feed: string, criteria: string): InflowState | NoInflow | null {
+    return this.#desk.inflow(atMs, criteria === '' ? { feed } : { feed, criteria });
   }
 
   #prepare({ feed, field, ceiling }: SectionQuestion): SectionPainter | null {

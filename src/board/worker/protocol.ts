@@ -1,7 +1,15 @@
 // The whole vocabulary between the page and its worker: plain data, typed arrays, and the calls.
 
 import type { Problem } from '../../air/index.ts';
-import type { Acceptance, MoistureState, ArchiveView, FeedState, NightState } from '../../desk/index.ts';
+import type {
+  Acceptance,
+  ArchiveView,
+  FeedState,
+  InflowState,
+  MoistureState,
+  NightState,
+  NoInflow,
+} from '../../desk/index.ts';
 import type { FieldName, SectionView, ThemeName, ValueRange } from '../../plot/index.ts';
 import type { ProfileBlock } from '../../profile/index.ts';
 import type { DisplayUnits, Site } from '../../site/index.ts';
@@ -135,6 +143,8 @@ export interface BoardWorker {
   areArchiveFiles(files: readonly OpenFile[]): Promise<boolean[]>;
   /** The moist night; `criteria` and `humidityFrom` empty: the site's own, and whoever serves best. */
   moisture(atMs: number, feed: string, criteria: string, humidityFrom: string): MoistureState | null;
+  /** What storms get of the air at a moment; null where there is no such feed or no profile yet. */
+  inflow(atMs: number, feed: string, criteria: string): InflowState | NoInflow | null;
 }
 
 /** How far the figures of an archive have come. */
