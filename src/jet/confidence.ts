@@ -17,7 +17,7 @@ import {
   type NoseColumn,
   type NoseList,
 } from './nose.ts';
-import { departuresInto, fitPosteriorInto, posterior, type Posterior } from './posterior.ts';
+import { fitPosteriorInto, posterior, samplesInto, type Posterior } from './posterior.ts';
 import type { UncertaintyOrigin } from './uncertainty.ts';
 
 /** What the members of the ensemble found. */
@@ -41,13 +41,21 @@ export interface BasinVerdict {
 /** Working space of the ensemble, reused from profile to profile. */
 export interface Ensemble {
   readonly fit: Posterior;
-  departures: Float64Array;
+  /** A pair of members, m/s by level. */
+  one: Float64Array;
+  other: Float64Array;
   readonly column: NoseColumn;
   readonly list: NoseList;
 }
 
 export function ensemble(): Ensemble {
-  return { fit: posterior(), departures: new Float64Array(256), column: noseColumn(), list: noseList() };
+  return {
+    fit: posterior(),
+    one: new Float64Array(256),
+    other: new Float64Array(256),
+    column: noseColumn(),
+    list: noseList(),
+  };
 }
 
 /** Pairs of members; 64 pairs leave a standard error of at most 0.044. */
@@ -72,8 +80,10 @@ export function judgeEnsemble(
   const { fit, column, list } = work;
   const levels = cut.ceilingShare >= 0 ? cut.kept + 1 : cut.kept;
   fitPosteriorInto(wind, levels, origin, fit);
-  if (work.departures.length < levels) work.departures = new Float64Array(2 * levels);
-  const { departures } = work;
+  if (work.one.length < levels) {
+    work.one = new Float64Array(2 * levels);
+    work.other = new Float64Array(2 * levels);
+  }
   const { mean } = fit;
   if (column.heightAgl.length < judged.count) Object.assign(column, noseColumn(2 * judged.count));
   column.count = judged.count;
@@ -86,14 +96,13 @@ export function judgeEnsemble(
   const tallies = basins.map(() => ({ hits: 0, height: 0, heightSquare: 0, speed: 0, speedSquare: 0 }));
   const counts = new Array<number>(criteria.categories.length).fill(0);
   const members = 2 * pairs;
+  const { kept } = cut;
   for (let member = 0; member < members; member++) {
-    const sign = (member & 1) === 0 ? 1 : -1;
-    if (sign > 0) departuresInto(fit, NORMAL, (member >> 1) * STRIDE, departures);
-    for (let k = 0; k < cut.kept; k++) column.speed[k] = Math.max(0, mean[k]! + sign * departures[k]!);
-    if (cut.ceilingShare >= 0) {
-      const beyond = Math.max(0, mean[cut.kept]! + sign * departures[cut.kept]!);
-      column.speed[cut.kept] = between(column.speed[cut.kept - 1]!, beyond, cut.ceilingShare);
-    }
+    const isFirst = (member & 1) === 0;
+    if (isFirst) samplesInto(fit, NORMAL, (member >> 1) * STRIDE, work.one, work.other);
+    const speed = isFirst ? work.one : work.other;
+    column.speed = speed;
+    if (cut.ceilingShare >= 0) speed[kept] = between(speed[kept - 1]!, speed[kept]!, cut.ceilingShare);
     findNosesInto(column, asked, list);
     let best = -1;
     let hit = 0;
@@ -104,18 +113,19 @@ export function judgeEnsemble(
       hit |= 1 << basinAt(basins, list.nose[i]!);
     }
     for (let k = 0; k <= best; k++) counts[k]!++;
-    basins.forEach((basin, i) => {
+    for (let i = 0; i < basins.length; i++) {
+      const basin = basins[i]!;
       const tally = tallies[i]!;
       if ((hit & (1 << i)) !== 0) tally.hits++;
-      const nose = strongestOf(column.speed, basin);
+      const nose = strongestOf(speed, basin);
       // Around the smooth curve's own nose, so that squares stay small.
-      const height = column.heightAgl[nose]! - column.heightAgl[basin.nose]!;
-      const speed = column.speed[nose]! - fit.mean[basin.nose]!;
-      tally.height += height;
-      tally.heightSquare += height * height;
-      tally.speed += speed;
-      tally.speedSquare += speed * speed;
-    });
+      const higher = column.heightAgl[nose]! - column.heightAgl[basin.nose]!;
+      const faster = speed[nose]! - mean[basin.nose]!;
+      tally.height += higher;
+      tally.heightSquare += higher * higher;
+      tally.speed += faster;
+      tally.speedSquare += faster * faster;
+    }
   }
   const spread = (sum: number, squares: number): number =>
     Math.sqrt(Math.max(0, squares / members - (sum / members) ** 2));
@@ -163,8 +173,14 @@ function betweenLevels(heightAgl: Float64Array, nose: number): number {
   return (heightAgl[nose + 1]! - heightAgl[nose - 1]!) / 2 / Math.sqrt(12);
 }
 
-function strongestOf(speed: Float64Array, basin: Basin): number {
-  let strongest = basin.lowest;
-  for (let k = basin.lowest + 1; k <= basin.highest; k++) if (speed[k]! > speed[strongest]!) strongest = k;
+function strongestOf(speed: Float64Array, { lowest, highest }: Basin): number {
+  let strongest = lowest;
+  let most = speed[lowest]!;
+  for (let k = lowest + 1; k <= highest; k++) {
+    if (speed[k]! > most) {
+      most = speed[k]!;
+      strongest = k;
+    }
+  }
   return strongest;
 }

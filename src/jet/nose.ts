@@ -83,10 +83,15 @@ function addLocalMaxima(column: NoseColumn, criteria: Criteria, out: NoseList): 
   const { heightAgl, speed, count } = column;
   const least = criteria.categories[0]!.speed - ALLOWANCE;
   const { noseCeiling } = criteria;
+  // Only levels fast enough can be noses: the walk begins at the first of them and ends one above the last.
+  let first = 1;
+  while (first < count && speed[first]! < least) first++;
+  let end = count - 1;
+  while (end > first && speed[end - 1]! < least) end--;
   let rising = false;
   let top = 0;
-  let below = speed[0]!;
-  for (let k = 1; k < count; k++) {
+  let below = speed[first - 1]!;
+  for (let k = first; k <= end; k++) {
     const here = speed[k]!;
     if (here > below) {
       rising = true;

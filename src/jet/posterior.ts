@@ -72,11 +72,17 @@ export function fitPosteriorInto(wind: WindColumn, count: number, origin: Uncert
 }
 
 /**
- * How far one sample of the true speeds lies from their mean, m/s, by level, from independent standard normal numbers at
- * `from` onward. With all signs turned it is a sample as likely.
+ * Two samples of the true speeds, m/s by level, from independent standard normal numbers at `from` onward: they lie as far
+ * from the mean, one on either side of it, and are equally likely.
  */
-export function departuresInto(fit: Posterior, normal: Float64Array, from: number, out: Float64Array): void {
-  const { count, inverse, below1, below2 } = fit;
+export function samplesInto(
+  fit: Posterior,
+  normal: Float64Array,
+  from: number,
+  one: Float64Array,
+  other: Float64Array,
+): void {
+  const { count, mean, inverse, below1, below2 } = fit;
   // Beyond the top nothing pulls: zeros there spare the loop its questions.
   below1[count] = 0;
   below2[count] = 0;
@@ -88,7 +94,11 @@ export function departuresInto(fit: Posterior, normal: Float64Array, from: numbe
     const departure = (normal[place]! - below2[k + 2]! * above2 - below1[k + 1]! * above1) * inverse[k]!;
     above2 = above1;
     above1 = departure;
-    out[k] = departure;
+    // Done here, where the processor waits for the next departure anyway.
+    const more = mean[k]! + departure;
+    const less = mean[k]! - departure;
+    one[k] = more > 0 ? more : 0;
+    other[k] = less > 0 ? less : 0;
     place = place === 0 ? normal.length - 1 : place - 1;
   }
 }
@@ -149,6 +159,7 @@ function weigh(wind: WindColumn, origin: UncertaintyOrigin, out: Posterior): voi
 function factorise(out: Posterior, curvature: number, noise: number): number {
   const { count, uncertainty, smooth0, smooth1, smooth2, diagonal, below1, below2 } = out;
   let logSum = 0;
+  let product = 1;
   for (let k = 0; k < count; k++) {
     const sigma = noise * uncertainty[k]!;
     const two = k >= 2 ? smooth2[k]! / curvature / diagonal[k - 2]! : 0;
@@ -157,9 +168,14 @@ function factorise(out: Posterior, curvature: number, noise: number): number {
     below2[k] = two;
     below1[k] = one;
     diagonal[k] = root;
-    logSum += Math.log(root);
+    // Logarithms are slow: one for the product of several roots.
+    product *= root;
+    if ((k & 7) === 7) {
+      logSum += Math.log(product);
+      product = 1;
+    }
   }
-  return logSum;
+  return logSum + Math.log(product);
 }
 
 function solveMean(wind: WindColumn, out: Posterior): void {

@@ -84,7 +84,8 @@ class Continuity {
     let open = new Uint32Array(count);
     for (let n = 0; n < count; n++) open[n] = n;
     this.#regions().forEach((members, rank) => {
-      const rest = members.filter((n) => this.#member[n] === 0);
+      // The first one meets nobody who is trusted already, and it is large.
+      const rest = rank === 0 ? members : members.filter((n) => this.#member[n] === 0);
       if (rest.length === 0) return;
       if (rank > 0 && this.#contradicts(rest)) {
         for (const n of rest) verdicts[n] = VERDICT.contested;
