@@ -17,7 +17,7 @@ import {
   type NoseColumn,
   type NoseList,
 } from './nose.ts';
-import { fitPosteriorInto, posterior, samplesInto, type Posterior } from './posterior.ts';
+import { fitPosteriorInto, posterior, sampleQuad, samplesInto, type Posterior, type SampleQuad } from './posterior.ts';
 import type { UncertaintyOrigin } from './uncertainty.ts';
 
 /** What the members of the ensemble found. */
@@ -41,21 +41,14 @@ export interface BasinVerdict {
 /** Working space of the ensemble, reused from profile to profile. */
 export interface Ensemble {
   readonly fit: Posterior;
-  /** A pair of members, m/s by level. */
-  one: Float64Array;
-  other: Float64Array;
+  /** Members, m/s by level: two pairs. */
+  samples: SampleQuad;
   readonly column: NoseColumn;
   readonly list: NoseList;
 }
 
 export function ensemble(): Ensemble {
-  return {
-    fit: posterior(),
-    one: new Float64Array(256),
-    other: new Float64Array(256),
-    column: noseColumn(),
-    list: noseList(),
-  };
+  return { fit: posterior(), samples: sampleQuad(256), column: noseColumn(), list: noseList() };
 }
 
 /** Pairs of members; 64 pairs leave a standard error of at most 0.044. */
@@ -80,10 +73,7 @@ export function judgeEnsemble(
   const { fit, column, list } = work;
   const levels = cut.ceilingShare >= 0 ? cut.kept + 1 : cut.kept;
   fitPosteriorInto(wind, levels, origin, fit);
-  if (work.one.length < levels) {
-    work.one = new Float64Array(2 * levels);
-    work.other = new Float64Array(2 * levels);
-  }
+  if (work.samples[0].length < levels) work.samples = sampleQuad(2 * levels);
   const { mean } = fit;
   if (column.heightAgl.length < judged.count) Object.assign(column, noseColumn(2 * judged.count));
   column.count = judged.count;
@@ -98,9 +88,9 @@ export function judgeEnsemble(
   const members = 2 * pairs;
   const { kept } = cut;
   for (let member = 0; member < members; member++) {
-    const isFirst = (member & 1) === 0;
-    if (isFirst) samplesInto(fit, NORMAL, (member >> 1) * STRIDE, work.one, work.other);
-    const speed = isFirst ? work.one : work.other;
+    const which = (member & 3) as 0 | 1 | 2 | 3;
+    if (which === 0) samplesInto(fit, NORMAL, (member >> 1) * STRIDE, STRIDE, work.samples);
+    const speed = work.samples[which];
     column.speed = speed;
     if (cut.ceilingShare >= 0) speed[kept] = between(speed[kept - 1]!, speed[kept]!, cut.ceilingShare);
     findNosesInto(column, asked, list);

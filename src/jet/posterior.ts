@@ -15,12 +15,12 @@ export interface Posterior {
   mean: Float64Array;
   /** Standard uncertainty taken for each level after weighing the roughness, m/s. */
   uncertainty: Float64Array;
-  /** Cholesky factor of the precision: diagonal and the two below it. */
-  diagonal: Float64Array;
+  /** Cholesky factor of the precision: one over its diagonal, for divisions are slow, and the two below it. */
+  inverse: Float64Array;
   below1: Float64Array;
   below2: Float64Array;
-  /** One over the diagonal: samples are many and divisions slow. */
-  inverse: Float64Array;
+  /** One over the variance of each level. */
+  precision: Float64Array;
   /** Precision of the smooth curve alone, same form, and work space. */
   smooth0: Float64Array;
   smooth1: Float64Array;
@@ -33,10 +33,10 @@ export function posterior(capacity = 256): Posterior {
     count: 0,
     mean: column(),
     uncertainty: column(),
-    diagonal: column(),
+    inverse: column(),
     below1: column(),
     below2: column(),
-    inverse: column(),
+    precision: column(),
     smooth0: column(),
     smooth1: column(),
     smooth2: column(),
@@ -44,12 +44,10 @@ export function posterior(capacity = 256): Posterior {
 }
 
 /**
- * Intensity of the curvature of wind profiles, (m/s/m2)2 m: at 100 m, how steeply it falls with height, and the least
- * aloft. From the true profiles of simulated nights, widened aloft because the real air has layers; the likelihood
- * scales it for each profile.
+ * Intensity of the curvature of wind profiles, (m/s/m2)2 m: at 100 m, and the least aloft. From the true profiles of
+ * simulated nights, widened aloft because the real air has layers; the likelihood scales it for each profile.
  */
 const CURVATURE_AT_100M = 5e-6;
-const CURVATURE_SLOPE = -2.5;
 const CURVATURE_LEAST = 3e-8;
 
 /** Factors tried on the curvature relative to the noise, and on the noise. */
@@ -71,16 +69,24 @@ export function fitPosteriorInto(wind: WindColumn, count: number, origin: Uncert
   weigh(wind, origin, out);
 }
 
+/** Room for two pairs of samples. */
+export type SampleQuad = readonly [Float64Array, Float64Array, Float64Array, Float64Array];
+
+export function sampleQuad(capacity: number): SampleQuad {
+  return [0, 1, 2, 3].map(() => new Float64Array(capacity)) as unknown as SampleQuad;
+}
+
 /**
- * Two samples of the true speeds, m/s by level, from independent standard normal numbers at `from` onward: they lie as far
- * from the mean, one on either side of it, and are equally likely.
+ * Two pairs of samples of the true speeds, m/s by level. A pair comes of independent standard normal numbers, its members
+ * lie as far from the mean, one on either side, and are equally likely.
+ * @param from place in `normal` of the first pair's numbers; the second pair's begin `stride` further on
  */
 export function samplesInto(
   fit: Posterior,
   normal: Float64Array,
   from: number,
-  one: Float64Array,
-  other: Float64Array,
+  stride: number,
+  [one, two, three, four]: SampleQuad,
 ): void {
   const { count, mean, inverse, below1, below2 } = fit;
   // Beyond the top nothing pulls: zeros there spare the loop its questions.
@@ -88,19 +94,41 @@ export function samplesInto(
   below2[count] = 0;
   below2[count + 1] = 0;
   let place = (from + count - 1) % normal.length;
+  let otherPlace = (from + stride + count - 1) % normal.length;
   let above1 = 0;
   let above2 = 0;
+  let other1 = 0;
+  let other2 = 0;
+  // Each departure waits for the one above: two pairs side by side fill the wait.
   for (let k = count - 1; k >= 0; k--) {
-    const departure = (normal[place]! - below2[k + 2]! * above2 - below1[k + 1]! * above1) * inverse[k]!;
+    const pull1 = below1[k + 1]!;
+    const pull2 = below2[k + 2]!;
+    const scale = inverse[k]!;
+    const middle = mean[k]!;
+    const departure = (normal[place]! - pull2 * above2 - pull1 * above1) * scale;
+    const other = (normal[otherPlace]! - pull2 * other2 - pull1 * other1) * scale;
     above2 = above1;
     above1 = departure;
-    // Done here, where the processor waits for the next departure anyway.
-    const more = mean[k]! + departure;
-    const less = mean[k]! - departure;
-    one[k] = more > 0 ? more : 0;
-    other[k] = less > 0 ? less : 0;
+    other2 = other1;
+    other1 = other;
+    one[k] = atLeastCalm(middle + departure);
+    two[k] = atLeastCalm(middle - departure);
+    three[k] = atLeastCalm(middle + other);
+    four[k] = atLeastCalm(middle - other);
     place = place === 0 ? normal.length - 1 : place - 1;
+    otherPlace = otherPlace === 0 ? normal.length - 1 : otherPlace - 1;
   }
+}
+
+/** Quicker than Math.max, which must think of signed zeros. */
+function atLeastCalm(speed: number): number {
+  return speed > 0 ? speed : 0;
+}
+
+/** Falls with the power 2.5 of height, which a root gives sooner than a power; lowest values as at 20 m. */
+function curvatureAt(height: number): number {
+  const hundreds = Math.max(height, 20) / 100;
+  return CURVATURE_AT_100M / (hundreds * hundreds * Math.sqrt(hundreds)) + CURVATURE_LEAST;
 }
 
 /** Sum of squared second derivatives, each over its share of height, as a matrix of five diagonals. */
@@ -116,7 +144,7 @@ function fillSmoothness(wind: WindColumn, count: number, out: Posterior): void {
     const a = 2 / (lower * (lower + upper));
     const c = 2 / (upper * (lower + upper));
     const b = -a - c;
-    const intensity = CURVATURE_AT_100M * Math.pow(Math.max(height, 20) / 100, CURVATURE_SLOPE) + CURVATURE_LEAST;
+    const intensity = curvatureAt(height);
     const weight = (lower + upper) / 2 / intensity;
     smooth0[k - 1]! += weight * a * a;
     smooth0[k]! += weight * b * b;
@@ -133,8 +161,9 @@ function weigh(wind: WindColumn, origin: UncertaintyOrigin, out: Posterior): voi
   let best = -Infinity;
   let bestRatio = 1;
   let bestNoise = 1;
+  fillPrecision(out);
   for (const ratio of RATIOS) {
-    const logDeterminant = factorise(out, ratio, 1);
+    const logDeterminant = factorise(out, ratio);
     solveMean(wind, out);
     const misfit = misfitOf(wind, out, ratio);
     for (const noise of NOISE_FACTORS) {
@@ -150,25 +179,30 @@ function weigh(wind: WindColumn, origin: UncertaintyOrigin, out: Posterior): voi
     }
   }
   for (let k = 0; k < out.count; k++) out.uncertainty[k]! *= bestNoise;
-  factorise(out, bestRatio * bestNoise * bestNoise, 1);
+  fillPrecision(out);
+  factorise(out, bestRatio * bestNoise * bestNoise);
   solveMean(wind, out);
-  for (let k = 0; k < out.count; k++) out.inverse[k] = 1 / out.diagonal[k]!;
 }
 
-/** Cholesky factor of smoothness/curvature + 1/noise. @returns half the logarithm of its determinant */
-function factorise(out: Posterior, curvature: number, noise: number): number {
-  const { count, uncertainty, smooth0, smooth1, smooth2, diagonal, below1, below2 } = out;
+/** Weight of each level's own value: one over its variance. */
+function fillPrecision({ count, uncertainty, precision }: Posterior): void {
+  for (let k = 0; k < count; k++) precision[k] = 1 / (uncertainty[k]! * uncertainty[k]!);
+}
+
+/** Cholesky factor of smoothness/curvature + 1/variance. @returns half the logarithm of its determinant */
+function factorise(out: Posterior, curvature: number): number {
+  const { count, precision, smooth0, smooth1, smooth2, inverse, below1, below2 } = out;
+  const stiffness = 1 / curvature;
   let logSum = 0;
   let product = 1;
   for (let k = 0; k < count; k++) {
-    const sigma = noise * uncertainty[k]!;
-    const two = k >= 2 ? smooth2[k]! / curvature / diagonal[k - 2]! : 0;
-    const one = k >= 1 ? (smooth1[k]! / curvature - (k >= 2 ? two * below1[k - 1]! : 0)) / diagonal[k - 1]! : 0;
-    const root = Math.sqrt(smooth0[k]! / curvature + 1 / (sigma * sigma) - one * one - two * two);
+    const two = k >= 2 ? smooth2[k]! * stiffness * inverse[k - 2]! : 0;
+    const one = k >= 1 ? (smooth1[k]! * stiffness - (k >= 2 ? two * below1[k - 1]! : 0)) * inverse[k - 1]! : 0;
+    const root = Math.sqrt(smooth0[k]! * stiffness + precision[k]! - one * one - two * two);
     below2[k] = two;
     below1[k] = one;
-    diagonal[k] = root;
-    // Logarithms are slow: one for the product of several roots.
+    inverse[k] = 1 / root;
+    // Logarithms are slow too: one for the product of several roots.
     product *= root;
     if ((k & 7) === 7) {
       logSum += Math.log(product);
@@ -179,32 +213,32 @@ function factorise(out: Posterior, curvature: number, noise: number): number {
 }
 
 function solveMean(wind: WindColumn, out: Posterior): void {
-  const { count, uncertainty, diagonal, below1, below2, mean } = out;
+  const { count, precision, inverse, below1, below2, mean } = out;
   for (let k = 0; k < count; k++) {
-    const sigma = uncertainty[k]!;
-    let sum = wind.speed[k]! / (sigma * sigma);
+    let sum = wind.speed[k]! * precision[k]!;
     if (k >= 1) sum -= below1[k]! * mean[k - 1]!;
     if (k >= 2) sum -= below2[k]! * mean[k - 2]!;
-    mean[k] = sum / diagonal[k]!;
+    mean[k] = sum * inverse[k]!;
   }
   for (let k = count - 1; k >= 0; k--) {
     let sum = mean[k]!;
     if (k + 1 < count) sum -= below1[k + 1]! * mean[k + 1]!;
     if (k + 2 < count) sum -= below2[k + 2]! * mean[k + 2]!;
-    mean[k] = sum / diagonal[k]!;
+    mean[k] = sum * inverse[k]!;
   }
 }
 
 /** Squared distance of the levels from the curve plus the curve's own roughness, both in units of their variance. */
 function misfitOf(wind: WindColumn, out: Posterior, curvature: number): number {
-  const { count, uncertainty, mean, smooth0, smooth1, smooth2 } = out;
+  const { count, precision, mean, smooth0, smooth1, smooth2 } = out;
+  const stiffness = 1 / curvature;
   let misfit = 0;
   for (let k = 0; k < count; k++) {
-    const residual = (wind.speed[k]! - mean[k]!) / uncertainty[k]!;
+    const residual = wind.speed[k]! - mean[k]!;
     let rough = smooth0[k]! * mean[k]!;
     if (k >= 1) rough += 2 * smooth1[k]! * mean[k - 1]!;
     if (k >= 2) rough += 2 * smooth2[k]! * mean[k - 2]!;
-    misfit += residual * residual + (mean[k]! * rough) / curvature;
+    misfit += residual * residual * precision[k]! + mean[k]! * rough * stiffness;
   }
   return misfit;
 }
