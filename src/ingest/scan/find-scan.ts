@@ -2,6 +2,7 @@
 
 import { textOf, type Dataset, type Variable } from '../netcdf/dataset.ts';
 import { unitIn } from '../netcdf/roles.ts';
+import { withEvenRays } from './uneven-rays.ts';
 
 export interface ScanVariables {
   readonly velocity: Variable;
@@ -34,7 +35,8 @@ const SIGNAL_NAMES =
   'snr signal_to_noise_ratio signal_noise_ratio cnr carrier_to_noise_ratio intensity signal_intensity snrh signal';
 
 /** The variables of a scan, or null when the dataset holds none. */
-export function findScan(dataset: Dataset): ScanVariables | null {
+export function findScan(file: Dataset): ScanVariables | null {
+  const dataset = withEvenRays(file);
   const velocity = pick(dataset, `${AWAY} ${TOWARD}`, VELOCITY_NAMES, (variable) => variable.dimensions.length === 2);
   if (velocity === null) return null;
   const [rays, gates] = velocity.dimensions;

@@ -93,6 +93,54 @@ function expectWind(profile: Profile): void {
   }
 }
 
+describe('rays of unequal length', () => {
+  /** The scan with its gates strung together; every third ray has four gates fewer. */
+  const strung = (change: (starts: number[], counts: number[]) => void = () => undefined): FileParts => {
+    const rays = cone(36, 60, 0);
+    const even = scan(rays);
+    const variables = even.variables!;
+    const counts = rays.map((_, k) => (k % 3 === 0 ? GATES - 4 : GATES));
+    const starts = counts.map((_, k) => counts.slice(0, k).reduce((sum, count) => sum + count, 0));
+    const points = counts.reduce((sum, count) => sum + count, 0);
+    const take = ({ data, ...rest }: VariableParts): VariableParts => ({
+      ...rest,
+      dimensions: ['n_points'],
+      data: counts.flatMap((count, k) => (data as number[]).slice(k * GATES, k * GATES + count)),
+    });
+    change(starts, counts);
+    const index = (data: number[]): VariableParts => ({ type: 'i4', dimensions: ['time'], data });
+    return {
+      ...even,
+      dimensions: { ...even.dimensions, n_points: points },
+      variables: {
+        ...variables,
+        VEL: take(variables.VEL!),
+        SNR: take(variables.SNR!),
+        ray_start_index: index(starts),
+        ray_n_gates: index(counts),
+      },
+    };
+  };
+
+  it('give the winds of even ones, from fewer beams where some end', async () => {
+    const { profiles, codes } = await read(strung());
+    expect(codes).toEqual([]);
+    expect(profiles).toHaveLength(1);
+    expect(profiles[0]!.levelCount).toBe(GATES);
+    expectWind(profiles[0]!);
+  });
+
+  it('are refused where beginnings and lengths do not fit', async () => {
+    for (const change of [
+      (starts: number[]) => (starts[5] = 100_000),
+      (starts: number[]) => (starts[5] = -1),
+      (_: number[], counts: number[]) => (counts[5] = GATES + 1),
+    ]) {
+      expect((await read(strung(change))).codes).toContain('ingest/scan-rays');
+    }
+  });
+});
+
 describe('conical scans', () => {
   it('finds each turn of a beam that goes round and round', async () => {
     const rays = [...cone(36, 60, 0, 350.3), ...cone(36, 60, 36, 350.4), ...cone(36, 60, 72, 350.2)];
