@@ -2,11 +2,11 @@
 
 import { writeCoverageJson, writeCsv, writeNetcdf } from '../../src/ingest/index.ts';
 import { BlockBuilder, type ProfileBlock } from '../../src/profile/index.ts';
-import { buildClassic } from '../ingest/netcdf/build-classic.ts';
 import { buildHdf5 } from '../ingest/netcdf/build-hdf5.ts';
 import { joined } from '../support/bufr-writer.ts';
-import { encodeTemp, type CodedSounding } from '../support/encode-temp.ts';
+import { madeBulletin } from '../support/made-bulletin.ts';
 import { igraText, type IgraLevel } from '../support/make-igra.ts';
+import { madeScan } from '../support/made-scan.ts';
 import { profilerReport } from '../support/profiler-report.ts';
 import { bytesOf } from '../support/sources.ts';
 import { spoil, type Figure } from './spoil.ts';
@@ -16,7 +16,7 @@ export default async function bench(report: (figure: Figure) => void): Promise<v
   console.error = (): void => undefined;
   const block = made();
   await spoil('netcdf-classic', writeNetcdf([block]), report);
-  await spoil('netcdf-classic', buildClassic(scan()), (figure) =>
+  await spoil('netcdf-classic', madeScan(3), (figure) =>
     report({ ...figure, name: figure.name.replace('netcdf-classic', 'netcdf-classic, conical scan') }),
   );
   await spoil('netcdf-4', await buildHdf5(), report);
@@ -49,91 +49,7 @@ function made(): ProfileBlock {
   return builder.finish();
 }
 
-/** Three turns of a lidar's beam. */
-function scan(): Parameters<typeof buildClassic>[0] {
-  const [rays, gates] = [72, 12];
-  const along = (value: (ray: number) => number): number[] => Array.from({ length: rays }, (_, ray) => value(ray));
-  const variable = (dimensions: string[], data: number[], units: string) => ({
-    type: 'f4' as const,
-    dimensions,
-    data,
-    attributes: { units },
-  });
-  const velocity = Array.from({ length: rays * gates }, (_, k) => {
-    const [ray, gate] = [Math.floor(k / gates), k % gates];
-    return 0.5 * (5 + gate) * Math.sin((ray * 15 * Math.PI) / 180);
-  });
-  return {
-    dimensions: { time: rays, range: gates },
-    attributes: { title: 'Doppler lidar' },
-    variables: {
-      time: variable(
-        ['time'],
-        along((ray) => ray),
-        'seconds since 2024-06-01',
-      ),
-      range: variable(
-        ['range'],
-        Array.from({ length: gates }, (_, k) => 150 + 100 * k),
-        'm',
-      ),
-      azimuth: variable(
-        ['time'],
-        along((ray) => (15 * ray) % 360),
-        'degrees',
-      ),
-      elevation: variable(
-        ['time'],
-        along(() => 60),
-        'degrees',
-      ),
-      radial_velocity: variable(['time', 'range'], velocity, 'm/s'),
-      snr: variable(
-        ['time', 'range'],
-        velocity.map(() => 5),
-        'dB',
-      ),
-    },
-  };
-}
-
-function bulletins(): string {
-  const sounding = (k: number): CodedSounding => ({
-    station: String(10_900 + k),
-    day: 15,
-    hour: 12,
-    knots: k % 2 === 0,
-    surface: {
-      pressure: 1000 - k,
-      temperature: { degrees: 14, figure: 6 },
-      depression: 20,
-      wind: { direction: 180, speed: 5 },
-    },
-    standard: [
-      [925, 745, 10],
-      [850, 1455, 6],
-      [700, 3012, 1],
-      [500, 5620, 17],
-      [300, 9230, 44],
-      [100, 16_320, 57],
-      [50, 20_740, 56],
-    ].map(([pressure, height, degrees], j) => ({
-      pressure: pressure!,
-      height: height!,
-      temperature: { degrees: degrees!, figure: j < 3 ? 6 : 5 },
-      depression: 30,
-      wind: { direction: 200 + 5 * j, speed: 10 + 3 * j },
-    })),
-    significant: [950, 900, 640].map((pressure) => ({
-      pressure,
-      temperature: { degrees: 8, figure: 2 },
-      depression: 56,
-    })),
-    winds: [980, 890, 610].map((pressure) => ({ pressure, wind: { direction: 230, speed: 17 } })),
-    lowestWindPressure: 50,
-  });
-  return Array.from({ length: 12 }, (_, k) => encodeTemp(sounding(k)).join('')).join('');
-}
+const bulletins = (): string => Array.from({ length: 12 }, (_, k) => madeBulletin(10_900 + k, k % 2 === 0)).join('');
 
 function igra(index: number): string {
   const levels = Array.from({ length: 40 }, (_, k): IgraLevel => ({

@@ -33,6 +33,8 @@ interface Kept {
 
 /** Data newer than this are taken for live: the moment looked at then follows the clock. */
 const LIVE_MS = 3 * 3_600_000;
+/** More files than this are counted, not named. */
+const MOST_NAMED = 6;
 const CLOCK_TICK_MS = 20_000;
 const REPLAY_TICK_MS = 160;
 /** Step of a replay where the feed's own interval cannot be told. */
@@ -118,7 +120,7 @@ export class Board {
     const sites: { text: string; name: string }[] = [];
     const others: OpenFile[] = [];
     const tables: OpenFile[] = [];
-    const files = chosen.map((file) => ({ name: file.name, blob: file, writtenMs: file.lastModified }));
+    const files = chosen.map((file) => ({ name: file.name, blob: file, writtenMs: writtenMs(file) }));
     const areTables = await this.worker.areArchiveFiles(files);
     for (const [k, file] of files.entries()) {
       const text = areTables[k] === true ? null : await siteText(file.blob);
@@ -149,7 +151,7 @@ export class Board {
       location.hash = '#/nights';
     }
     this.notice = {
-      words: `Opened ${chosen.map((file) => file.name).join(', ')}.`,
+      words: `Opened ${chosen.length > MOST_NAMED ? `${chosen.length} files` : chosen.map((file) => file.name).join(', ')}.`,
       undo: () => void this.#goBack(before),
     };
     await this.refresh();
@@ -269,7 +271,8 @@ export class Board {
         const report = await this.worker.read(number, [...files], proxy(tell));
         const opened = report.files.map((file, index) => ({ ...files[index]!, ...file }));
         this.files = [...this.files.filter((file) => !opened.some((other) => other.name === file.name)), ...opened];
-        this.problems = [...this.problems, ...opened.flatMap((file) => file.problems)];
+        const grave = opened.flatMap((file) => file.problems.filter(({ mild }) => mild !== true));
+        this.problems = [...this.problems, ...grave];
         if (report.cancelled) this.problems = [...this.problems, stopped(files.length - report.files.length)];
       } catch (error) {
         this.problems = [...this.problems, failed(error)];
@@ -298,6 +301,12 @@ export class Board {
 /** A scan writes each table under one name with several endings. */
 function stemOf(name: string): string {
   return name.replace(/\.[^.]*$/u, '');
+}
+
+/** When a file was written; undefined where an unpacker that keeps no times left one long before there were such files. */
+function writtenMs({ lastModified }: File): number | undefined {
+  const EARLIEST_MS = Date.UTC(2000, 0, 1);
+  return lastModified >= EARLIEST_MS ? lastModified : undefined;
 }
 
 /** The text of a file that is a site file: JSON with a site's keys. Anything else is a matter for the readers. */
