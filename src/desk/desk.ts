@@ -27,13 +27,17 @@ import { screen, type FeedScreening } from '../quality/index.ts';
 import { siteStation, type Site } from '../site/index.ts';
 import { AirSources } from './air-sources.ts';
 import { archiveOf, type ArchiveView } from './archive/view.ts';
-import { farmThrough, type DiscSeries, type FarmState } from './farm.ts';
+import { farmRecord, fitRecord, reckonRecord, type FarmRecord, type ReckonedRecord } from './farm-record.ts';
+import { farmThrough, type DiscSeries, type FarmNight, type FarmState } from './farm.ts';
 import type { FeedName } from './feed-name.ts';
 import { FeedStore, type Acceptance } from './feed-store.ts';
 import { inflowState, windTooOld, type InflowQuestion, type InflowState, type NoInflow } from './inflow.ts';
+import { facesOf, joinNight, type DiscFaceWind, type FeedSeries, type NightJoin } from './joined-night.ts';
 import { MoistDesk } from './moist-desk.ts';
 import type { MoistureQuestion, MoistureState } from './moist-night.ts';
 import { nightWindow, type NightWindow } from './night-window.ts';
+import { OutputStore } from './output-store.ts';
+import { standTogether } from './same-place.ts';
 import { siteDiscWind } from './site-disc.ts';
 import type { TransportHistory } from './usual-transport.ts';
 
@@ -66,6 +70,10 @@ export interface NightState {
   /** Kind with evidence, turning and layer of each track, in the order of `tracks`. */
   readonly stories: readonly JetStory[];
   readonly discs: readonly DiscSeries[];
+  /** The newest profile across each disc, in the order of `discs`; empty without a profile. */
+  readonly faces: readonly DiscFaceWind[];
+  /** The instruments whose winds the discs rest on; null where it is the feed's own alone. */
+  readonly join: NightJoin | null;
   readonly farm: FarmState;
   /** Of the newest profile, with its own humidity or that of a station which may lend it; null before the first one. */
   readonly moisture: MoistureNumbers | null;
@@ -98,6 +106,8 @@ export class Desk {
   readonly #screened = new Map<string, Screened>();
   /** The night last asked for, by feed. */
   readonly #nights = new Map<string, { raw: ProfileBlock; from: number; to: number; screened: Screened }>();
+  readonly #outputs = new OutputStore();
+  readonly #records = new Map<string, { readonly block: ProfileBlock; readonly record: ReckonedRecord }>();
 
   readonly #moist: MoistDesk;
 
@@ -115,6 +125,11 @@ export class Desk {
   /** Takes profiles in any order, twice or late; ends in the same state as in order and once. */
   accept(block: ProfileBlock): Acceptance {
     return this.#store.accept(block);
+  }
+
+  /** Takes a farm's actual output: kW by time, UTC ms, ascending. A file of the same name takes the place of the one before. */
+  acceptOutput(source: string, timeMs: Float64Array, powerKw: Float64Array): void {
+    this.#outputs.accept(source, timeMs, powerKw);
   }
 
   /** All feeds by key. */
@@ -169,9 +184,12 @@ export class Desk {
     }));
     const timeMs = indices.map((index) => block.timeMs[index]!);
     const tracks = trackJets(timed);
+    const together = this.#together(feed, window.startMs, atMs);
+    const { join, profiles: winds } = joinNight({ feed, profiles: [...profilesOf(block)] }, together, this.site);
+    const joined = winds.slice(winds.length - indices.length);
     const discs = this.site.turbines.map((turbine) => ({
       turbine,
-      winds: profiles.map((profile, k) =>
+      winds: joined.map((profile, k) =>
         siteDiscWind(profile, turbine, findings[k]!.jets[0]?.noseHeight ?? NaN, this.site),
       ),
     }));
@@ -189,9 +207,50 @@ export class Desk {
       tracks,
       stories: tracks.map((track) => storyOf(track, setting, { time: utcClock })),
       discs,
-      farm: farmThrough({ site: this.site, timeMs, profiles, discs, tracks, sunriseMs }),
+      faces: facesOf(joined.at(-1), join, this.site),
+      join,
+      farm: farmThrough({
+        site: this.site,
+        timeMs,
+        profiles: joined,
+        discs,
+        tracks,
+        sunriseMs,
+        actual: this.#actual(question.feed, atMs),
+      }),
       moisture: profiles.length === 0 ? null : this.#moist.newest(profiles.at(-1)!, findings.at(-1)!.jets[0]?.core),
     };
+  }
+
+  /** The farm over a feed's whole record up to a moment; null where there is no such feed. */
+  farmRecord(feed: string, atMs: number): FarmRecord | null {
+    const record = this.#record(feed);
+    return record === null ? null : farmRecord(record, atMs, this.site, this.#outputs.all());
+  }
+
+  #record(feed: string): ReckonedRecord | null {
+    const block = this.block(feed);
+    if (block === null) return null;
+    let known = this.#records.get(feed);
+    if (known?.block !== block) {
+      known = { block, record: reckonRecord(block, this.site) };
+      this.#records.set(feed, known);
+    }
+    return known.record;
+  }
+
+  #actual(feed: string, atMs: number): FarmNight['actual'] {
+    const output = this.#outputs.all();
+    return output === null ? null : { output, fit: fitRecord(this.#record(feed)!, atMs, output) };
+  }
+
+  /** The other feeds at a feed's place, as screened for a night. */
+  #together(feed: FeedName, startMs: number, atMs: number): FeedSeries[] {
+    const others = this.#store.names().filter((name) => standTogether(name, feed));
+    return others.map((name) => {
+      const { block } = this.#screenedNight(name.key, this.#store.block(name.key)!, startMs, atMs);
+      return { feed: name, profiles: [...profilesOf(block)] };
+    });
   }
 
   /** What storms get of the air at a moment, of nothing later; null where there is no such feed or no profile yet. */

@@ -6,6 +6,7 @@ import {
   causesOfRamp,
   farmOutput,
   findRamps,
+  meanOutputAt,
   ratedPower,
   timeInBands,
   timeInState,
@@ -13,6 +14,7 @@ import {
   watchLoads,
   type BandTimes,
   type DiscWind,
+  type FactorFit,
   type FarmOutput,
   type LoadState,
   type Ramp,
@@ -21,6 +23,8 @@ import {
   type TypeOutput,
 } from '../rotor/index.ts';
 import type { RampDefinition, Site, TurbineType } from '../site/index.ts';
+import { SHEAR_EDGES, VEER_EDGES } from './bands.ts';
+import type { ActualOutput } from './output-store.ts';
 
 /** What one turbine type meets through the night, a record for each profile of the series. */
 export interface DiscSeries {
@@ -57,15 +61,21 @@ export interface FarmState {
   /** Definitions that the ramps were sought by. */
   readonly definitions: readonly RampDefinition[];
   readonly discs: readonly DiscNight[];
+  /** null where no output of the farm is open. */
+  readonly actual: FarmActual | null;
+}
+
+/** What the farm's own systems reported, beside what is reckoned. */
+export interface FarmActual {
+  readonly sources: readonly string[];
+  /** kW, in parallel with the night's times; NaN where nothing was reported. */
+  readonly powerKw: Float64Array;
+  /** Of all that is open up to the moment, by the feed's own levels. */
+  readonly fit: FactorFit;
 }
 
 /** What counts as a ramp where the site file does not say; common practice, without source. */
 export const USUAL_RAMPS: readonly RampDefinition[] = [{ name: '30 % within an hour', share: 0.3, withinS: 3600 }];
-
-/** Shear exponents that part the bands: the seventh-power law of neutral air, the design value on land, strong shear. */
-const SHEAR_EDGES = [0, 0.14, 0.2, 0.3, 0.5];
-/** degrees per 100 m */
-const VEER_EDGES = [2, 5, 10, 20];
 
 export interface FarmNight {
   readonly site: Site;
@@ -75,11 +85,12 @@ export interface FarmNight {
   readonly tracks: readonly JetTrack[];
   /** UTC ms; NaN where the sun does not rise or the place is not known. */
   readonly sunriseMs: number;
+  readonly actual: { readonly output: ActualOutput; readonly fit: FactorFit } | null;
 }
 
 /** The farm through a night; types without a power curve have loads and no power. */
 export function farmThrough(night: FarmNight): FarmState {
-  const { site, timeMs } = night;
+  const { site, timeMs, actual } = night;
   const types = night.discs.map(({ turbine, winds }) => typeOutput(turbine, winds));
   const output = farmOutput(types, site.farmFactor);
   const definitions = site.ramps.length > 0 ? site.ramps : USUAL_RAMPS;
@@ -90,6 +101,10 @@ export function farmThrough(night: FarmNight): FarmState {
     definitions,
     ramps: ramps.map((ramp) => ({ ramp, causes: causesOfFarmRamp(ramp, types, night) })),
     discs: night.discs.map((series) => discNight(series, night)),
+    actual:
+      actual === null
+        ? null
+        : { sources: actual.output.sources, powerKw: meanOutputAt(timeMs, actual.output), fit: actual.fit },
   };
 }
 

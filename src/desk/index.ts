@@ -31,6 +31,7 @@ export {
   USUAL_RAMPS,
   type DiscNight,
   type DiscSeries,
+  type FarmActual,
   type FarmRamp,
   type FarmState,
   type WatchedLoad,
@@ -50,3 +51,6 @@ export type { MoistureQuestion, MoistureState, Growth } from './moist-night.ts';
 export type { ArrivalBoard, KeptScore, UpstreamAir } from './arrivals.ts';
 export type { TriangleMember, TriangleState } from './triangles.ts';
 export type { TransportHistory, UsualTransport } from './usual-transport.ts';
+export type { FarmRecord, RecordSum } from './farm-record.ts';
+export type { DiscFaceWind, FaceSlice, NightJoin } from './joined-night.ts';
+export type { FeedDisagreement, JoinedPart } from './joined-series.ts';

@@ -1,6 +1,7 @@
 export type { FileFormat, Reading, ReadOptions, ReadProgress } from './format.ts';
 export { FORMATS } from './formats.ts';
 export { readOutputSeries, type OutputReading } from './output-series.ts';
+export { isOutputTable } from './output-table.ts';
 export { readProfiles } from './read-profiles.ts';
 export { isStationList, readStationList, type StationList } from './stations/station-list.ts';
 export { bytesSource, DEFAULT_LIMITS, type ByteSource, type ReadLimits } from './source.ts';

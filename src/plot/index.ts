@@ -1,4 +1,6 @@
 export { drawBarb, feathersOf, type BarbStyle, type Feathers } from './barbs.ts';
+export { drawDiscFace, type DiscFace, type FaceBox } from './disc-face.ts';
+export { rotorPng, type RotorSheet } from './rotor-sheet.ts';
 export { drawDiscBands, drawDiscs, type Disc } from './disc.ts';
 export {
   FIELD_NAMES,
@@ -52,7 +54,7 @@ export { drawSectionOver, drawSectionUnder, type Call, type SectionScene } from 
 export { THEMES, type Theme, type ThemeName } from './theme.ts';
 export { drawThread, type Thread, type ThreadStyle } from './thread.ts';
 export { timeTicks, valueTicks, type Tick } from './ticks.ts';
-export { chartData, frameOf, thinned, timeAxis, valueAxis } from './uplot-adapter.ts';
+export { chartData, frameOf, seriesData, thinned, timeAxis, valueAxis } from './uplot-adapter.ts';
 export { WindLookup, type MeasuredWind } from './wind-lookup.ts';
 export {
   boundExtent,

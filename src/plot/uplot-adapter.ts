@@ -14,6 +14,32 @@ export function chartData(x: ArrayLike<number>, ...columns: readonly ArrayLike<n
   return [Array.from(x), ...columns.map(orNull)];
 }
 
+/** An interval longer than this many usual ones is a gap, over which no line is drawn. */
+const GAP = 2.5;
+
+/**
+ * The same for series through time, with an empty moment in each gap between the times.
+ * @param timeMs ascending
+ */
+export function seriesData(timeMs: ArrayLike<number>, ...columns: readonly ArrayLike<number>[]): uPlot.AlignedData {
+  const intervals = Float64Array.from(
+    { length: Math.max(0, timeMs.length - 1) },
+    (_, k) => timeMs[k + 1]! - timeMs[k]!,
+  );
+  const usual = intervals.slice().sort()[intervals.length >> 1] ?? NaN;
+  const times: number[] = [];
+  const from: number[] = [];
+  for (let k = 0; k < timeMs.length; k++) {
+    if (k > 0 && intervals[k - 1]! > GAP * usual) {
+      times.push((timeMs[k - 1]! + timeMs[k]!) / 2);
+      from.push(-1);
+    }
+    times.push(timeMs[k]!);
+    from.push(k);
+  }
+  return chartData(times, ...columns.map((column) => from.map((k) => column[k] ?? NaN)));
+}
+
 /** The frame that a chart's axes span, in device pixels. */
 export function frameOf(chart: uPlot, xScale: string, yScale: string): Frame {
   const { left, top, width, height } = chart.bbox;

@@ -58,12 +58,16 @@ const LEAST_SPEED = 2;
 /**
  * Compares two instruments over times at which both measured: at each level of the worse one that lies within the better
  * one's heights (or 10 m beyond), with the better wind interpolated linearly in u and v.
+ * @param stated standard uncertainty of a profile's speeds where somebody states it, m/s; NaN where not
  */
-export function measureDisagreement(pairs: readonly ProfilePair[]): Disagreement {
+export function measureDisagreement(
+  pairs: readonly ProfilePair[],
+  stated: (profile: Profile) => number = () => NaN,
+): Disagreement {
   const perTime: { speed: number; direction: number; excess: number }[] = [];
   const heights = new Map<number, { speed: number[]; direction: number[] }>();
   for (const pair of pairs) {
-    const differences = compare(pair);
+    const differences = compare(pair, stated);
     if (differences.length === 0) continue;
     const directions = differences.map((at) => at.direction).filter((value) => !Number.isNaN(value));
     perTime.push({
@@ -128,9 +132,9 @@ interface Difference {
   readonly uncertainty: number;
 }
 
-function compare({ better, worse }: ProfilePair): Difference[] {
-  const reference = usable(better);
-  const other = usable(worse);
+function compare({ better, worse }: ProfilePair, stated: (profile: Profile) => number): Difference[] {
+  const reference = usable(better, stated(better));
+  const other = usable(worse, stated(worse));
   const differences: Difference[] = [];
   for (let k = 0; k < other.count; k++) {
     const height = other.heightAgl[k]!;
@@ -152,9 +156,9 @@ function compare({ better, worse }: ProfilePair): Difference[] {
   return differences;
 }
 
-function usable(profile: Profile): WindColumn {
+function usable(profile: Profile, stated: number): WindColumn {
   const column = gatherWind(profile, windColumn(profile.levelCount));
-  completeUncertainty(column, profile.instrument, NaN);
+  completeUncertainty(column, profile.instrument, stated);
   return column;
 }
 

@@ -7,6 +7,12 @@ import { normaliseSpeed, powerFromCurve } from './power.ts';
 /** What a turbine does at one time. */
 export type TurbineState = 'turning' | 'below-cut-in' | 'stopped-high-wind' | 'not-assessable';
 
+/** What of the wind on a disc its power is reckoned from. */
+export type ReckonedWind = Pick<
+  DiscWind,
+  'status' | 'hubSpeed' | 'equivalentSpeed' | 'equivalentSpeedVeer' | 'airDensity'
+>;
+
 /** Output of one turbine of a type through the series; lists run in parallel with the winds given. */
 export interface TypeOutput {
   readonly turbine: TurbineType;
@@ -59,7 +65,7 @@ export function keepsTurning(turbine: TurbineType, turning: boolean, speed: numb
  * curve's last power is held.
  * @param winds in order of time; stopping remembers the one before
  */
-export function typeOutput(turbine: TurbineType, winds: readonly DiscWind[]): TypeOutput {
+export function typeOutput(turbine: TurbineType, winds: readonly ReckonedWind[]): TypeOutput {
   const hubKw = new Float64Array(winds.length).fill(NaN);
   const equivalentKw = new Float64Array(winds.length).fill(NaN);
   const state: TurbineState[] = [];

@@ -8,9 +8,10 @@ export {
   type ProfilePair,
 } from './disagreement.ts';
 export { segmentArea, topTip, type Disc } from './disc.ts';
+export { discSlices, type DiscSlice, type DiscSlices } from './disc-slices.ts';
 export type { DiscUncertainty } from './disc-uncertainty.ts';
 export { noseInDisc, windOnDisc, type DiscWind, type DiscWindOptions, type WindAt } from './disc-wind.ts';
-export { timeInBands, type BandTimes } from './durations.ts';
+export { sampleDurationsS, timeInBands, type BandTimes } from './durations.ts';
 export {
   farmOutput,
   fitFarmFactor,
@@ -19,12 +20,20 @@ export {
   typeOutput,
   type FactorFit,
   type FarmOutput,
+  type ReckonedWind,
   type TurbineState,
   type TypeOutput,
 } from './fleet-power.ts';
 export { FleetScan, type FleetWind } from './fleet-scan.ts';
 export { cubeMean, discQuadrature, type DiscQuadrature } from './integral.ts';
-export { joinProfiles, type Join, type JoinedProfile, type KnownDisagreement } from './join.ts';
+export {
+  disagreementInWords,
+  joinProfiles,
+  type Join,
+  type JoinedProfile,
+  type JoinOptions,
+  type KnownDisagreement,
+} from './join.ts';
 export { LOADS_CAUTION, timeInState, watchLoads, type LoadState, type TimeInState } from './loads.ts';
 export { normalisePower, normaliseSpeed, powerFromCurve } from './power.ts';
 export {

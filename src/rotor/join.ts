@@ -28,12 +28,18 @@ export interface Join {
 export interface JoinedProfile {
   readonly profile: Profile;
   readonly joins: readonly Join[];
-  /** Instrument of each level of the profile. */
-  readonly instruments: readonly Instrument[];
+  /** The levels with wind, from the ground up, each with the profile that it comes from. */
+  readonly levels: readonly { readonly heightAgl: number; readonly profile: Profile }[];
 }
 
 /** What is known of the disagreement of two instruments, told by a profile of each; undefined where nothing is. */
 export type KnownDisagreement = (better: Profile, worse: Profile) => Disagreement | undefined;
+
+export interface JoinOptions {
+  readonly disagreement?: KnownDisagreement;
+  /** Standard uncertainty of a level's speed, m/s, that the site states; NaN takes the profile's own or the kind's. */
+  readonly speedUncertainty?: (profile: Profile) => number;
+}
 
 /** m: within a wider gap between the better one's levels the worse one's are used. Our own choice. */
 const HOLE = 150;
@@ -47,7 +53,7 @@ const HOLE = 150;
  */
 export function joinProfiles(
   profiles: readonly Profile[],
-  disagreement: KnownDisagreement = () => undefined,
+  { disagreement = () => undefined, speedUncertainty = () => NaN }: JoinOptions = {},
 ): JoinedProfile {
   if (profiles.length === 0) {
     throw new DuskveerError({
@@ -57,7 +63,8 @@ export function joinProfiles(
       where: {},
     });
   }
-  const ranked = profiles.map(partOf).sort((a, b) => a.uncertainty - b.uncertainty || a.spacing - b.spacing);
+  const parts = profiles.map((profile) => partOf(profile, speedUncertainty(profile)));
+  const ranked = parts.sort((a, b) => a.uncertainty - b.uncertainty || a.spacing - b.spacing);
   const placed: PlacedPart[] = [];
   let taken: JoinLevel[] = [];
   for (const part of ranked) {
@@ -75,7 +82,7 @@ export function joinProfiles(
   return {
     profile: profiles.length === 1 ? profiles[0]! : merged(ranked, taken, joins),
     joins,
-    instruments: taken.map((level) => level.place.profile.instrument),
+    levels: taken.map(({ heightAgl, place }) => ({ heightAgl, profile: place.profile })),
   };
 }
 
@@ -119,12 +126,12 @@ interface Part {
   readonly spacing: number;
 }
 
-function partOf(profile: Profile): Part {
+function partOf(profile: Profile, stated: number): Part {
   const column = gatherWind(profile, windColumn(profile.levelCount));
   const marks = column.mark.slice();
   // Doubt widens an uncertainty where it is used; the joined profile carries the mark and must not be widened twice.
   column.mark.fill(0);
-  completeUncertainty(column, profile.instrument, NaN);
+  completeUncertainty(column, profile.instrument, stated);
   const levels = Array.from({ length: column.count }, (_, k) => ({
     heightAgl: column.heightAgl[k]!,
     speed: column.speed[k]!,

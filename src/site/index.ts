@@ -1,3 +1,4 @@
+export { withFarmFactor } from './farm-factor.ts';
 export { readSite } from './read-site.ts';
 export {
   PLAIN_SITE,

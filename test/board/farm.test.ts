@@ -78,16 +78,15 @@ describe('the farm through the night', () => {
     const text = farmStory(state, METRIC, timeWords('utc', 'UTC'))
       .map((piece) => piece.text)
       .join('');
-    expect(text).toMatch(
-      /^At 23:50 the wind over the discs is good for \d+\.\d MW of 20; the shape of the profile takes \d+\.\d MW/,
-    );
-    expect(text).toContain('The nose at 120 m is in the disc since 23:00.');
+    expect(text).toMatch(/^At 23:50 the wind over the discs is good for \d+\.\d MW of 20; the jet takes \d+\.\d MW/);
+    expect(text).toContain('The nose entered the disc of Invented "A" at 23:00 and stands at 120 m.');
+    expect(text).toMatch(/Output rose by \d+\.\d MW \(\d+ % of capacity\) in \d+ min from 22:50: .*\.$/);
   });
 
   it('writes a line a profile and type, with missing cells empty and names quoted', () => {
     const lines = farmCsv(state).trim().split('\n');
     expect(lines).toHaveLength(1 + 12);
-    expect(lines[1]).toMatch(/^2024-05-21T22:00:00\.000Z,"Invented ""A""",ok,1\.000,7\.00,200\.0,7\.000,7\.000,/);
+    expect(lines[1]).toMatch(/^2024-05-21T22:00:00\.000Z,"Invented ""A""",ok,"",1\.000,0\.000,7\.00,/);
     expect(lines[1]!.split(',')).toHaveLength(lines[0]!.split(',').length);
   });
 

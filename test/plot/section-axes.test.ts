@@ -1,6 +1,15 @@
 import { describe, expect, it, vi } from 'vitest';
 import type uPlot from 'uplot';
-import { chartData, FONT, frameOf, profileOptions, sectionOptions, THEMES, type Look } from '../../src/plot/index.ts';
+import {
+  chartData,
+  FONT,
+  frameOf,
+  profileOptions,
+  sectionOptions,
+  seriesData,
+  THEMES,
+  type Look,
+} from '../../src/plot/index.ts';
 
 const look: Look = { theme: THEMES.dark, ratio: 2, font: FONT };
 const HOUR = 3_600_000;
@@ -22,6 +31,16 @@ const chartOf = (options: uPlot.Options, extra: object = {}): uPlot =>
     scales: options.scales,
     ...extra,
   }) as unknown as uPlot;
+
+describe('seriesData', () => {
+  it('breaks the line where the usual interval is long exceeded', () => {
+    expect(seriesData([0, 10, 20, 60, 70], [1, 2, NaN, 4, 5])).toEqual([
+      [0, 10, 20, 40, 60, 70],
+      [1, 2, null, null, 4, 5],
+    ]);
+    expect(seriesData([], [])).toEqual([[], []]);
+  });
+});
 
 describe('chartData', () => {
   it('hands over plain arrays with null for what is missing', () => {

@@ -70,10 +70,10 @@ describe('measureDisagreement', () => {
 describe('joinProfiles', () => {
   it('lets the better one win by height, keeps clear of its end, and shows the join', () => {
     const { mast, lidar } = both(() => 0);
-    const { profile, joins, instruments } = joinProfiles([lidar[0]!, mast[0]!]);
+    const { profile, joins, levels } = joinProfiles([lidar[0]!, mast[0]!]);
     // 125 m lies within half a lidar gate of the mast's top.
     expect([...profile.heightAgl]).toEqual([...MAST, ...LIDAR.filter((z) => z > 132.5)]);
-    expect(instruments.filter((name) => name === 'mast')).toHaveLength(MAST.length);
+    expect(levels.filter((level) => level.profile === mast[0])).toHaveLength(MAST.length);
     expect(joins).toHaveLength(1);
     expect(joins[0]).toMatchObject({ height: 135, below: 'mast', above: 'lidar', turned: 0 });
     expect(profile.instrument).toBe('merged');
@@ -86,7 +86,7 @@ describe('joinProfiles', () => {
     const disc = { hubHeight: 120, rotorDiameter: 150 };
     const plain = windOnDisc(joinProfiles([mast[3]!, lidar[3]!]).profile, disc);
     expect(plain.veer).toBeCloseTo(12, 3);
-    const joined = joinProfiles([mast[3]!, lidar[3]!], () => known);
+    const joined = joinProfiles([mast[3]!, lidar[3]!], { disagreement: () => known });
     expect(windOnDisc(joined.profile, disc).veer).toBeCloseTo(0, 3);
     expect(joined.joins[0]!.turned).toBeCloseTo(-12, 4);
     expect(joined.joins[0]!.words).toContain('directions differ by +12.0°');
@@ -150,9 +150,11 @@ describe.skipIf(!sharedIsHere)('the real night: mast and radar', () => {
     ]);
     const timeMs = Date.UTC(2013, 10, 8, 12);
     const parts = [mast, low, high].map((profiles) => profiles.find((profile) => profile.timeMs === timeMs)!);
-    const joined = joinProfiles(parts, (better, worse) => {
-      if (better === parts[0] && worse === parts[1]) return known.get(low);
-      return better === parts[1] && worse === parts[2] ? known.get(high) : undefined;
+    const joined = joinProfiles(parts, {
+      disagreement: (better, worse) => {
+        if (better === parts[0] && worse === parts[1]) return known.get(low);
+        return better === parts[1] && worse === parts[2] ? known.get(high) : undefined;
+      },
     });
     expect(joined.joins[0]).toMatchObject({ below: 'mast', above: 'radar' });
     expect(joined.joins[0]!.turned).toBeCloseTo(-mastLow.direction, 9);

@@ -13,6 +13,8 @@ export interface OpenedFile extends OpenFile {
   readonly formats: readonly string[];
   readonly profiles: number;
   readonly stations: number;
+  /** Times of a farm's actual output; 0 in a file of profiles. */
+  readonly outputTimes: number;
   readonly problems: readonly Problem[];
 }
 
@@ -128,9 +130,9 @@ export class Board {
       else (areTables[k] === true ? tables : others).push(file);
     }
     this.notice = null;
-    // The demo gives way to files of one's own; more of these join those already open.
-    const lists = await this.worker.stationLists(others);
-    const hasProfiles = lists.includes(false);
+    const [lists, outputs] = await Promise.all([this.worker.stationLists(others), this.worker.areOutputs(others)]);
+    const hasProfiles = others.some((_, k) => lists[k] !== true && outputs[k] !== true);
+    // The demo gives way to files of one's own; more of these, and a farm's output, join what is already open.
     const leaveDemo = before.demo !== '' && (hasProfiles || tables.length > 0);
     const site = sites.at(-1) ?? (leaveDemo ? null : before.site);
     const kept = leaveDemo ? this.files.filter(({ stations }) => stations > 0) : before.files;
@@ -163,6 +165,18 @@ export class Board {
     const others = ({ name: other }: OpenFile): boolean => other !== name;
     await this.#goBack({ ...before, files: before.files.filter(others), tables: before.tables.filter(others) });
     this.notice = { words: `Closed ${name}.`, undo: () => void this.#goBack(before) };
+  }
+
+  /** Reckons with this factor of the farm's output, in the site file as it is open here; can be undone. */
+  async useFarmFactor(factor: number): Promise<void> {
+    const before = this.#kept();
+    if (before.site === null) return;
+    const text = await this.worker.siteWithFactor(before.site.text, factor);
+    await this.#goBack({ ...before, site: { ...before.site, text } });
+    this.notice = {
+      words: `Output is reckoned with the factor ${factor.toFixed(3)}.`,
+      undo: () => void this.#goBack(before),
+    };
   }
 
   /** Reads everything anew, after a change of what the reckoning rests on. */

@@ -38,10 +38,13 @@ export async function listDemo(): Promise<DemoList> {
 
 /** @throws Error when a file of the night is not served */
 export async function fetchDemo(night: DemoNight): Promise<Demo> {
-  const [site, ...blobs] = await Promise.all([night.site, ...night.files].map(fetchBlob));
+  const [site, ...blobs] = await Promise.all([night.site, ...night.files, ...(night.outputs ?? [])].map(fetchBlob));
   return {
     site: { text: await site!.text(), name: plainName(night.site) },
-    files: night.files.map((path, index) => ({ name: plainName(path), blob: blobs[index]! })),
+    files: [...night.files, ...(night.outputs ?? [])].map((path, index) => ({
+      name: plainName(path),
+      blob: blobs[index]!,
+    })),
     nowMs: Date.parse(night.now),
   };
 }

@@ -1,50 +1,67 @@
-// The farm's night as a table to take away: a line a profile and turbine type, keys with units, times in UTC.
+// The farm's night and record as tables to take away: keys with units, times in UTC, missing empty.
 
-import type { NightState } from '../../desk/index.ts';
+import type { FarmRecord, NightState } from '../../desk/index.ts';
 
-const HEAD = [
-  'time_utc',
-  'turbine',
-  'status',
-  'coverage',
-  'hub_speed_mps',
-  'hub_direction_deg',
-  'rews_mps',
-  'rews_veer_mps',
-  'shear_exponent',
-  'veer_deg',
-  'nose_in_rotor',
-  'power_kw',
-  'power_equivalent_kw',
-];
+type Row = readonly (readonly [key: string, cell: string])[];
 
+/** A line a profile and turbine type. */
 export function farmCsv(night: NightState): string {
-  const lines = [HEAD.join(',')];
-  night.discs.forEach(({ turbine, winds }, type) => {
-    const output = night.farm.output.types[type]!;
-    winds.forEach((wind, k) => {
-      const cells = [
-        new Date(night.timeMs[k]!).toISOString(),
-        `"${turbine.name.replaceAll('"', '""')}"`,
-        wind.status,
-        number(wind.coverage, 3),
-        number(wind.hubSpeed, 2),
-        number(wind.hubDirection, 1),
-        number(wind.equivalentSpeed, 3),
-        number(wind.equivalentSpeedVeer, 3),
-        number(wind.shearExponent, 3),
-        number(wind.veer, 1),
-        wind.noseInRotor === null ? '' : String(wind.noseInRotor),
-        number(output.hubKw[k]!, 0),
-        number(output.equivalentKw[k]!, 0),
-      ];
-      lines.push(cells.join(','));
-    });
-  });
-  return `${lines.join('\n')}\n`;
+  const { farm } = night;
+  return csvOf(
+    night.discs.flatMap(({ turbine, winds }, type) => {
+      const output = farm.output.types[type]!;
+      return winds.map((wind, k): Row => [
+        ['time_utc', new Date(night.timeMs[k]!).toISOString()],
+        ['turbine', `"${turbine.name.replaceAll('"', '""')}"`],
+        ['status', wind.status],
+        ['why', `"${wind.why.replaceAll('"', '""')}"`],
+        ['coverage', number(wind.coverage, 3)],
+        ['continued_share', number(wind.continuedShare, 3)],
+        ['hub_speed_mps', number(wind.hubSpeed, 2)],
+        ['hub_speed_uncertainty_mps', number(wind.uncertainty.hubSpeed, 2)],
+        ['hub_direction_deg', number(wind.hubDirection, 1)],
+        ['rews_mps', number(wind.equivalentSpeed, 3)],
+        ['rews_veer_mps', number(wind.equivalentSpeedVeer, 3)],
+        ['rews_uncertainty_mps', number(wind.uncertainty.equivalentSpeed, 3)],
+        ['integral_speed_mps', number(wind.integralSpeed, 3)],
+        ['shear_exponent', number(wind.shearExponent, 3)],
+        ['shear_exponent_lower', number(wind.shearLower, 3)],
+        ['shear_exponent_upper', number(wind.shearUpper, 3)],
+        ['veer_deg', number(wind.veer, 1)],
+        ['lower_tip_speed_mps', number(wind.bottom.speed, 2)],
+        ['lower_tip_direction_deg', number(wind.bottom.direction, 1)],
+        ['upper_tip_speed_mps', number(wind.top.speed, 2)],
+        ['upper_tip_direction_deg', number(wind.top.direction, 1)],
+        ['nose_height_agl_m', number(night.findings[k]!.jets[0]?.noseHeight ?? NaN, 0)],
+        ['nose_in_rotor', wind.noseInRotor === null ? '' : String(wind.noseInRotor)],
+        ['air_density_kg_per_m3', number(wind.airDensity, 4)],
+        ['power_kw', number(output.hubKw[k]!, 0)],
+        ['power_equivalent_kw', number(output.equivalentKw[k]!, 0)],
+        ['farm_power_kw', number(farm.output.hubKw[k]!, 0)],
+        ['farm_power_equivalent_kw', number(farm.output.equivalentKw[k]!, 0)],
+        ['farm_actual_kw', number(farm.actual?.powerKw[k] ?? NaN, 0)],
+      ]);
+    }),
+  );
 }
 
-/** Missing is an empty cell. */
+/** A line a profile of the record. */
+export function recordCsv({ timeMs, hubKw, equivalentKw, actualKw }: FarmRecord): string {
+  return csvOf(
+    Array.from(timeMs, (time, k): Row => [
+      ['time_utc', new Date(time).toISOString()],
+      ['farm_power_kw', number(hubKw[k]!, 0)],
+      ['farm_power_equivalent_kw', number(equivalentKw[k]!, 0)],
+      ['farm_actual_kw', number(actualKw?.[k] ?? NaN, 0)],
+    ]),
+  );
+}
+
+function csvOf(rows: readonly Row[]): string {
+  const head = rows[0]?.map(([key]) => key).join(',') ?? '';
+  return `${[head, ...rows.map((row) => row.map(([, cell]) => cell).join(','))].join('\n')}\n`;
+}
+
 function number(value: number, decimals: number): string {
   return Number.isFinite(value) ? value.toFixed(decimals) : '';
 }

@@ -4,6 +4,7 @@
 import { Cancelled, type Problem } from '../../air/index.ts';
 import {
   Desk,
+  type FarmRecord,
   type FeedState,
   type InflowState,
   type MoistureState,
@@ -20,9 +21,17 @@ import {
   type SectionView,
 } from '../../plot/index.ts';
 import { pickProfiles, type ProfileBlock, type Station } from '../../profile/index.ts';
-import { PLAIN_SITE, readSite, type DisplayUnits, type Site, type TurbineType } from '../../site/index.ts';
+import {
+  PLAIN_SITE,
+  readSite,
+  withFarmFactor,
+  type DisplayUnits,
+  type Site,
+  type TurbineType,
+} from '../../site/index.ts';
 import { archiveFileOf, breath, readArchiveTables } from './archive-tables.ts';
 import { blobSource } from './blob-source.ts';
+import { isOutput, readOutput } from './farm-output.ts';
 import { sectionTable } from './section-table.ts';
 import { areStationLists, readStationLists } from './station-lists.ts';
 import type {
@@ -98,7 +107,19 @@ export class DeskService implements BoardWorker {
         if (list !== undefined) {
           const { stations, problems } = list;
           bytesBefore += file.blob.size;
-          reports.push({ name: file.name, formats: [], profiles: 0, stations: stations.length, problems });
+          reports.push({
+            name: file.name,
+            formats: [],
+            profiles: 0,
+            stations: stations.length,
+            outputTimes: 0,
+            problems,
+          });
+          continue;
+        }
+        if (await isOutput(file)) {
+          reports.push(await readOutput(file, desk));
+          bytesBefore += file.blob.size;
           continue;
         }
         const formats = new Set<string>();
@@ -121,7 +142,7 @@ export class DeskService implements BoardWorker {
           accepted.replaced += replaced;
         }
         bytesBefore += file.blob.size;
-        reports.push({ name: file.name, formats: [...formats], profiles, stations: 0, problems });
+        reports.push({ name: file.name, formats: [...formats], profiles, stations: 0, outputTimes: 0, problems });
       }
       return { files: reports, accepted, cancelled: false };
     } catch (error) {
@@ -229,6 +250,18 @@ export class DeskService implements BoardWorker {
 
   async areArchiveFiles(files: readonly OpenFile[]): Promise<boolean[]> {
     return Promise.all(files.map(async (file) => (await archiveFileOf(file)) !== null));
+  }
+
+  async areOutputs(files: readonly OpenFile[]): Promise<boolean[]> {
+    return Promise.all(files.map(isOutput));
+  }
+
+  farmRecord(feed: string, atMs: number): FarmRecord | null {
+    return this.#desk.farmRecord(feed, atMs);
+  }
+
+  siteWithFactor(text: string, factor: number): string {
+    return withFarmFactor(text, factor);
   }
 
   async #archiveJob(

@@ -4,6 +4,7 @@ import type { Problem } from '../../air/index.ts';
 import type {
   Acceptance,
   ArchiveView,
+  FarmRecord,
   FeedState,
   InflowState,
   MoistureState,
@@ -40,6 +41,8 @@ export interface FileReport {
   readonly profiles: number;
   /** Of a list of stations; zero for any other file. */
   readonly stations: number;
+  /** Times of a farm's actual output; 0 in a file of profiles. */
+  readonly outputTimes: number;
   readonly problems: readonly Problem[];
 }
 
@@ -145,6 +148,12 @@ export interface BoardWorker {
   moisture(atMs: number, feed: string, criteria: string, humidityFrom: string): MoistureState | null;
   /** What storms get of the air at a moment; null where there is no such feed or no profile yet. */
   inflow(atMs: number, feed: string, criteria: string): InflowState | NoInflow | null;
+  /** Whether each file is a farm's actual output. */
+  areOutputs(files: readonly OpenFile[]): Promise<boolean[]>;
+  /** The farm over a feed's whole record up to a moment. */
+  farmRecord(feed: string, atMs: number): FarmRecord | null;
+  /** The text of a site file with this farm factor in it. */
+  siteWithFactor(text: string, factor: number): string;
 }
 
 /** How far the figures of an archive have come. */
