@@ -1,7 +1,7 @@
 export { AirSources } from './air-sources.ts';
 export { Desk, type FeedState, type NightQuestion, type NightState } from './desk.ts';
 export type { FeedName } from './feed-name.ts';
-export type { Acceptance } from './feed-store.ts';
+export { FeedStore, type Acceptance } from './feed-store.ts';
 export type { NightWindow } from './night-window.ts';
 export { archiveRows, judge, type ArchiveQuestion } from './archive/judge.ts';
 export { mergeRows } from './archive/merge.ts';
@@ -53,4 +53,11 @@ export type { TriangleMember, TriangleState } from './triangles.ts';
 export type { TransportHistory, UsualTransport } from './usual-transport.ts';
 export type { FarmRecord, RecordSum } from './farm-record.ts';
 export type { DiscFaceWind, FaceSlice, NightJoin } from './joined-night.ts';
-export type { FeedDisagreement, JoinedPart } from './joined-series.ts';
+export {
+  joinSeries,
+  type FeedDisagreement,
+  type FeedSeries,
+  type JoinedPart,
+  type JoinedSeries,
+} from './joined-series.ts';
+export { standTogether } from './same-place.ts';

@@ -4,7 +4,7 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { DuskveerError } from '../air/index.ts';
 import { EXIT, UsageError, type Command } from './command.ts';
-import { OutputFailed } from './output.ts';
+import { OutputClosed, OutputFailed } from './output.ts';
 import { problemInWords } from './reporter.ts';
 
 // Both src/relay and dist/relay lie two folders below the checkout.
@@ -96,6 +96,8 @@ function explained(name: string, error: unknown): number {
     process.stderr.write(`${error.message}\nHow to call it: duskveer ${name} --help\n`);
     return EXIT.wrongUsage;
   }
+  // Whoever read the output has seen enough.
+  if (error instanceof OutputClosed) return EXIT.well;
   if (error instanceof OutputFailed) {
     process.stderr.write(`The output could not be written: ${error.message}.\n`);
     return EXIT.failed;

@@ -3,7 +3,7 @@
 import { nightOf, toJsonNumber } from '../air/index.ts';
 import { siteDiscWind, USUAL_RAMPS } from '../desk/index.ts';
 import { trackJets, type JetFinding } from '../jet/index.ts';
-import { profilesOf, type Profile } from '../profile/index.ts';
+import type { Profile } from '../profile/index.ts';
 import {
   causesOfRamp,
   findRamps,
@@ -15,11 +15,11 @@ import {
   type RampCause,
 } from '../rotor/index.ts';
 import type { Site, TurbineType } from '../site/index.ts';
-import { readPaths } from './blocks.ts';
 import { parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { readPlaces, tellJoin } from './place-series.ts';
 import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
 import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
@@ -28,7 +28,8 @@ export const command: Command = {
   help: `duskveer ramps PATH... --site FILE
 
 Reads profiles from files, from all files in folders, or from stdin (-), screens them, reckons what the site's turbines would
-yield by their rotor-equivalent wind, and finds fast changes. What profiles give is held in short until all are read.
+yield by their rotor-equivalent wind, and finds fast changes. All profiles are held until all are read; instruments at one
+place are joined as \`rotor\` joins them.
 
 Prints a JSON line a ramp:
   station, turbine         whose wind; the turbine type, all of its machines together
@@ -51,23 +52,14 @@ ${SCREENS_HELP}`,
     const turbines = site.turbines.filter((turbine) => turbine.powerCurve !== null && turbine.count > 0);
     if (turbines.length === 0) throw new UsageError(`${values.site} lists no turbine with a power curve.`);
     const criteria = chosenCriteria(site, undefined);
-    const stations = new Map<string, ProfileFacts[]>();
-    const code = await readPaths(positionals, site, {
-      stations: listed,
-      take: (block) => {
-        for (const profile of profilesOf(screened(block))) {
-          const facts = factsOf(profile, findingOf(profile, criteria, site), turbines, site);
-          const known = stations.get(profile.station.id);
-          if (known === undefined) stations.set(profile.station.id, [facts]);
-          else known.push(facts);
-        }
-        return Promise.resolve();
-      },
-    });
+    const { code, places } = await readPlaces(positionals, site, screened, listed);
     const out = new LineWriter(process.stdout);
-    for (const [station, facts] of stations) {
-      facts.sort((a, b) => a.timeMs - b.timeMs);
-      for (const line of rampLines(station, facts, turbines, site)) await out.write(line);
+    for (const place of places) {
+      tellJoin(place);
+      const facts = place.profiles.map(({ wind, own }) =>
+        factsOf(wind, own === null ? null : findingOf(own, criteria, site), turbines, site),
+      );
+      for (const line of rampLines(place.feed.station.id, facts, turbines, site)) await out.write(line);
     }
     await out.flush();
     return code;
@@ -77,16 +69,22 @@ ${SCREENS_HELP}`,
 /** All that ramps need of a profile. */
 interface ProfileFacts {
   readonly timeMs: number;
-  readonly finding: JetFinding;
+  /** null where the instrument that tells of jets did not measure. */
+  readonly finding: JetFinding | null;
   /** One for each turbine type. */
   readonly winds: readonly DiscWind[];
   /** UTC, ms; NaN where the sun does not rise or the place is not known. */
   readonly sunriseMs: number;
 }
 
-function factsOf(profile: Profile, finding: JetFinding, turbines: readonly TurbineType[], site: Site): ProfileFacts {
+function factsOf(
+  profile: Profile,
+  finding: JetFinding | null,
+  turbines: readonly TurbineType[],
+  site: Site,
+): ProfileFacts {
   const { timeMs, station } = profile;
-  const nose = finding.jets[0]?.noseHeight ?? NaN;
+  const nose = finding?.jets[0]?.noseHeight ?? NaN;
   return {
     timeMs,
     finding,
@@ -102,7 +100,9 @@ function* rampLines(
   site: Site,
 ): Generator<Record<string, unknown>> {
   const timeMs = facts.map((fact) => fact.timeMs);
-  const tracks = trackJets(facts.map((fact) => ({ stationId: station, timeMs: fact.timeMs, finding: fact.finding })));
+  const tracks = trackJets(
+    facts.flatMap(({ timeMs: at, finding }) => (finding === null ? [] : [{ stationId: station, timeMs: at, finding }])),
+  );
   const sunrisesMs = [...new Set(facts.map((fact) => fact.sunriseMs))].filter((ms) => !Number.isNaN(ms));
   const definitions = site.ramps.length > 0 ? site.ramps : USUAL_RAMPS;
   for (const [index, turbine] of turbines.entries()) {

@@ -2,14 +2,14 @@
 
 import { toJsonNumber } from '../air/index.ts';
 import { siteDiscWind } from '../desk/index.ts';
-import { profilesOf, type Profile } from '../profile/index.ts';
-import { typeOutput, type DiscWind } from '../rotor/index.ts';
+import type { Profile } from '../profile/index.ts';
+import { keepsTurning, typeOutput, type DiscWind } from '../rotor/index.ts';
 import type { Site, TurbineType } from '../site/index.ts';
-import { readPaths } from './blocks.ts';
 import { numberOption, parseOptions, UsageError, type Command } from './command.ts';
 import { chosenCriteria, findingOf } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
+import { readPlaces, tellJoin } from './place-series.ts';
 import { screener, SCREENS_HELP, SCREENS_OPTION } from './screening.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
 import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
@@ -19,9 +19,12 @@ export const command: Command = {
 
 Reads profiles from files, from all files in folders, or from stdin (-), screens them and computes what their wind does on a
 rotor disc. Nothing is extrapolated unless the site file asks for it: a disc that the levels do not cover is not assessable.
+All profiles are held until all are read. Instruments at one place (of one station, or of stations within a kilometre) are
+joined by height, the better one winning; what they steadily differ by in direction is turned back and said on stderr.
 
-Prints a JSON line a profile and turbine type:
-  station, time, turbine
+Prints a JSON line a profile and turbine type, place by place in order of time:
+  station, time, turbine           of joined instruments the station of the one that reaches highest; where only another
+                                   measured, its own
   status, why                      ok, or not-assessable with the reason
   coverage                         part of the disc between lowest and highest level, 0 to 1
   hub_speed_mps, hub_direction_deg
@@ -32,7 +35,7 @@ Prints a JSON line a profile and turbine type:
   air_density_kg_per_m3            at the hub, where temperature is known
   power_kw, power_equivalent_kw    of one machine, from the site's curve, by hub speed and by rotor-equivalent speed (with veer
                                    where directions are known), brought to the curve's density where density is known;
-                                   each profile stands for itself, so a stop in high wind is not remembered
+                                   once stopped in high wind it stays so until the wind falls below the restart speed
 
   --hub M         hub height above ground
   --diameter M    rotor diameter
@@ -52,19 +55,22 @@ ${SCREENS_HELP}`,
     const screened = screener(site, values.screens);
     const turbines = chosenTurbines(site, values.hub, values.diameter);
     const criteria = chosenCriteria(site, undefined);
+    const { code, places } = await readPlaces(positionals, site, screened, stations);
     const out = new LineWriter(process.stdout);
-    return readPaths(positionals, site, {
-      stations,
-      take: async (block) => {
-        for (const profile of profilesOf(screened(block))) {
-          const nose = findingOf(profile, criteria, site).jets[0]?.noseHeight ?? NaN;
-          for (const turbine of turbines) {
-            await out.write(rotorLine(profile, turbine, siteDiscWind(profile, turbine, nose, site)));
-          }
+    for (const place of places) {
+      tellJoin(place);
+      const turning = turbines.map(() => true);
+      for (const { wind, own } of place.profiles) {
+        const nose = own === null ? NaN : (findingOf(own, criteria, site).jets[0]?.noseHeight ?? NaN);
+        for (const [index, turbine] of turbines.entries()) {
+          const disc = siteDiscWind(wind, turbine, nose, site);
+          await out.write(rotorLine(wind, turbine, disc, turning[index]!));
+          turning[index] = keepsTurning(turbine, turning[index]!, disc.hubSpeed);
         }
-        await out.flush();
-      },
-    });
+      }
+    }
+    await out.flush();
+    return code;
   },
 };
 
@@ -90,8 +96,13 @@ export function turbinesOf(site: Site, hub: string | undefined, diameter: string
 }
 
 /** The numbers of a disc as the contract of `rotor` has them. */
-export function rotorLine(profile: Profile, turbine: TurbineType, wind: DiscWind): Record<string, unknown> {
-  const output = typeOutput(turbine, [wind]);
+function rotorLine(
+  profile: Profile,
+  turbine: TurbineType,
+  wind: DiscWind,
+  turnedBefore: boolean,
+): Record<string, unknown> {
+  const output = typeOutput(turbine, [wind], turnedBefore);
   return {
     station: profile.station.id,
     time: isoTime(profile.timeMs),

@@ -64,12 +64,13 @@ export function keepsTurning(turbine: TurbineType, turning: boolean, speed: numb
  * known (IEC 61400-12-1:2017, pitch regulation); stopping is decided by the hub's wind as it is, and up to the cut-out the
  * curve's last power is held.
  * @param winds in order of time; stopping remembers the one before
+ * @param turnedBefore whether it turned before the first of them
  */
-export function typeOutput(turbine: TurbineType, winds: readonly ReckonedWind[]): TypeOutput {
+export function typeOutput(turbine: TurbineType, winds: readonly ReckonedWind[], turnedBefore = true): TypeOutput {
   const hubKw = new Float64Array(winds.length).fill(NaN);
   const equivalentKw = new Float64Array(winds.length).fill(NaN);
   const state: TurbineState[] = [];
-  let turning = true;
+  let turning = turnedBefore;
   winds.forEach((wind, k) => {
     turning = keepsTurning(turbine, turning, wind.hubSpeed);
     const curve = turbine.powerCurve;

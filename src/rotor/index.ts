@@ -26,14 +26,7 @@ export {
 } from './fleet-power.ts';
 export { FleetScan, type FleetWind } from './fleet-scan.ts';
 export { cubeMean, discQuadrature, type DiscQuadrature } from './integral.ts';
-export {
-  disagreementInWords,
-  joinProfiles,
-  type Join,
-  type JoinedProfile,
-  type JoinOptions,
-  type KnownDisagreement,
-} from './join.ts';
+export { joinProfiles, type Join, type JoinedProfile, type JoinOptions, type KnownDisagreement } from './join.ts';
 export { LOADS_CAUTION, timeInState, watchLoads, type LoadState, type TimeInState } from './loads.ts';
 export { normalisePower, normaliseSpeed, powerFromCurve } from './power.ts';
 export {
