@@ -40,6 +40,10 @@ function advectionOf(
   const meanTemperature = (temperatureAtHeight(sounding, bottom) + temperatureAtHeight(sounding, top)) / 2;
   if (Number.isNaN(meanTemperature))
     return missing(`No temperature is known from ${metres(bottom)} to ${metres(top)}.`);
+  // A calm has no direction, and brings nothing from anywhere.
+  if (Number.isNaN(directionOf(lower.u, lower.v)) || Number.isNaN(directionOf(upper.u, upper.v))) {
+    return { bottom, top, ...figure(0) };
+  }
   const level = (wind: VectorFigure, height: number): { speed: number; direction: number; height: number } => ({
     speed: speedOf(wind.u, wind.v),
     direction: directionOf(wind.u, wind.v),

@@ -13,7 +13,7 @@ const WIDEST_GAP = 20_000;
 const DRY_ABOVE = 50_000;
 /** A dew point more than this above the temperature, K, is no dew point; less is taken as saturation. */
 const SUPERSATURATION = 2;
-/** Humidity below this, kg/kg, is below what instruments tell, and would have no dew point. */
+/** Taken where an instrument tells no vapour at all, kg/kg: less than any can tell, and it has a dew point. */
 const DRIEST = 1e-6;
 /** Fall of potential temperature within the lowest 100 m, K, above which the surface value is doubted. */
 const SUPERADIABATIC = 2;
@@ -115,8 +115,9 @@ function gather(from: AirLevels, notes: string[]): Gathered {
       break;
     }
     const humidity = specificHumidity === null ? NaN : specificHumidity[k]!;
-    if (humidity >= 0 && humidity < DRIEST) dry++;
-    let dewPoint = dewPointOf(humidity >= 0 ? Math.max(humidity, DRIEST) : NaN, pressure[k]!);
+    // High up nobody minds whether there is a trace of vapour or none.
+    if (humidity === 0 && pressure[k]! > DRY_ABOVE) dry++;
+    let dewPoint = dewPointOf(humidity === 0 ? DRIEST : humidity, pressure[k]!);
     if (dewPoint > temperature[k]! + SUPERSATURATION) {
       impossible++;
       dewPoint = NaN;

@@ -4,7 +4,8 @@
 import type { Profile } from '../profile/index.ts';
 import { advectionByLayers } from './advection.ts';
 import { effectiveShear, inflowHelicity } from './effective.ts';
-import { airLevelsOf } from './air-levels.ts';
+import { standardHeight } from '../air/index.ts';
+import { airLevelsOf, type AirLevels } from './air-levels.ts';
 import { continueAir, continueWind, type AloftSource } from './aloft.ts';
 import { figure, metres, noVector, vectorFigure, type VectorFigure } from './figure.ts';
 import { hodographOf, windAt, type Hodograph } from './hodograph.ts';
@@ -98,7 +99,12 @@ export function assessStorm(profile: Profile, options: StormOptions = {}): Storm
     numbers: {
       status: nothing ? 'not-assessable' : reasons.wanting ? 'partly' : 'assessed',
       why: [reasons.why, windAloft.why].filter((why) => why !== '').join(' '),
-      notes: notesOf(sounding, hodograph, airAloft.from, windAloft.from),
+      notes: [
+        ...notesOf(sounding, hodograph, airAloft.from, windAloft.from),
+        ...(standsOnStandard(airLevelsOf(air), sounding) && numbers.clusters.cloudLayer.why === ''
+          ? ['No pressure is known: cloud-layer winds stand at the heights of the standard atmosphere.']
+          : []),
+      ],
       airFrom: { station: air.station.id, timeMs: air.timeMs, ageS: (profile.timeMs - air.timeMs) / 1000 },
       windAloft: windAloft.from,
       airAloft: airAloft.from,
@@ -154,9 +160,18 @@ function cloudWinds(hodograph: Hodograph, wind: Profile, air: Profile, sounding:
   const known = heightsOfPressures(measured, CLOUD_LEVELS);
   return CLOUD_LEVELS.map((pressure, k) => {
     const own = known[k]!;
+    if (standsOnStandard(measured, sounding)) {
+      const height = standardHeight(pressure) - wind.station.elevation;
+      return Number.isNaN(height) ? noVector(own.why) : windAt(hodograph, height);
+    }
     const height = own.why === '' ? own.value : atLnPressure(sounding, sounding.heightAgl, Math.log(pressure));
     return Number.isNaN(height) ? noVector(own.why) : windAt(hodograph, height + (Number.isNaN(shift) ? 0 : shift));
   });
+}
+
+/** Without any pressure the standard atmosphere says where its surfaces lie: within some 150 m in the lower troposphere. */
+function standsOnStandard({ pressure }: AirLevels, { count }: Sounding): boolean {
+  return pressure === null && count === 0;
 }
 
 function notesOf(

@@ -2,7 +2,16 @@
 
 import { specificHumidityOfRelative, standardAtmosphere } from '../../src/air/index.ts';
 import { BlockBuilder, profileAt, type Profile } from '../../src/profile/index.ts';
-import { stormOf } from '../../src/storm/index.ts';
+import {
+  assessStorm,
+  fineEnvironment,
+  ingredientsOf,
+  parcelTrace,
+  relativeTo,
+  stormOf,
+  vectorFigure,
+} from '../../src/storm/index.ts';
+import { processorMs } from './processor-time.ts';
 
 interface Figure {
   readonly name: string;
@@ -25,6 +34,24 @@ export default function bench(report: (figure: Figure) => void): Promise<void> {
   const note = `jet-fed CAPE of the eight soundings: ${energies} J/kg`;
   report({ name: 'storm: one sounding of 5,000 levels, median', value: times[20]!, unit: 'ms', note });
   report({ name: 'storm: one sounding of 5,000 levels, slowest of 40', value: times[39]!, unit: 'ms' });
+
+  // All that the page asks for: numbers, ingredients, and the parcels' ways up.
+  let turn = 0;
+  const value = processorMs(() => {
+    const { numbers, sounding: air } = assessStorm(fine[turn++ % fine.length]!);
+    ingredientsOf(numbers);
+    const environment = fineEnvironment(air);
+    for (const parcel of numbers.parcels) if (parcel.start !== null) parcelTrace(environment, parcel.start);
+  }, 24);
+  report({ name: 'storm: the same with ingredients and ways up, processor time', value, unit: 'ms' });
+
+  const { hodograph, numbers } = assessStorm(fine[0]!);
+  const dragging = processorMs(() => {
+    for (let step = 0; step < 200; step++) {
+      relativeTo(vectorFigure(step / 10, 5), { hodograph, inflow: numbers.inflow, jet: undefined });
+    }
+  });
+  report({ name: 'storm: helicity and inflow for another motion, 5,000 levels', value: dragging / 200, unit: 'ms' });
 
   const year = Array.from({ length: 730 }, (_, index) => sounding(150, index));
   const began = performance.now();

@@ -67,6 +67,17 @@ describe('what is taken from a sounding above an instrument’s top', () => {
   });
 });
 
+describe('wind without any pressure', () => {
+  const heights = [100, 1500, 3000, 6000, 9500];
+  it('has its cloud-layer wind at the heights of the standard atmosphere, and says so', () => {
+    const storm = stormOf(profileOf(westerly(heights, 12)));
+    expect(storm.clusters.cloudLayer.u).toBeCloseTo(12, 5);
+    // US Standard Atmosphere 1976: 850, 700, 500, 300 hPa at 1457, 3012, 5574, 9164 m; the station stands at 400 m.
+    expect(storm.clusters.cloudLayer.v).toBeCloseTo((1.457 + 3.012 + 5.574 + 9.164) / 4 - 0.4, 2);
+    expect(storm.notes.join()).toMatch(/heights of the standard atmosphere/);
+  });
+});
+
 describe('noAir', () => {
   it('is told in place of the profile’s own lack', () => {
     const storm = stormOf(profiler(0), { noAir: 'The last temperature and humidity are 14.0 h old.' });

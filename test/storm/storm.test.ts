@@ -119,6 +119,14 @@ describe('stormOf', () => {
     );
   });
 
+  it('has no advection where the wind is calm, which is an answer', () => {
+    const air = airLevels(MIDNIGHT);
+    const calm = Array.from(air.heightAgl, () => 0);
+    for (const layer of stormOf(profileOf({ ...air, u: calm, v: calm })).advection) {
+      expect(layer).toMatchObject({ value: 0, why: '' });
+    }
+  });
+
   it('takes the right mover in the north, the left one in the south, and the motion given above both', () => {
     const north = stormOf(profileOf(fullLevels(MIDNIGHT)));
     const south = stormOf(profileOf(fullLevels(MIDNIGHT, -1), SOUTH));

@@ -88,7 +88,7 @@ function kindPieces({ inflow }: StormNumbers, units: DisplayUnits): Piece[] {
 function energyPieces(storm: StormNumbers, units: DisplayUnits): Piece[] {
   const name = leadingParcel(storm);
   const parcel = parcelOf(storm, name);
-  if (!(parcel.cape > NOTHING)) return [];
+  if (!(parcel.cape > NOTHING) || storm.inflow.kind === 'none') return [];
   const words = PARCEL_WORDS[name];
   const energy = `${parcel.positiveAtTop ? 'at least ' : ''}${plain(parcel.cape, 0)} J/kg`;
   return [
@@ -123,7 +123,9 @@ function agePieces({ windAgeS, air, airWhy, storm, atMs }: InflowState, units: D
       ? ''
       : `, above ${heightWords(windAloft.above, units)} ${ageWords((atMs - windAloft.timeMs) / 1000)}`;
   const wind = `Wind ${ageWords(windAgeS)} old${aloft}`;
-  return [{ text: air === null ? `${wind}. ${airWhy}` : `${wind}; temperature and humidity ${ageWords(air.ageS)}.` }];
+  // Why there is no air has been told already where it keeps storms from being assessed.
+  const why = storm.inflow.why === airWhy ? '' : ` ${airWhy}`;
+  return [{ text: air === null ? `${wind}.${why}` : `${wind}; temperature and humidity ${ageWords(air.ageS)}.` }];
 }
 
 /** `surface air from 0 m` and the like for choices. */
