@@ -3,6 +3,7 @@
 
 import { directionOf, speedOf } from '../air/index.ts';
 import { VALUE_COLUMNS, WIND_COLUMNS, type ProfileBlock, type ValueColumn } from './block.ts';
+import { descentStart } from './descent.ts';
 import { indexIn } from './index-in.ts';
 import { MARK } from './marks.ts';
 import { INSTRUMENTS, sameStation, type Instrument, type Station } from './station.ts';
@@ -86,7 +87,8 @@ export class BlockBuilder {
 
   /**
    * Adds a profile. Levels may come in any order; they are stored by ascending height, levels without height last.
-   * A level moved is marked `out-of-order`, the second of equal heights `doubled`, one without height `no-height`.
+   * A level moved is marked `out-of-order`, the second of equal heights `doubled`, one without height `no-height`, those of a
+   * sonde that falls again after its ascent `descent`.
    */
   add(input: ProfileInput): void {
     const { levels } = input;
@@ -95,6 +97,7 @@ export class BlockBuilder {
     for (const name of VALUE_COLUMNS) this.#columns[name].reserve(start + count);
     this.#reserveMarks(start + count);
     const order = heightOrder(levels.heightAgl);
+    const descent = order === null ? -1 : descentStart(levels.heightAgl);
 
     let previous = NaN;
     for (let k = 0; k < count; k++) {
@@ -102,6 +105,7 @@ export class BlockBuilder {
       const at = start + k;
       const height = finiteOrNaN(levels.heightAgl[from]!);
       let bits = levels.mark?.[from] ?? 0;
+      if (descent >= 0 && from >= descent) bits |= MARK.descent;
       if (Number.isNaN(height)) bits |= MARK['no-height'];
       else if (height === previous) bits |= MARK.doubled;
       if (order !== null && from !== k && !Number.isNaN(height)) bits |= MARK['out-of-order'];

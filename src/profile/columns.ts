@@ -3,6 +3,7 @@
 
 import { VALUE_COLUMNS, type ProfileBlock, type ValueColumn } from './block.ts';
 import { heightOrder } from './builder.ts';
+import { descentStart } from './descent.ts';
 import { MARK } from './marks.ts';
 
 /** A block as a reader has it: levels as the file orders them, columns that it has not left out. */
@@ -84,6 +85,8 @@ function orderLevels(
 ): void {
   const order = heightOrder(heights.subarray(start, end));
   if (order !== null) {
+    const descent = descentStart(heights.subarray(start, end));
+    if (descent >= 0) for (let k = start + descent; k < end; k++) mark[k]! |= MARK.descent;
     for (const column of columns) {
       const before = column.slice(start, end);
       for (let k = 0; k < order.length; k++) column[start + k] = before[order[k]!]!;

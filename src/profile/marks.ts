@@ -35,6 +35,7 @@ const MEANINGS = [
   ['air-source-rejects', 'reject-air', 'the source itself marks temperature or humidity as bad'],
   ['height-worked-out', 'note', 'the height was worked out from the pressure'],
   ['contested', 'doubt', 'the value agrees with some gates around it and contradicts the larger part'],
+  ['descent', 'reject', 'the sonde was falling again, far from its ascent'],
 ] as const;
 
 export type MarkName = (typeof MEANINGS)[number][0];
