@@ -10,6 +10,7 @@ import { chosenCriteria } from './jets.ts';
 import { DECIMALS, isoTime } from './json-edge.ts';
 import { LineWriter } from './output.ts';
 import { SITE_OPTION, siteOf } from './site-option.ts';
+import { STATIONS_HELP, STATIONS_OPTION, stationsOf } from './stations-option.ts';
 
 export const command: Command = {
   help: `duskveer tracks PATH... [--criteria NAME] [--site FILE]
@@ -31,13 +32,20 @@ Prints a JSON line a track, feed by feed (the profiles of one station and instru
 
   --criteria NAME    ${CRITERIA_NAMES.join(', ')};
                      without it the site's, else duskveer
-  --site FILE        stations, terrain, turbines, the site's own criteria`,
+  --site FILE        stations, terrain, turbines, the site's own criteria
+${STATIONS_HELP}`,
   async run(args) {
-    const { values, positionals } = parseOptions(args, { ...SITE_OPTION, criteria: { type: 'string' } });
+    const { values, positionals } = parseOptions(args, {
+      ...SITE_OPTION,
+      ...STATIONS_OPTION,
+      criteria: { type: 'string' },
+    });
     const site = await siteOf(values.site);
+    const stations = await stationsOf(values.stations);
     const criteria = chosenCriteria(site, values.criteria);
     const desk = new Desk({ ...site, criteria });
     const code = await readPaths(positionals, site, {
+      stations,
       take: (block) => {
         desk.accept(block);
         return Promise.resolve();
