@@ -1,7 +1,7 @@
 // What the figures of an archive share: the room they are given, text that stands on a colour, and the sheet to take away.
 
 import { contrastOf, type Bytes } from './colour.ts';
-import { strokeLine, writeText, type Frame, type Look, type Pen } from './pen.ts';
+import { setFont, strokeLine, writeText, type Frame, type Look, type Pen } from './pen.ts';
 import type { Theme } from './theme.ts';
 
 /** Device pixels that a figure may use, its numbers and words included. */
@@ -44,8 +44,8 @@ export interface FigureSheet {
 }
 
 const MARGIN = 24;
-const HEAD = 56;
-const FOOT = 34;
+const HEAD = 36;
+const LINE = 18;
 
 /** Draws the whole sheet; sizes in device pixels. */
 export function drawFigureSheet(
@@ -56,19 +56,30 @@ export function drawFigureSheet(
 ): void {
   const { theme, ratio } = look;
   const left = MARGIN * ratio;
+  const room = width - 2 * left;
   pen.fillStyle = theme.ground;
   pen.fillRect(0, 0, width, height);
   writeText(pen, look, sheet.title, left, (MARGIN + 14) * ratio, { size: 18, weight: 600, colour: theme.ink });
-  writeText(pen, look, sheet.source, left, (MARGIN + 36) * ratio);
-  sheet.draw(pen, {
-    left,
-    top: (MARGIN + HEAD) * ratio,
-    width: width - 2 * left,
-    height: height - (2 * MARGIN + HEAD + FOOT) * ratio,
-  });
-  const footTop = height - (MARGIN + 18) * ratio;
+  const source = linesOf(pen, look, sheet.source, room);
+  source.forEach((line, k) => writeText(pen, look, line, left, (MARGIN + 36 + LINE * k) * ratio, { size: 12 }));
+  const foot = linesOf(pen, look, sheet.foot, room);
+  const footTop = height - (MARGIN + LINE * foot.length) * ratio;
+  const top = (MARGIN + HEAD + LINE * source.length) * ratio;
+  sheet.draw(pen, { left, top, width: room, height: footTop - 12 * ratio - top });
   pen.strokeStyle = theme.rule;
   pen.lineWidth = ratio;
   strokeLine(pen, left, footTop, width - left, footTop);
-  writeText(pen, look, sheet.foot, left, footTop + 18 * ratio, { size: 12 });
+  foot.forEach((line, k) => writeText(pen, look, line, left, footTop + LINE * (k + 1) * ratio, { size: 12 }));
+}
+
+/** Breaks a text between words so that each line fits. */
+function linesOf(pen: Pen, look: Look, text: string, room: number): string[] {
+  setFont(pen, look, 12);
+  const lines: string[] = [];
+  for (const word of text.split(' ')) {
+    const longer = `${lines.at(-1) ?? ''} ${word}`.trimStart();
+    if (lines.length > 0 && pen.measureText(longer).width <= room) lines[lines.length - 1] = longer;
+    else lines.push(word);
+  }
+  return lines;
 }

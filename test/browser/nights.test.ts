@@ -233,36 +233,30 @@ describe('Nights', () => {
     await close();
   });
 
-  it('has no serious fault for those who cannot see or point, wide and narrow, in every theme', async () => {
-    for (const [width, theme] of [
-      [1280, 'dark'],
-      [390, 'light'],
-      [768, 'deep red, for dark rooms'],
-    ] as const) {
-      const { page, close } = await openPage(browser, { viewport: { width, height: 844 } });
-      await page.getByText('Display', { exact: true }).click();
-      await page.getByLabel('Colours', { exact: true }).selectOption({ label: theme });
-      await page.keyboard.press('Escape');
-      await withTables(page);
-      await page.getByRole('button', { name: 'Table of From where' }).click();
-      expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(width);
-      // The deep-red theme gives up contrast for eyes that are used to the dark.
-      if (width === 768) {
-        await close();
-        continue;
-      }
-      await page.evaluate(axeSource);
-      const faults = await page.evaluate(async () => {
-        const { axe } = window as unknown as {
-          axe: { run: () => Promise<{ violations: { id: string; impact: string; nodes: { html: string }[] }[] }> };
-        };
-        const { violations } = await axe.run();
-        return violations
-          .filter(({ impact }) => impact === 'serious' || impact === 'critical')
-          .map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html).join(' | ')}`);
-      });
-      expect(faults).toEqual([]);
-      await close();
-    }
+  it.each([
+    [1280, 'dark'],
+    [390, 'light'],
+    [768, 'deep red, for dark rooms'],
+  ])('fits %d pixels and has no serious fault for those who cannot see or point, %s', async (width, theme) => {
+    const { page, close } = await openPage(browser, { viewport: { width, height: 844 } });
+    await page.getByText('Display', { exact: true }).click();
+    await page.getByLabel('Colours', { exact: true }).selectOption({ label: theme });
+    await page.keyboard.press('Escape');
+    await withTables(page);
+    await page.getByRole('button', { name: 'Table of From where' }).click();
+    expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(width);
+    await page.evaluate(axeSource);
+    const faults = await page.evaluate(async () => {
+      const { axe } = window as unknown as {
+        axe: { run: () => Promise<{ violations: { id: string; impact: string; nodes: { html: string }[] }[] }> };
+      };
+      const { violations } = await axe.run();
+      return violations
+        .filter(({ impact }) => impact === 'serious' || impact === 'critical')
+        .map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html).join(' | ')}`);
+    });
+    // The deep-red theme gives up contrast for eyes that are used to the dark.
+    expect(faults.filter((fault) => width !== 768 || !fault.startsWith('color-contrast'))).toEqual([]);
+    await close();
   });
 });

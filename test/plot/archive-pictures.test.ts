@@ -203,6 +203,9 @@ describe('drawRose', () => {
 });
 
 describe('drawFigureSheet', () => {
+  const words = (lines: string[]): string[] =>
+    named(lines, 'fillText').map((line) => line.slice('fillText '.length).replace(/ [\d.]+ [\d.]+$/, ''));
+
   it('writes title, source and caution about the figure', () => {
     const { pen, lines } = recordingPen();
     let given = { left: 0, top: 0, width: 0, height: 0 };
@@ -212,12 +215,21 @@ describe('drawFigureSheet', () => {
       { title: 'How often', source: 'Plain (lidar)', foot: 'An aid.', draw: (_, area) => (given = area) },
       look,
     );
-    expect(named(lines, 'fillText').map((line) => line.replace(/ [\d.]+ [\d.]+$/, ''))).toEqual([
-      'fillText How often',
-      'fillText Plain (lidar)',
-      'fillText An aid.',
-    ]);
-    // Margins of 24, a head of 56 and a foot of 34.
-    expect(given).toEqual({ left: 24, top: 80, width: 752, height: 362 });
+    expect(words(lines)).toEqual(['How often', 'Plain (lidar)', 'An aid.']);
+    // Margins of 24; a head of 36 and a line of 18 above, a line of 18 and 12 of air below.
+    expect(given).toEqual({ left: 24, top: 78, width: 752, height: 500 - 24 - 18 - 12 - 78 });
+  });
+
+  it('breaks a long caution so that none of it is lost', () => {
+    const { pen, lines } = recordingPen();
+    const foot = 'one two three four five six seven eight nine ten';
+    drawFigureSheet(
+      pen,
+      { width: 48 + 130, height: 500 },
+      { title: 'T', source: 'S', foot, draw: () => undefined },
+      look,
+    );
+    // A letter is six pixels wide: 21 fit.
+    expect(words(lines).slice(2)).toEqual(['one two three four', 'five six seven eight', 'nine ten']);
   });
 });

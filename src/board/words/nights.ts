@@ -16,7 +16,9 @@ const MONTH_NIGHTS = 8;
 const LEAST_MONTHS = 3;
 /** Hours with at least this share of the best hour's frequency count as "most often". */
 const OFTEN = 0.7;
+/** An hour takes part from so many assessable profiles on, and this part of what the hours have on average. */
 const LEAST_PROFILES = 5;
+const LEAST_PART = 0.3;
 
 export const MONTHS = [
   'January',
@@ -167,13 +169,14 @@ function whenWords(view: ArchiveView, { byMonthHour }: ArchiveFigures): string {
     view.nights.filter(({ night, darkAssessable }) => darkAssessable > 0 && Number(night.slice(5, 7)) === month + 1)
       .length;
   const compared = [...MONTHS.keys()].filter((month) => nightsOf(month) >= MONTH_NIGHTS);
-  const shareAt = (months: readonly number[], hour: number): number => {
-    const sum = (counts: readonly number[]): number =>
-      months.reduce((total, month) => total + counts[month * HOURS + hour]!, 0);
-    const assessable = sum(byMonthHour.assessable);
-    return assessable < LEAST_PROFILES ? NaN : sum(byMonthHour.jets) / assessable;
-  };
   const hours = Array.from({ length: HOURS }, (_, hour) => hour);
+  const shareAt = (months: readonly number[], hour: number): number => {
+    const sum = (counts: readonly number[], at: number): number =>
+      months.reduce((total, month) => total + counts[month * HOURS + at]!, 0);
+    const assessable = sum(byMonthHour.assessable, hour);
+    const usual = hours.reduce((total, each) => total + sum(byMonthHour.assessable, each), 0) / HOURS;
+    return assessable < Math.max(LEAST_PROFILES, LEAST_PART * usual) ? NaN : sum(byMonthHour.jets, hour) / assessable;
+  };
   // The mean over the hours, so that hours with many gaps weigh no less.
   const often = (month: number): number => {
     const shares = hours.map((hour) => shareAt([month], hour)).filter((share) => !Number.isNaN(share));
