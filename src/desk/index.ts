@@ -61,3 +61,4 @@ export {
   type JoinedSeries,
 } from './joined-series.ts';
 export { standTogether } from './same-place.ts';
+export { TransportTableReader } from './archive/transport-table.ts';

@@ -1,6 +1,8 @@
 // The page of moisture: asks the worker for the moist night and holds its answer.
 
+import { proxy } from 'comlink';
 import type { MoistureState } from '../../desk/index.ts';
+import type { OpenFile } from '../worker/protocol.ts';
 import type { Board } from './board.svelte.ts';
 
 interface Wish {
@@ -9,6 +11,9 @@ interface Wish {
   readonly criteria: string;
   readonly humidityFrom: string;
 }
+
+/** A job number that no reading has. */
+const TABLES_JOB = -1;
 
 export class MoistNight {
   /** Null until the first answer and where nothing is open. */
@@ -19,9 +24,22 @@ export class MoistNight {
   readonly #board: Board;
   #wanted: Wish | null = null;
   #asking = false;
+  #tables: readonly OpenFile[] = [];
 
   constructor(board: Board) {
     this.#board = board;
+  }
+
+  /** Has the worker read the tables of a scan, which tell what is usual; then the night is asked for anew. */
+  async takeTables(tables: readonly OpenFile[]): Promise<void> {
+    if (tables.length === 0 || tables === this.#tables) return;
+    this.#tables = tables;
+    await this.#board.worker.archiveTables(
+      TABLES_JOB,
+      [...tables],
+      proxy(() => undefined),
+    );
+    if (tables === this.#tables) await this.ask(this.wish);
   }
 
   get wish(): Wish | null {

@@ -72,7 +72,7 @@ export function moistureStory(context: MoistContext): Piece[] {
   return [...stale, ...transportPieces(context, numbers), ...arrivalPieces(context), ...convergencePieces(state)];
 }
 
-function transportPieces({ state, times, nameOf }: MoistContext, numbers: MoistureNumbers): Piece[] {
+function transportPieces({ state, units, times, nameOf }: MoistContext, numbers: MoistureNumbers): Piece[] {
   const { below3Km } = numbers;
   if (!Number.isFinite(below3Km.size)) {
     return [
@@ -90,9 +90,18 @@ function transportPieces({ state, times, nameOf }: MoistContext, numbers: Moistu
     { text: 'The wind carries ' },
     { text: `${plain(below3Km.size, 0)} ${VAPOUR_UNIT}`, weight: 'strong' },
     {
-      text: ` of vapour below 3 km toward the ${compassWords((below3Km.direction + 180) % 360)}${since}${rateWords(rate)} (${humidityWords(numbers, nameOf)}). `,
+      text: ` of vapour ${depthWords(below3Km.reaches, units)} toward the ${compassWords((below3Km.direction + 180) % 360)}${since}${rateWords(rate)} (${humidityWords(numbers, nameOf)}). `,
     },
   ];
+}
+
+/** Data that end this near to 3 km reach it, m. */
+const NEARLY = 250;
+
+/** `below 3 km`, or how far the data reach. */
+function depthWords(reaches: number, units: DisplayUnits): string {
+  if (reaches >= 3000 - NEARLY) return 'below 3 km';
+  return `below ${heightText(reaches, units)} ${units.height}, where the data end,`;
 }
 
 function changeWord(change: number): string {
@@ -101,7 +110,7 @@ function changeWord(change: number): string {
 
 function rateWords({ perHour, uncertainty }: MoistureState['growth']['rate']): string {
   if (!Number.isFinite(perHour)) return '';
-  if (!(Math.abs(perHour) > uncertainty)) return ', holding now';
+  if (!(Math.abs(perHour) > uncertainty && Math.abs(perHour) >= 1)) return ', holding now';
   return ` and ${perHour > 0 ? 'growing' : 'easing'} by ${plain(Math.abs(perHour), 0)} an hour`;
 }
 
@@ -266,7 +275,12 @@ function transportAnswer(context: MoistContext): Answer {
     ],
     none: '',
     lines: [
-      { text: `${towardWords(below3Km)}; ${jet}` },
+      {
+        text: `${depthWords(below3Km.reaches, context.units)} ${towardWords(below3Km)}; ${jet}`.replace(
+          /^below 3 km /,
+          '',
+        ),
+      },
       { text: `∫ ρ q V dz; ${humidityWords(numbers, context.nameOf)}` },
     ],
     stale,

@@ -9,7 +9,9 @@ import {
   type ArchiveAbout,
   type ArchiveTableKind,
   type ArchiveView,
+  TransportTableReader,
   type TableCell,
+  type TransportHistory,
 } from '../../desk/index.ts';
 import type { OpenFile } from './protocol.ts';
 
@@ -47,6 +49,8 @@ export async function archiveFileOf(file: OpenFile): Promise<TableFile | null> {
   return kind === null ? null : { file, kind, container: 'csv', columns };
 }
 
+type RowTaker = Pick<ArchiveTableReader, 'take'>;
+
 export interface ArchiveReading {
   readonly signal: AbortSignal;
   /** Told the bytes taken so far of all that will be read, and the table at hand. */
@@ -57,9 +61,16 @@ export interface ArchiveReading {
 export async function readArchiveTables(
   files: readonly OpenFile[],
   { signal, onProgress }: ArchiveReading,
-): Promise<{ views: ArchiveView[]; problems: Problem[] }> {
+): Promise<{ views: ArchiveView[]; problems: Problem[]; transports: Map<string, TransportHistory> }> {
   const tables = (await Promise.all(files.map(archiveFileOf))).filter((table) => table !== null);
   const reader = new ArchiveTableReader();
+  const transports = new TransportTableReader();
+  const both: RowTaker = {
+    take(rows) {
+      reader.take(rows);
+      transports.take(rows);
+    },
+  };
   const problems: Problem[] = [];
   const ordered = (['nights', 'profiles'] as const).flatMap((kind) => tables.filter((table) => table.kind === kind));
   const wanted = ordered.filter((table) => !hasTwin(table, tables));
@@ -74,7 +85,8 @@ export async function readArchiveTables(
     };
     try {
       reader.begin(table.columns);
-      await (table.container === 'parquet' ? readParquet(blob, reader, tell) : readCsv(blob, reader, tell));
+      transports.begin(table.columns);
+      await (table.container === 'parquet' ? readParquet(blob, both, tell) : readCsv(blob, both, tell));
     } catch (error) {
       if (error instanceof Cancelled) throw error;
       problems.push(unreadable(name, error));
@@ -82,7 +94,7 @@ export async function readArchiveTables(
     if (reader.broken > brokenBefore) problems.push(brokenRows(name, reader.broken - brokenBefore));
     bytesBefore += blob.size;
   }
-  return { views: reader.views(await aboutOf(tables)), problems };
+  return { views: reader.views(await aboutOf(tables)), problems, transports: transports.histories() };
 }
 
 /** A scan writes each table twice; the CSV is left aside where the same table is at hand as Parquet. */
@@ -99,7 +111,7 @@ async function aboutOf(tables: readonly TableFile[]): Promise<ArchiveAbout | nul
   return table === undefined ? null : readArchiveAbout(await table.file.blob.text());
 }
 
-async function readCsv(blob: Blob, reader: ArchiveTableReader, tell: (bytes: number) => void): Promise<void> {
+async function readCsv(blob: Blob, reader: RowTaker, tell: (bytes: number) => void): Promise<void> {
   const pieces = blob.stream().getReader();
   const decoder = new TextDecoder();
   let text = '';
@@ -154,7 +166,7 @@ async function parquetColumns(blob: Blob): Promise<string[]> {
   return parquetSchema(await parquetMetadataAsync(bytesOf(blob))).children.map(({ element }) => element.name);
 }
 
-async function readParquet(blob: Blob, reader: ArchiveTableReader, tell: (bytes: number) => void): Promise<void> {
+async function readParquet(blob: Blob, reader: RowTaker, tell: (bytes: number) => void): Promise<void> {
   const { parquetMetadataAsync, parquetReadObjects, parquetSchema } = await parquet();
   const file = bytesOf(blob);
   const metadata = await parquetMetadataAsync(file);

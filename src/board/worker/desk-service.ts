@@ -10,6 +10,7 @@ import {
   type MoistureState,
   type NightState,
   type NoInflow,
+  type TransportHistory,
 } from '../../desk/index.ts';
 import { readProfiles } from '../../ingest/index.ts';
 import {
@@ -69,6 +70,8 @@ export class DeskService implements BoardWorker {
   #section: PreparedSection | null = null;
   #stationList: readonly Station[] = [];
   readonly #jobs = new Map<number, AbortController>();
+  /** Transports of other nights by station, out of the tables read last. */
+  #transports: ReadonlyMap<string, TransportHistory> = new Map();
 
   open({ file, disc }: OpenSite): SiteReport {
     const read = file === null ? { site: null, problems: [] } : readSite(file.text, file.name);
@@ -240,12 +243,14 @@ export class DeskService implements BoardWorker {
     files: readonly OpenFile[],
     onProgress: (progress: ArchiveProgress) => void,
   ): Promise<ArchiveReport> {
-    return this.#archiveJob(job, (signal) =>
-      readArchiveTables(files, {
+    return this.#archiveJob(job, async (signal) => {
+      const { views, problems, transports } = await readArchiveTables(files, {
         signal,
         onProgress: (bytesRead, bytesTotal, current) => onProgress({ share: bytesRead / bytesTotal, current }),
-      }),
-    );
+      });
+      this.#transports = transports;
+      return { views, problems };
+    });
   }
 
   async areArchiveFiles(files: readonly OpenFile[]): Promise<boolean[]> {
@@ -281,7 +286,9 @@ export class DeskService implements BoardWorker {
   }
 
   moisture(atMs: number, feed: string, criteria: string, humidityFrom: string): MoistureState | null {
-    return this.#desk.moisture(atMs, { feed, humidityFrom, ...(criteria === '' ? {} : { criteria }) });
+    const archive = this.#transports.get(feed.slice(0, feed.lastIndexOf('/')));
+    const question = { feed, humidityFrom, ...(criteria === '' ? {} : { criteria }) };
+    return this.#desk.moisture(atMs, question, archive === undefined ? [] : [archive]);
   }
 
   inflow(atMs: number, feed: string, criteria: string): InflowState | NoInflow | null {

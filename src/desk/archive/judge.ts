@@ -1,6 +1,7 @@
 // From a block of profiles to the archive's rows: the jets by one criteria set and the wind on each rotor.
 
 import { findJets, hasCategories, NO_JET, NOT_ASSESSABLE, scanNoses, type Criteria } from '../../jet/index.ts';
+import { airColumn, transportByHeight } from '../../moisture/index.ts';
 import { gatherWindAt, profileAt, REJECTING, windColumn, type ProfileBlock } from '../../profile/index.ts';
 import { screen } from '../../quality/index.ts';
 import { FleetScan, topTip } from '../../rotor/index.ts';
@@ -54,6 +55,7 @@ export function judge(block: ProfileBlock, { site, criteria, discs, source }: Ar
   profiles.revision.set(block.revision);
   const reasons = [''];
   countLevels(block, profiles);
+  transports(block, profiles);
   const jets =
     criteria.decides === 'levels'
       ? jetsByLevels(block, criteria, profiles, reasons)
@@ -80,6 +82,17 @@ function countLevels(block: ProfileBlock, { windLevels, usableLevels, top }: Pro
     let highest = end - 1;
     while (highest >= start && ((mark[highest]! & REJECTING) !== 0 || !(speed[highest]! >= 0))) highest--;
     top[index] = highest < start ? NaN : heightAgl[highest]!;
+  }
+}
+
+/** Only where the block has humidity at all; what is borrowed at the page is not at hand in a scan. */
+function transports(block: ProfileBlock, { below3Km }: ProfileColumns): void {
+  const { specificHumidity, offsets } = block;
+  if (specificHumidity === null) return;
+  for (let index = 0; index < block.profileCount; index++) {
+    let levels = 0;
+    for (let k = offsets[index]!; k < offsets[index + 1]! && levels < 2; k++) if (specificHumidity[k]! >= 0) levels++;
+    if (levels === 2) below3Km[index] = transportByHeight(airColumn(profileAt(block, index)), { top: 3000 }).size;
   }
 }
 

@@ -14,6 +14,7 @@ import {
   knownCategories,
   type NamedDisc,
 } from './table-parts.ts';
+import { TRANSPORT_COLUMN } from './transport-table.ts';
 import {
   numberColumn,
   textColumn,
@@ -72,6 +73,13 @@ export function profileTable(rows: FeedRows, discs: readonly NamedDisc[]): Table
       ),
       yesNoColumn('falloff_is_bound', BOUND, ofStrongest(jets.falloffIsBound)),
       numberColumn('confidence', '3', CONFIDENCE, profiles.confidence),
+      numberColumn(
+        TRANSPORT_COLUMN,
+        'kg/(m s) 1',
+        'vapour carried below 3 km or the top of data, with the profile’s own humidity; empty where it has none',
+        profiles.below3Km,
+        'Peixoto & Oort 1992',
+      ),
       wholeColumn('wind_levels', 'levels that came with a speed', profiles.windLevels),
       wholeColumn('usable_levels', 'levels left after screening', profiles.usableLevels),
       numberColumn('top_agl_m', 'm 1', 'height of the highest usable level above ground', profiles.top),

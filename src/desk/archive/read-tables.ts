@@ -241,7 +241,7 @@ function numberOf(cell: TableCell): number {
 }
 
 /** UTC ms. */
-function timeOf(cell: TableCell): number {
+export function timeOf(cell: TableCell): number {
   if (cell instanceof Date) return cell.getTime();
   return typeof cell === 'string' && cell !== '' ? Date.parse(cell) : NaN;
 }

@@ -26,6 +26,8 @@ export interface ProfileColumns {
   readonly why: Uint16Array;
   /** Probability that there is a jet; NaN for criteria that the levels decide, whose scan runs no ensemble. */
   readonly confidence: Float32Array;
+  /** kg/(m s): vapour carried below 3 km, with the profile's own humidity; NaN where it has none. */
+  readonly below3Km: Float32Array;
   /** Jets of the profile; those of all rows stand in their order in the jets' columns. */
   readonly jetCount: Uint8Array;
   /** Index into the rows' `sources`. */
@@ -80,6 +82,7 @@ export function profileColumns(count: number): ProfileColumns {
     status: new Uint8Array(count),
     why: new Uint16Array(count),
     confidence: missing(count),
+    below3Km: missing(count),
     jetCount: new Uint8Array(count),
     source: new Uint32Array(count),
   };
