@@ -7,6 +7,7 @@ import {
   GAS_CONSTANT_DRY,
   GRAVITY,
   northward,
+  specificHumidityOfRelative,
   standardAtmosphere,
   virtualTemperature,
 } from '../air/index.ts';
@@ -30,7 +31,12 @@ export interface AirColumn {
   readonly density: Float64Array;
   /** Empty where every pressure is measured, else how the others were had, for people. */
   readonly pressureFrom: string;
+  /** Levels whose humidity is left out since their dew point lies clearly above the temperature. */
+  readonly contradicted: number;
 }
+
+/** Relative humidity, fraction, beyond which a level contradicts itself: a dew point some 1.5 K above the temperature. */
+const CONTRADICTED = 1.1;
 
 /** @param surfacePressure Pa at the ground, where the profile itself has no pressure; NaN when not known */
 export function airColumn(profile: Profile, surfacePressure = NaN): AirColumn {
@@ -62,12 +68,19 @@ export function airColumn(profile: Profile, surfacePressure = NaN): AirColumn {
 
 /** Adds pressure where it is missing, and density. */
 export function completeAir(
-  air: Omit<AirColumn, 'count' | 'density' | 'pressureFrom'>,
+  air: Omit<AirColumn, 'count' | 'density' | 'pressureFrom' | 'contradicted'>,
   ground: { readonly surfacePressure: number; readonly elevation: number },
 ): AirColumn {
   const { pressure, pressureFrom } = fillPressure(air, ground);
-  const density = air.temperature.map((value, k) => airDensity(value, pressure[k]!, air.specificHumidity[k]!));
-  return { ...air, count: air.heightAgl.length, pressure, density, pressureFrom };
+  let contradicted = 0;
+  const specificHumidity = air.specificHumidity.map((value, k) => {
+    if (!(value > specificHumidityOfRelative(CONTRADICTED, air.temperature[k]!, pressure[k]!))) return value;
+    contradicted++;
+    return NaN;
+  });
+  const density = air.temperature.map((value, k) => airDensity(value, pressure[k]!, specificHumidity[k]!));
+  const count = air.heightAgl.length;
+  return { ...air, count, pressure, specificHumidity, density, pressureFrom, contradicted };
 }
 
 interface Thermal {

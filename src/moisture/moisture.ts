@@ -106,8 +106,46 @@ function notes(air: AirColumn, reaches: number, use: HumidityUse): string[] {
     );
   }
   if (air.pressureFrom !== '') words.push(air.pressureFrom);
+  if (air.contradicted > 0) {
+    words.push(`${air.contradicted} levels’ humidity left out, their dew point is above the temperature`);
+  }
+  const { lowest, gap } = coverageOf(air);
+  if (lowest > LOWEST)
+    words.push(`the lowest level with all values is at ${Math.round(lowest)} m, nothing below it is counted`);
+  if (gap !== null)
+    words.push(`no values between ${Math.round(gap.bottom)} and ${Math.round(gap.top)} m, taken as linear`);
   if (reaches < THREE_KILOMETRES) words.push(`data end at ${Math.round(reaches)} m, below 3 km`);
   return words;
+}
+
+/** A lowest level higher than this, m, leaves out air that matters. Our own choice. */
+const LOWEST = 250;
+/** So wide, m, is a gap where levels stand that lack a value; where none stand, as between main levels. Our own choice. */
+const WIDE_LACKING = 500;
+const WIDE_EMPTY = 1600;
+
+/** Where the integrals begin, m above ground, and the widest wide gap below 6 km that they bridge. */
+function coverageOf({ count, heightAgl, specificHumidity, u }: AirColumn): {
+  lowest: number;
+  gap: { bottom: number; top: number } | null;
+} {
+  let [lowest, before, widest, lacking] = [NaN, NaN, 0, false];
+  let gap: { bottom: number; top: number } | null = null;
+  for (let k = 0; k < count && !(before > 2 * THREE_KILOMETRES); k++) {
+    if (Number.isNaN(specificHumidity[k]!) || Number.isNaN(u[k]!)) {
+      lacking = true;
+      continue;
+    }
+    const here = heightAgl[k]!;
+    if (Number.isNaN(lowest)) lowest = here;
+    if (here - before > Math.max(widest, lacking ? WIDE_LACKING : WIDE_EMPTY)) {
+      widest = here - before;
+      gap = { bottom: before, top: here };
+    }
+    before = here;
+    lacking = false;
+  }
+  return { lowest, gap };
 }
 
 function fluxProfile(air: AirColumn): MoistureNumbers['flux'] {

@@ -38,7 +38,7 @@ describe('Moisture', () => {
     expect(await answer(page, 'Transport below 3 km')).toMatch(/0 min old[\s\S]*±[\s\S]*∫ ρ q V dz/);
     expect(await answer(page, 'Its growth')).toMatch(/an hour[\s\S]*since 20:10[\s\S]*Sen 1968/);
     expect(await answer(page, 'Moist air gets here')).toMatch(/\d+ min\s*from now[\s\S]*km at \d+\.\d m\/s/);
-    expect(await answer(page, 'Moisture below 1 km between the stations')).toMatch(/g\/kg an hour[\s\S]*Bellamy 1949/);
+    expect(await answer(page, 'Convergence below 1 km')).toMatch(/g\/kg an hour[\s\S]*Bellamy 1949/);
     expect(complaints).toEqual([]);
     await close();
   });

@@ -365,7 +365,7 @@ function arrivalAnswer({ state, times, units }: MoistContext): Answer {
 }
 
 function convergenceAnswer(context: MoistContext): Answer {
-  const title = 'Moisture below 1 km between the stations';
+  const title = 'Convergence below 1 km';
   const { state } = context;
   const [triangle] = state.triangles;
   const nothing = (text: string): Answer => ({

@@ -35,7 +35,7 @@ function histories(humid: boolean): ReturnType<TransportTableReader['histories']
   const [rows] = archiveRows(block(humid), question);
   const table = profileTable(rows!, []);
   const reader = new TransportTableReader();
-  const lines = [...csvRows(table)].join('').trimEnd().split('\n');
+  const lines = csvRows(table).trimEnd().split('\n');
   reader.begin(csvHeading(table).trim().split(','));
   reader.take(lines.map((line) => line.split(',')));
   return reader.histories();
