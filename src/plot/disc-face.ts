@@ -48,6 +48,12 @@ const MARGIN = 10;
 /** Picture above the disc, as a part of its upper tip's height. */
 const HEADROOM = 1.06;
 
+/** CSS pixels of height that the picture needs to fill a width, its labels beside it. */
+export function faceHeight({ hubHeight, rotorDiameter }: DiscFace, width: number): number {
+  const highest = (hubHeight + rotorDiameter / 2) * HEADROOM;
+  return ((width - LABELS - MARGIN) / rotorDiameter) * highest + 2 * MARGIN;
+}
+
 /** Draws the disc on its tower, the nose as a dashed line across, and the labels to the right. */
 export function drawDiscFace(
   pen: Pen,

@@ -1,5 +1,5 @@
 export { drawBarb, feathersOf, type BarbStyle, type Feathers } from './barbs.ts';
-export { drawDiscFace, type DiscFace, type FaceBox } from './disc-face.ts';
+export { drawDiscFace, faceHeight, type DiscFace, type FaceBox } from './disc-face.ts';
 export { rotorPng, type RotorSheet } from './rotor-sheet.ts';
 export { drawDiscBands, drawDiscs, type Disc } from './disc.ts';
 export {

@@ -31,6 +31,10 @@ export interface Levels {
   readonly consensus: Float32Array | null;
   /** Width of the Doppler spectrum, m/s. */
   readonly spectralWidth: Float32Array | null;
+  /** Standard deviation of the speed within the averaging period, m/s. */
+  readonly speedDeviation: Float32Array | null;
+  /** Strongest gust within the averaging period, m/s. */
+  readonly gust: Float32Array | null;
   /** Quality marks, bits as in `marks.ts`. */
   readonly mark: Uint32Array;
 }
@@ -48,6 +52,8 @@ export const VALUE_COLUMNS = [
   'speedUncertainty',
   'consensus',
   'spectralWidth',
+  'speedDeviation',
+  'gust',
 ] as const;
 export type ValueColumn = (typeof VALUE_COLUMNS)[number];
 /** Columns that every block has; the others may be null. */
@@ -114,6 +120,8 @@ export function profileAt(block: ProfileBlock, index: number): Profile {
     speedUncertainty: view(block.speedUncertainty),
     consensus: view(block.consensus),
     spectralWidth: view(block.spectralWidth),
+    speedDeviation: view(block.speedDeviation),
+    gust: view(block.gust),
     mark: block.mark.subarray(start, end),
   };
 }

@@ -24,6 +24,8 @@ export interface LevelInput {
   readonly speedUncertainty?: ArrayLike<number> | undefined;
   readonly consensus?: ArrayLike<number> | undefined;
   readonly spectralWidth?: ArrayLike<number> | undefined;
+  readonly speedDeviation?: ArrayLike<number> | undefined;
+  readonly gust?: ArrayLike<number> | undefined;
   readonly mark?: ArrayLike<number> | undefined;
 }
 
@@ -157,6 +159,8 @@ export class BlockBuilder {
       speedUncertainty: takeIfFilled('speedUncertainty'),
       consensus: takeIfFilled('consensus'),
       spectralWidth: takeIfFilled('spectralWidth'),
+      speedDeviation: takeIfFilled('speedDeviation'),
+      gust: takeIfFilled('gust'),
       mark: this.#mark.slice(0, this.#levelCount),
     };
   }

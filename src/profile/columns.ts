@@ -50,6 +50,8 @@ export function blockOfColumns(input: ColumnsInput): ProfileBlock {
     speedUncertainty: optional('speedUncertainty'),
     consensus: optional('consensus'),
     spectralWidth: optional('spectralWidth'),
+    speedDeviation: optional('speedDeviation'),
+    gust: optional('gust'),
     mark,
   };
 }

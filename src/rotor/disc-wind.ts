@@ -9,6 +9,7 @@ import { bottomTip, topTip, type Disc } from './disc.ts';
 import { discUncertainty, type DiscUncertainty } from './disc-uncertainty.ts';
 import { FleetScan, interpolate, type FleetWind, type ScannedLevels } from './fleet-scan.ts';
 import { cubeMean, discQuadrature } from './integral.ts';
+import { gustinessAt, type Gustiness } from './gustiness.ts';
 import type { Between } from './plan.ts';
 import { normaliseSpeed } from './power.ts';
 
@@ -30,7 +31,7 @@ export interface WindAt {
 }
 
 /** Numbers of the disc. Wind numbers are NaN where `status` is `not-assessable`; nothing is extrapolated unasked. */
-export interface DiscWind extends HubDensity {
+export interface DiscWind extends HubDensity, Gustiness {
   readonly disc: Disc;
   readonly status: 'ok' | 'not-assessable';
   /** Empty when ok, else the reason: `rotor only 62 % covered`. */
@@ -130,6 +131,7 @@ export function windOnDisc(profile: Profile, disc: Disc, options: DiscWindOption
     uncertaintyFrom: profile.instrument === 'merged' ? 'assumed' : origin,
     noseInRotor: noseInDisc(raised, options.nose ?? NaN),
     ...density,
+    ...gustinessAt(profile, raised.hubHeight),
     normalisedSpeed: normaliseSpeed(bestSpeed({ equivalentSpeed, equivalentSpeedVeer }), density.airDensity),
   };
 }

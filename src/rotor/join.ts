@@ -219,6 +219,8 @@ const MERGED_COLUMNS = [
   'temperature',
   'pressure',
   'specificHumidity',
+  'speedDeviation',
+  'gust',
 ] as const;
 type MergedLevel = Record<(typeof MERGED_COLUMNS)[number], number>;
 
@@ -245,12 +247,14 @@ function airOnly(profiles: readonly Profile[], heights: Set<number>): MergedLeve
 function airAt(
   profile: Profile,
   level: number,
-): Pick<MergedLevel, 'verticalSpeed' | 'temperature' | 'pressure' | 'specificHumidity'> {
+): Pick<MergedLevel, 'verticalSpeed' | 'temperature' | 'pressure' | 'specificHumidity' | 'speedDeviation' | 'gust'> {
   return {
     verticalSpeed: profile.verticalSpeed?.[level] ?? NaN,
     temperature: profile.temperature?.[level] ?? NaN,
     pressure: profile.pressure?.[level] ?? NaN,
     specificHumidity: profile.specificHumidity?.[level] ?? NaN,
+    speedDeviation: profile.speedDeviation?.[level] ?? NaN,
+    gust: profile.gust?.[level] ?? NaN,
   };
 }
 

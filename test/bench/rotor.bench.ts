@@ -1,7 +1,9 @@
 // A fleet of twelve turbine types on profiles of 120 gates: the numbers of every disc, one core.
 
+import { farmRecord, reckonRecord } from '../../src/desk/farm-record.ts';
 import { BlockBuilder, gatherWindAt, windColumn, type ProfileBlock, type WindColumn } from '../../src/profile/index.ts';
 import { FleetScan } from '../../src/rotor/index.ts';
+import { PLAIN_SITE } from '../../src/site/index.ts';
 import { processorMs } from './processor-time.ts';
 
 interface Figure {
@@ -20,22 +22,57 @@ export default function bench(report: (figure: Figure) => void): Promise<void> {
   const irregular = Array.from({ length: 64 }, (_, index) => profile(index, 25 + index / 64));
   report({ ...rate(irregular), name: 'rotor: 12 types, 120 gates, heights new each time', unit: 'profiles/s' });
   report({ ...year(), name: 'rotor: a year of 10-min profiles, 120 gates, four types', unit: 's' });
+  report({
+    ...pageYear(),
+    name: 'rotor: the page’s whole record, a year, 120 gates, four types with curves',
+    unit: 's',
+  });
   return Promise.resolve();
 }
 
-/** 52,560 profiles out of a block, gathered and scanned, as a page of a year asks for it. */
-function year(): { value: number; note: string } {
-  const count = 52_560;
+/** What the page waits for when it shows a year: power, bands and sums of profiles that are screened already. */
+function pageYear(): { value: number; note: string } {
+  const turbines = TYPES.slice(0, 4).map((type, k) => ({
+    ...type,
+    name: `type ${k}`,
+    count: 10,
+    powerCurve: { speed: [3, 12, 25], powerKw: [0, 3000, 3000], airDensity: 1.225 },
+    cutIn: 3,
+    rated: 12,
+    cutOut: 25,
+    restart: 22,
+    groundElevation: NaN,
+  }));
+  const site = { ...PLAIN_SITE, turbines };
+  const block = yearBlock();
+  let sums = 0;
+  const ms = processorMs(() => {
+    sums = farmRecord(reckonRecord(block, site), Infinity, site, null).sums.length;
+  }, 3);
+  return { value: Number((ms / 1000).toFixed(3)), note: `processor time; ${sums} months` };
+}
+
+const YEAR = 52_560;
+
+function yearBlock(): ProfileBlock {
+  const count = YEAR;
   const levels = count * GATES;
-  const block: ProfileBlock = {
+  return {
     ...new BlockBuilder().finish(),
     profileCount: count,
+    timeMs: Float64Array.from({ length: count }, (_, k) => Date.UTC(2024, 0, 1) + k * 600_000),
     offsets: Uint32Array.from({ length: count + 1 }, (_, k) => k * GATES),
     heightAgl: Float32Array.from({ length: levels }, (_, k) => 10 + 25 * (k % GATES)),
     speed: Float32Array.from({ length: levels }, (_, k) => 8 + 6 * Math.sin(0.01 * k)),
     direction: Float32Array.from({ length: levels }, (_, k) => k % 360),
     mark: new Uint32Array(levels),
   };
+}
+
+/** 52,560 profiles out of a block, gathered and scanned. */
+function year(): { value: number; note: string } {
+  const count = YEAR;
+  const block = yearBlock();
   const scan = new FleetScan(TYPES.slice(0, 4));
   const column = windColumn(GATES);
   let check = 0;

@@ -34,6 +34,8 @@ export function farmCsv(night: NightState): string {
         ['upper_tip_direction_deg', number(wind.top.direction, 1)],
         ['nose_height_agl_m', number(night.findings[k]!.jets[0]?.noseHeight ?? NaN, 0)],
         ['nose_in_rotor', wind.noseInRotor === null ? '' : String(wind.noseInRotor)],
+        ['turbulence_intensity', number(wind.turbulence, 3)],
+        ['gust_mps', number(wind.gust, 2)],
         ['air_density_kg_per_m3', number(wind.airDensity, 4)],
         ['power_kw', number(output.hubKw[k]!, 0)],
         ['power_equivalent_kw', number(output.equivalentKw[k]!, 0)],

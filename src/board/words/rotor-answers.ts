@@ -40,7 +40,10 @@ function hub(wind: DiscWind, _: NightState, __: number, units: DisplayUnits): Pa
       { value: speedText(wind.hubSpeed, units), unit: units.speed },
       { value: directionText(wind.hubDirection), unit: '' },
     ],
-    lines: [{ text: `± ${fine(wind.uncertainty.hubSpeed, units)} (${wind.uncertaintyFrom})` }, { text: air }],
+    lines: [
+      { text: `± ${fine(wind.uncertainty.hubSpeed, units)} (${wind.uncertaintyFrom})${unsteady(wind, units)}` },
+      { text: air },
+    ],
   };
 }
 
@@ -107,6 +110,14 @@ function shape(wind: DiscWind, _: NightState, __: number, units: DisplayUnits): 
       { text: `lower tip ${tip(wind.bottom)}; upper tip ${tip(wind.top)}` },
     ],
   };
+}
+
+/** Empty where no instrument near the hub tells. */
+function unsteady({ turbulence, gust }: DiscWind, units: DisplayUnits): string {
+  const parts = [];
+  if (Number.isFinite(turbulence)) parts.push(`turbulence ${plain(100 * turbulence, 0)} %`);
+  if (Number.isFinite(gust)) parts.push(`gusts to ${speedText(gust, units)} ${units.speed}`);
+  return parts.length === 0 ? '' : `; ${parts.join(', ')}`;
 }
 
 function coverWords({ coverage, continuedShare }: DiscWind): string {

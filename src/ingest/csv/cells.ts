@@ -38,6 +38,8 @@ const POSSIBLE: Readonly<Record<LevelMeaning, readonly [number, number]>> = {
   mixingRatio: [-1, 60],
   signal: [-500, 500],
   speedUncertainty: [0, 100],
+  speedDeviation: [0, 100],
+  gust: [0, 400],
 };
 
 /** True for a number that cannot be meant: far beyond any measurement, or all nines where the quantity never goes. */

@@ -19,6 +19,8 @@ export const LEVEL_MEANINGS = [
   'mixingRatio',
   'signal',
   'speedUncertainty',
+  'speedDeviation',
+  'gust',
 ] as const;
 export type LevelMeaning = (typeof LEVEL_MEANINGS)[number];
 
@@ -96,6 +98,8 @@ const SPELLINGS: Readonly<Record<Meaning, string>> = {
   mixingRatio: 'mixingratio mixr watervapormixingratio watervapourmixingratio',
   signal: 'signal snr cnr signaltonoise signaltonoiseratio carriertonoise carriertonoiseratio',
   speedUncertainty: 'speeduncertainty windspeeduncertainty uncertainty',
+  speedDeviation: 'speeddeviation windspeeddeviation',
+  gust: 'gustspeed windgustspeed',
 };
 
 const BY_SPELLING: ReadonlyMap<string, Meaning> = new Map(
@@ -114,6 +118,11 @@ const STATISTICS = new Set(
     ' ',
   ),
 );
+/** Statistics of the speed that a profile carries beside its mean. */
+const SPEED_STATISTICS: Readonly<Record<string, LevelMeaning>> = {
+  ...Object.fromEntries(['std', 'stdev', 'stddev', 'sd', 'sigma'].map((word) => [word, 'speedDeviation' as const])),
+  gust: 'gust',
+};
 const DATUMS: Readonly<Record<string, LevelMeaning>> = {
   agl: 'heightAgl',
   amsl: 'heightAmsl',
@@ -137,6 +146,8 @@ const QUANTITIES: Partial<Record<Meaning, readonly Quantity[]>> = {
   specificHumidity: ['humidity-ratio'],
   mixingRatio: ['humidity-ratio'],
   speedUncertainty: ['speed'],
+  speedDeviation: ['speed'],
+  gust: ['speed'],
   latitude: ['angle'],
   longitude: ['angle'],
   elevation: ['length'],
@@ -160,12 +171,17 @@ export function readHeading(text: string): Heading | null {
   });
   words.unshift(...wordsOf(bare));
   const { height, rest } = takeHeight(words);
-  if (rest.some((word) => STATISTICS.has(word))) return null;
+  const statistics = rest.filter((word) => STATISTICS.has(word));
+  const statistic = SPEED_STATISTICS[statistics[0] ?? ''];
+  if (statistics.length > 1 || (statistics.length === 1 && statistic === undefined)) return null;
   const datum = rest.map((word) => DATUMS[word]).find((found) => found !== undefined);
   const zone = rest.some((word) => word === 'utc' || word === 'gmt') ? 'utc' : rest.includes('local') ? 'local' : '';
-  const telling = rest.filter((word) => !SILENT_WORDS.has(word));
-  const named = nameAndUnit(telling, datum);
-  if (named === null) return null;
+  const telling = rest.filter((word) => !SILENT_WORDS.has(word) && word !== statistics[0]);
+  // A gust may stand by itself; a deviation must say that it is one of speed.
+  const bareGust = statistic === 'gust' && (telling.length === 0 || parseUnit(telling.join(' ')) !== null);
+  const of = nameAndUnit(bareGust ? ['speed', ...telling] : telling, datum);
+  if (of === null || (statistic !== undefined && of.meaning !== 'speed')) return null;
+  const named = statistic === undefined ? of : { ...of, meaning: statistic };
   if (unitText === '') unitText = named.unitText;
   const meaning =
     datum !== undefined && (named.meaning === 'heightAgl' || named.meaning === 'heightAmsl') ? datum : named.meaning;

@@ -63,6 +63,8 @@ export function toProfiles(
     verticalSpeed: column('verticalSpeed'),
     signal: column('signal'),
     speedUncertainty: column('speedUncertainty'),
+    speedDeviation: column('speedDeviation'),
+    gust: column('gust'),
   };
   if (columns.pressure !== null) withoutZeroPressure(columns.pressure);
 
@@ -108,6 +110,8 @@ export function toProfiles(
         verticalSpeed: cut(wind.verticalSpeed) ?? undefined,
         signal: cut(wind.signal) ?? undefined,
         speedUncertainty: cut(wind.speedUncertainty) ?? undefined,
+        speedDeviation: cut(wind.speedDeviation) ?? undefined,
+        gust: cut(wind.gust) ?? undefined,
         temperature: cut(columns.temperature) ?? undefined,
         pressure: cut(columns.pressure) ?? undefined,
         specificHumidity: humidity.specificHumidity ?? undefined,

@@ -215,7 +215,7 @@ describe('a wide table', () => {
     expect([...direction]).toEqual([200, 205]);
     expect(temperature![0]).toBeCloseTo(284.65, 3);
     expect(temperature![1]).toBeNaN();
-    expect(notes).toContain('Columns not used: ws_80m_std, battery.');
+    expect(notes).toContain('Columns not used: battery.');
     expect([...profileAt(block, 1).speed]).toEqual([7.5, NaN]);
   });
 

@@ -73,9 +73,9 @@ describe('readHeading', () => {
     // What is no mean value or no quantity of ours.
     ['t_index', null],
     ['scan_type', null],
-    ['ws_80m_std', null],
+    ['ws_80m_std', 'speedDeviation @80'],
     ['speed_max', null],
-    ['wind gust', null],
+    ['wind gust', 'gust'],
     ['qc_speed', null],
     ['potential temperature', null],
     ['Latitude: 52', null],
