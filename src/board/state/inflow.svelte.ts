@@ -73,8 +73,9 @@ export class Inflow {
   /** Asks the worker anew; answers that a newer question has overtaken are dropped. */
   async ask(atMs: number, feed: string, criteria: string): Promise<void> {
     const question = ++this.#questions;
+    this.phase = 'reckoning';
     if (feed === '' || !Number.isFinite(atMs)) {
-      this.#none('');
+      this.told = null;
       return;
     }
     const answer = await this.#board.worker.inflow(atMs, feed, criteria);
