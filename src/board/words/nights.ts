@@ -4,7 +4,7 @@ import { ROSE_SECTORS, ROSE_SPEEDS, type ArchiveFigures, type ArchiveView } from
 import { toSpeedUnit } from '../../air/index.ts';
 import type { DisplayUnits } from '../../site/index.ts';
 import type { Answer } from './answers.ts';
-import { directionText, heightText, NONE, plain, speedText } from './numbers.ts';
+import { heightText, plain, speedText } from './numbers.ts';
 import { quantile } from './spread.ts';
 import type { Piece } from './story.ts';
 
@@ -333,12 +333,6 @@ export function roseClassWords(k: number, units: DisplayUnits): string {
   const [from, to] = [ROSE_SPEEDS[k - 1], ROSE_SPEEDS[k]];
   if (from === undefined) return `below ${shown(to!)} ${units.speed}`;
   return to === undefined ? `${shown(from)} ${units.speed} and more` : `${shown(from)}–${shown(to)} ${units.speed}`;
-}
-
-/** Where the jet's night ended up: `320 m, 15.2 m/s from 190°`. */
-export function peakWords(height: number, speed: number, direction: number, units: DisplayUnits): string {
-  if (Number.isNaN(speed)) return NONE;
-  return `${speedText(speed, units)} ${units.speed} at ${heightText(height, units)} ${units.height} from ${directionText(direction)}`;
 }
 
 const round10 = (value: number): number => Math.round(value / 10) * 10;
