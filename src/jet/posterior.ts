@@ -131,6 +131,17 @@ function curvatureAt(height: number): number {
   return CURVATURE_AT_100M / (hundreds * hundreds * Math.sqrt(hundreds)) + CURVATURE_LEAST;
 }
 
+/** Spacing of levels, m, from which on each may stand for a bend of its own. Our own choice. */
+const COARSE = 60;
+
+/**
+ * How much more curvature is allowed where levels are far apart. Gates sample whatever there is; a sounding's significant
+ * levels are chosen where the wind bends (WMO FM 35), so a lone fast one is the nose and not noise about a smooth curve.
+ */
+function coarseness(spacing: number): number {
+  return spacing > COARSE ? (spacing / COARSE) ** 2 : 1;
+}
+
 /** Sum of squared second derivatives, each over its share of height, as a matrix of five diagonals. */
 function fillSmoothness(wind: WindColumn, count: number, out: Posterior): void {
   const { smooth0, smooth1, smooth2 } = out;
@@ -144,8 +155,8 @@ function fillSmoothness(wind: WindColumn, count: number, out: Posterior): void {
     const a = 2 / (lower * (lower + upper));
     const c = 2 / (upper * (lower + upper));
     const b = -a - c;
-    const intensity = curvatureAt(height);
-    const weight = (lower + upper) / 2 / intensity;
+    const spacing = (lower + upper) / 2;
+    const weight = spacing / (curvatureAt(height) * coarseness(spacing));
     smooth0[k - 1]! += weight * a * a;
     smooth0[k]! += weight * b * b;
     smooth0[k + 1]! += weight * c * c;

@@ -184,3 +184,24 @@ describe('findJets', () => {
     );
   });
 });
+
+describe('a sounding of significant levels', () => {
+  const jetOf = (heights: readonly number[], speed: readonly number[]): ReturnType<typeof findJets> => {
+    const column = { heightAgl: heights, speed, direction: heights.map(() => 200) };
+    return findJets({ ...profileOf(column), instrument: 'radiosonde' }, CRITERIA.duskveer);
+  };
+
+  it('shows its nose in a lone fast level, however smooth the air above', () => {
+    const aloft = [830, 1050, 1300, 1550, 1800, 2100, 2400, 2700, 3000, 3100];
+    const slow = [10.5, 10, 9.5, 9, 9, 9, 9, 9, 9, 9];
+    const finding = jetOf([10, 100, 215, 409, 615, 720, ...aloft], [8, 10, 12, 19, 11, 11, ...slow]);
+    expect(finding.status).toBe('jet');
+    expect(finding.confidence).toBeGreaterThan(0.8);
+    expect(finding.jets[0]!.noseHeight).toBe(409);
+  });
+
+  it('shows none where the wind only wavers by its uncertainty', () => {
+    const finding = jetOf([10, 300, 600, 1000, 1500, 2200, 3000, 3100], [5, 8, 11, 10.3, 11, 10.4, 13, 14]);
+    expect(finding.status).toBe('no-jet');
+  });
+});
