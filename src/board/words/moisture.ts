@@ -115,7 +115,7 @@ function rateWords({ perHour, uncertainty }: MoistureState['growth']['rate']): s
 }
 
 /** The upstream station whose air passes nearest, those with a surge on its way first. */
-export function leadingArrival({ arrivals, atMs }: MoistureState): UpstreamAir | undefined {
+function leadingArrival({ arrivals, atMs }: MoistureState): UpstreamAir | undefined {
   const passes = (air: UpstreamAir): boolean => !isAside(air);
   const pending = ({ surge }: UpstreamAir): boolean =>
     surge?.arrival.status === 'on-its-way' && surge.arrival.latestMs > atMs;
@@ -167,7 +167,7 @@ function arrivalPieces({ state, times }: MoistContext): Piece[] {
   return [{ text: `${due}; whether it has come is not seen yet. ` }];
 }
 
-export function asideWords({ now, surge }: UpstreamAir): string {
+function asideWords({ now, surge }: UpstreamAir): string {
   const { status, why, missBy } = surge?.arrival ?? now;
   return status === 'on-its-way' ? `it ${missWords(missBy)}` : why;
 }
@@ -187,7 +187,7 @@ export function boundWords(
 }
 
 /** What the streams do below a kilometre: mean over the layers, each error taken as that of a layer. */
-export interface LowField {
+interface LowField {
   readonly divergence: number;
   readonly divergenceUncertainty: number;
   readonly moisture: number;
@@ -199,7 +199,7 @@ export interface LowField {
 }
 
 /** Null where a layer up to a kilometre could not be had. */
-export function lowField({ layers }: TriangleState): LowField | null {
+function lowField({ layers }: TriangleState): LowField | null {
   const low = layers.filter(({ top }) => top <= LOW);
   if (low.length === 0 || low.some(({ field }) => field.status !== 'ok')) return null;
   const depth = low.reduce((sum, { top, bottom }) => sum + top - bottom, 0);
