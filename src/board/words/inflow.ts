@@ -3,7 +3,7 @@
 import { directionOf, relativeHumidityOf, specificHumidityOfDewPoint, speedOf, ZERO_CELSIUS } from '../../air/index.ts';
 import type { InflowState } from '../../desk/index.ts';
 import type { DisplayUnits } from '../../site/index.ts';
-import type { Figure, Parcel, ParcelName, StormNumbers, VectorFigure } from '../../storm/index.ts';
+import type { Parcel, ParcelName, StormNumbers, VectorFigure } from '../../storm/index.ts';
 import type { Answer } from './answers.ts';
 import { compassWords, directionText, heightText, plain, signed, speedText } from './numbers.ts';
 import type { Piece } from './story.ts';
@@ -316,9 +316,4 @@ export function heightWordsAt(at: AirAtHeight, units: DisplayUnits): string {
       : `wind ${speedText(at.speed, units)} ${units.speed} from ${directionText(at.direction)}`,
   );
   return parts.join(', ');
-}
-
-/** A number with its unit, or why there is none. */
-export function figureText({ value, why }: Figure, shown: (value: number) => string): string {
-  return Number.isNaN(value) ? why : shown(value);
 }
