@@ -8,14 +8,20 @@ import { mendText } from './mend-text.ts';
 /** Bytes of values read at once: packed data can stand for far more than the file's own length. */
 const MOST_BYTES = 2 ** 30;
 
+/** A damaged file made the library run out of its own memory's bounds: from then on it may misread sound files, too. */
+let shaken = false;
+
 /** The library's complaint in the house's form; errors already in that form pass. */
 export function damagedHdf5(source: string, key: string | undefined, cause: unknown, byte?: number): DuskveerError {
   if (cause instanceof DuskveerError) return cause;
+  if (cause instanceof Error && cause.name === 'RuntimeError') shaken = true;
   return new DuskveerError(
     {
       code: 'ingest/netcdf-damaged',
       what: key === undefined ? 'The netCDF-4 (HDF5) file is damaged.' : `The values of ${key} are damaged.`,
-      mend: 'Fetch the file again; if it stays so, ask its provider for an intact copy.',
+      mend: shaken
+        ? 'A damaged file has upset the part that reads netCDF-4: reload the page or start the command anew, and open this file again.'
+        : 'Fetch the file again; if it stays so, ask its provider for an intact copy.',
       where: { source, ...(key === undefined ? {} : { key }), ...(byte === undefined ? {} : { byte }) },
     },
     { cause },
