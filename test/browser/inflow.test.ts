@@ -1,10 +1,8 @@
 import { readFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { faultsOf } from './faults.ts';
 import { launchBrowser, openPage } from './page.ts';
-
-const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
 let browser: Browser;
 beforeAll(async () => {
@@ -29,19 +27,6 @@ async function stormNight(page: Page): Promise<void> {
 }
 
 const answer = (page: Page, name: string | RegExp): Promise<string> => page.getByRole('region', { name }).innerText();
-
-async function faults(page: Page): Promise<string[]> {
-  await page.evaluate(axeSource);
-  return page.evaluate(async () => {
-    const { axe } = window as unknown as {
-      axe: { run: () => Promise<{ violations: { id: string; impact: string; nodes: { html: string }[] }[] }> };
-    };
-    const { violations } = await axe.run();
-    return violations
-      .filter(({ impact }) => impact === 'serious' || impact === 'critical')
-      .map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html).join(' | ')}`);
-  });
-}
 
 describe('Inflow', () => {
   it('tells parcel, lift and cluster motion in a sentence, each with its age and method', async () => {
@@ -187,7 +172,7 @@ describe('Inflow', () => {
     ]) {
       const { page, close } = await openPage(browser, { viewport });
       await stormNight(page);
-      expect(await faults(page)).toEqual([]);
+      expect(await faultsOf(page)).toEqual([]);
       expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(viewport.width);
       await close();
     }
@@ -199,7 +184,7 @@ describe('Inflow', () => {
       );
       await page.reload();
       await stormNight(page);
-      expect(await faults(page)).toEqual([]);
+      expect(await faultsOf(page)).toEqual([]);
       await close();
     }
   });

@@ -1,10 +1,8 @@
 import { readFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { faultsOf } from './faults.ts';
 import { launchBrowser, openPage, type OpenedPage } from './page.ts';
-
-const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
 /** A machine that does much else at once takes its time. */
 const SOON = { timeout: 15_000 };
@@ -127,14 +125,7 @@ describe('Moisture', () => {
     await page.keyboard.press('Escape');
     await page.getByRole('region', { name: 'Layers between the stations' }).waitFor();
     expect(await page.evaluate(() => document.documentElement.scrollWidth - innerWidth)).toBeLessThanOrEqual(0);
-    await page.evaluate(axeSource);
-    const violations = await page.evaluate(async () => {
-      const { axe } = window as unknown as {
-        axe: { run: () => Promise<{ violations: { id: string; nodes: { html: string }[] }[] }> };
-      };
-      const found = await axe.run();
-      return found.violations.map(({ id, nodes }) => `${id}: ${nodes[0]!.html}`);
-    });
+    const violations = await faultsOf(page, 'any');
     expect(violations).toEqual([]);
     await close();
   });

@@ -1,5 +1,4 @@
 import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
-import { createRequire } from 'node:module';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import type { Browser, Page } from 'playwright-core';
@@ -7,9 +6,9 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { duskveer } from '../relay/command-line.ts';
 import { killMidway, resultBytes } from '../relay/scan/kill-midway.ts';
 import { writeYear, type MadeYear } from '../relay/scan/made-year.ts';
+import { faultsOf } from './faults.ts';
 import { launchBrowser, openPage } from './page.ts';
 
-const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 const folder = mkdtempSync(join(tmpdir(), 'duskveer-nights-'));
 const year = join(folder, 'year');
 const killed = join(folder, 'killed');
@@ -245,16 +244,7 @@ describe('Nights', () => {
     await withTables(page);
     await page.getByRole('button', { name: 'Table of From where' }).click();
     expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(width);
-    await page.evaluate(axeSource);
-    const faults = await page.evaluate(async () => {
-      const { axe } = window as unknown as {
-        axe: { run: () => Promise<{ violations: { id: string; impact: string; nodes: { html: string }[] }[] }> };
-      };
-      const { violations } = await axe.run();
-      return violations
-        .filter(({ impact }) => impact === 'serious' || impact === 'critical')
-        .map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html).join(' | ')}`);
-    });
+    const faults = await faultsOf(page);
     expect(faults).toEqual([]);
     await close();
   });

@@ -1,10 +1,8 @@
 import { readFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { faultsOf } from './faults.ts';
 import { launchBrowser, openPage } from './page.ts';
-
-const axeSource = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 
 let browser: Browser;
 beforeAll(async () => {
@@ -145,16 +143,7 @@ describe('Rotor', () => {
       await page.keyboard.press('Escape');
       await page.evaluate(() => (location.hash = '#/rotor'));
       await page.getByRole('region', { name: 'Loads watch' }).waitFor();
-      await page.evaluate(axeSource);
-      const faults = await page.evaluate(async () => {
-        const { axe } = window as unknown as {
-          axe: { run: () => Promise<{ violations: { id: string; impact: string; nodes: { html: string }[] }[] }> };
-        };
-        const { violations } = await axe.run();
-        return violations
-          .filter(({ impact }) => impact === 'serious' || impact === 'critical')
-          .map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html).join(' | ')}`);
-      });
+      const faults = await faultsOf(page);
       expect(faults, theme).toEqual([]);
     }
     await close();
